@@ -1,0 +1,1 @@
+"""The window: it draws what shaftcore computes and asks for changes; it computes nothing."""

@@ -1,0 +1,1 @@
+"""Filletwright's computation: a shaft goes in, margins at every station come out. Knows no window."""

@@ -1,0 +1,199 @@
+"""Reactions, internal forces, deflection and slope of the shaft as a beam.
+
+Two bending planes (y up, z towards the viewer) and two load sets (mean, amplitude) are carried as
+leading axes. Moments are positive where they stretch the lower side, V is the sum of forces to
+the left, T the sum of torques to the left, N positive in tension. The section of the beam is the
+plain one, grooves and fillets left out; a step stiffens in full from its face on.
+"""
+
+from dataclasses import dataclass
+
+import numpy as np
+from numpy.typing import NDArray
+
+from shaftcore.geometry import Profile
+from shaftcore.notches._contract import Array
+from shaftcore.section_properties import area, second_moment, shear_coefficient
+from shaftcore.shaft import AxialForce, RadialForce, Shaft, Torque
+
+_GAUSS_X, _GAUSS_W = (np.array(values) for values in np.polynomial.legendre.leggauss(3))
+_GAUSS_X, _GAUSS_W = (_GAUSS_X + 1) / 2, _GAUSS_W / 2
+
+
+@dataclass(frozen=True, eq=False)
+class PointLoads:
+    """Loads at places x (n) with any leading axes of `size` (..., n), as running sums."""
+
+    x: Array
+    size: Array
+
+    def sums(self, x: Array, right: NDArray[np.bool_]) -> tuple[Array, Array]:
+        """Sum of sizes, and of sizes times lever arm, of all loads left of each x (there too if `right`)."""
+        order = np.argsort(self.x, kind="stable")
+        at = self.x[order]
+        size = self.size[..., order]
+        zero = np.zeros((*size.shape[:-1], 1))
+        running = np.concatenate([zero, np.cumsum(size, axis=-1)], axis=-1)
+        running_x = np.concatenate([zero, np.cumsum(size * at, axis=-1)], axis=-1)
+        count = np.where(right, np.searchsorted(at, x, "right"), np.searchsorted(at, x, "left"))
+        total = running[..., count]
+        return total, total * x - running_x[..., count]
+
+
+@dataclass(frozen=True, eq=False)
+class Bed:
+    """What the supports do to the beam: x, stiffness (N/mm, inf for rigid), offset (2 planes, mm)."""
+
+    x: Array
+    stiffness: Array
+    offset: Array
+
+
+@dataclass(frozen=True, eq=False)
+class BeamLoads:
+    """Everything the beam carries, at points x with their side (-1 left of x, +1 right).
+
+    Axes: set (mean, amplitude), plane (y, z), point. N, T have no plane. Deflection (mm) and
+    slope (rad, of the section) hold for mean loads and mean plus amplitude alike by set.
+    `reactions` (set, plane, support) in N; `axial_reaction` and `torque_left_over` (set).
+    """
+
+    x: Array
+    side: Array
+    shear: Array
+    moment: Array
+    normal: Array
+    torque: Array
+    deflection: Array
+    slope: Array
+    reactions: Array
+    axial_reaction: Array
+    torque_left_over: Array
+
+
+def beam_loads(shaft: Shaft, profile: Profile, x: Array, side: Array) -> BeamLoads:
+    """Internal forces at points x (n) seen from their side (n).
+
+    `x` must hold every face, load and support among its values, so that between neighbouring
+    points the section and the loads are smooth. Raises numpy.linalg.LinAlgError where the
+    supports leave the shaft free to move (checked before by `soundness`).
+    """
+    right = side > 0
+    radial = _radial_loads(shaft)
+    bed = Bed(
+        np.array([s.x for s in shaft.supports]),
+        np.full(len(shaft.supports), np.inf),
+        np.zeros((2, len(shaft.supports))),
+    )
+    flexure = Flexure(shaft, profile, np.unique(x))
+    reactions, start = support_reactions(flexure, radial, bed)
+    carried = PointLoads(np.concatenate([radial.x, bed.x]), np.concatenate([radial.size, reactions], axis=-1))
+    shear, moment = carried.sums(x, right)
+    bent = flexure.bend(carried, start)
+    at = np.searchsorted(flexure.x, x)
+    torque_loads, axial_loads, axial_reaction = _loads_along(shaft)
+    torque, _ = torque_loads.sums(x, right)
+    axial, _ = axial_loads.sums(x, right)
+    return BeamLoads(
+        x=x,
+        side=side,
+        shear=shear,
+        moment=moment,
+        normal=-axial,
+        torque=torque,
+        deflection=bent[0][..., at],
+        slope=bent[1][..., at],
+        reactions=reactions,
+        axial_reaction=axial_reaction,
+        torque_left_over=torque_loads.size.sum(axis=-1),
+    )
+
+
+def _radial_loads(shaft: Shaft) -> PointLoads:
+    forces = [load for load in shaft.loads if isinstance(load, RadialForce)]
+    size = np.array([[f.force, f.amplitude] for f in forces]).reshape(-1, 2).T
+    angle = np.radians([f.angle for f in forces])
+    planes = np.array([np.cos(angle), np.sin(angle)])
+    return PointLoads(np.array([f.x for f in forces]), size[:, None, :] * planes[None])
+
+
+def _loads_along(shaft: Shaft) -> tuple[PointLoads, PointLoads, Array]:
+    torques = [load for load in shaft.loads if isinstance(load, Torque)]
+    axials = [load for load in shaft.loads if isinstance(load, AxialForce)]
+    twist = np.array([[t.torque, t.amplitude] for t in torques]).reshape(-1, 2).T
+    push = np.array([[a.force, a.amplitude] for a in axials]).reshape(-1, 2).T
+    reaction = -push.sum(axis=1)
+    held = [s.x for s in shaft.supports if s.locating][:1]
+    at = np.array([a.x for a in axials] + held)
+    push = np.concatenate([push, reaction[:, None]], axis=1) if held else push
+    return PointLoads(np.array([t.x for t in torques]), twist), PointLoads(at, push), reaction
+
+
+class Flexure:
+    """How the stepped beam bends, on a mesh x (m) whose intervals are smooth."""
+
+    def __init__(self, shaft: Shaft, profile: Profile, x: Array) -> None:
+        self.x = x
+        self.step = np.diff(x)
+        self.places = x[:-1, None] + self.step[:, None] * _GAUSS_X
+        flat = self.places.ravel()
+        segment = profile.segment_at(flat, np.ones_like(flat))
+        d, bore = profile.diameter_at(flat, segment), profile.bore[segment]
+        material = shaft.material
+        modulus = material.elastic_modulus
+        shear_modulus = modulus / (2 * (1 + material.poisson_ratio))
+        shape = self.places.shape
+        self.bending = (1 / (modulus * second_moment(d, bore))).reshape(shape)
+        stiff = shear_modulus * shear_coefficient(d, bore, material.poisson_ratio) * area(d, bore)
+        self.shearing = (1 / stiff).reshape(shape)
+
+    def bend(self, loads: PointLoads, start: Array) -> tuple[Array, Array]:
+        """Deflection and slope (..., m) under `loads` for given deflection and slope at x[0].
+
+        `start` has shape (..., 2). Three Gauss points an interval integrate M/EI: exact on a
+        cylinder, and to rounding on the short intervals of a taper.
+        """
+        flat = self.places.ravel()
+        shear, moment = loads.sums(flat, np.ones(flat.shape, dtype=bool))
+        shape = (*shear.shape[:-1], *self.places.shape)
+        curve = moment.reshape(shape) * self.bending
+        slip = shear.reshape(shape) * self.shearing
+        turn = self.step * (curve @ _GAUSS_W)
+        slope = start[..., 1:] + _running(turn)
+        lift = self.step * (slope[..., :-1] - slip @ _GAUSS_W + self.step * (curve @ (_GAUSS_W * (1 - _GAUSS_X))))
+        return start[..., :1] + _running(lift), slope
+
+
+def _running(values: Array) -> Array:
+    return np.concatenate([np.zeros((*values.shape[:-1], 1)), np.cumsum(values, axis=-1)], axis=-1)
+
+
+def support_reactions(flexure: Flexure, loads: PointLoads, bed: Bed) -> tuple[Array, Array]:
+    """Reactions (set, plane, n) and start values (set, plane, 2) by the force method.
+
+    Unknown are the reactions and the rigid-body deflection and slope at the left end; the
+    equations are deflection = offset - R/k at each support, and force and moment balance.
+    """
+    n = len(bed.x)
+    begin, length = flexure.x[0], flexure.x[-1] - flexure.x[0]
+    at = np.searchsorted(flexure.x, bed.x)
+    unit = PointLoads(bed.x, np.eye(n))
+    give = flexure.bend(unit, np.zeros((n, 2)))[0][:, at]
+    free = flexure.bend(loads, np.zeros((*loads.size.shape[:-1], 2)))[0][..., at]
+    scale = 1 / max(float(np.abs(give).max()), 1e-300)
+    arm = (bed.x - begin) / length
+    matrix = np.zeros((n + 2, n + 2))
+    matrix[:n, :n] = (give.T + np.diag(1 / bed.stiffness)) * scale
+    matrix[:n, n], matrix[:n, n + 1] = 1.0, arm
+    matrix[n, :n], matrix[n + 1, :n] = 1.0, arm
+    known = np.concatenate(
+        [
+            (bed.offset - free) * scale,
+            -loads.size.sum(-1)[..., None],
+            -(loads.size * (loads.x - begin) / length).sum(-1)[..., None],
+        ],
+        axis=-1,
+    )
+    solved = np.linalg.solve(matrix, np.moveaxis(known.reshape(-1, n + 2), 0, -1)).T.reshape(known.shape)
+    start = solved[..., n:] / scale
+    return solved[..., :n], start / np.array([1.0, length])

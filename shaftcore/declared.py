@@ -1,0 +1,134 @@
+"""Fields declared once: label, unit, range and words of everything a shaft is described by.
+
+The declaration of a field drives validation, file, schema, forms and manual; nothing of it is
+written a second time. Read it back with `declared(record_or_class)`.
+"""
+
+import math
+from dataclasses import MISSING, dataclass, field, fields
+from typing import Any
+
+from shaftcore.units import Dimension, System, dimension
+
+
+@dataclass(frozen=True)
+class Quantity:
+    """A number with a dimension and a closed range (`above` makes the low end open)."""
+
+    label: str
+    dimension_name: str
+    low: float
+    high: float
+    symbol: str = ""
+    above: bool = False
+    optional: bool = False
+    words: str = ""
+
+    @property
+    def dimension(self) -> Dimension:
+        return dimension(self.dimension_name)
+
+    def holds(self, value: float) -> bool:
+        """True where `value` (internal units) is finite and in range."""
+        return math.isfinite(value) and self.low <= value <= self.high and not (self.above and value == self.low)
+
+    def allowed(self, system: System = "SI", in_file: bool = False) -> str:
+        """The range in words, in the file's unit or in what the user reads."""
+        unit = self.dimension.file if in_file else self.dimension.unit(system)
+        low, high = (f"{unit.shown(end):.6g}" for end in (self.low, self.high))
+        begin = f"above {low} up to" if self.above else f"{low} to"
+        return f"{begin} {high} {unit.symbol}".rstrip() + (", or none" if self.optional else "")
+
+
+@dataclass(frozen=True)
+class Choice:
+    """One of several named options: (value in the file, words shown)."""
+
+    label: str
+    options: tuple[tuple[str, str], ...]
+    optional: bool = False
+    none_words: str = ""
+    words: str = ""
+
+    def allowed(self) -> str:
+        names = ", ".join(f'"{value}"' for value, _ in self.options)
+        return names + (", or null" if self.optional else "")
+
+
+@dataclass(frozen=True)
+class Switch:
+    """Yes or no."""
+
+    label: str
+    words: str = ""
+
+
+@dataclass(frozen=True)
+class Text:
+    """A line of text of the user's."""
+
+    label: str
+    longest: int = 200
+    words: str = ""
+
+
+@dataclass(frozen=True)
+class Part:
+    """A record, or a tuple of records, inside a record; `kinds` lists what may stand there."""
+
+    label: str
+    kinds: tuple[type, ...]
+    many: bool = False
+    optional: bool = False
+    most: int = 1000
+    words: str = ""
+
+
+Declaration = Quantity | Choice | Switch | Text | Part
+
+
+def _declare(declaration: Declaration, default: Any) -> Any:
+    return field(default=default, metadata={"declared": declaration})
+
+
+def quantity(label: str, dimension_name: str, low: float, high: float, *, default: Any = MISSING, **more: Any) -> Any:
+    """A dataclass field holding a float in internal units (None allowed with ``optional=True``)."""
+    return _declare(Quantity(label, dimension_name, low, high, **more), default)
+
+
+def choice(label: str, options: tuple[tuple[str, str], ...], *, default: Any = MISSING, **more: Any) -> Any:
+    """A dataclass field holding one of the options' values."""
+    return _declare(Choice(label, options, **more), default)
+
+
+def switch(label: str, *, default: bool, words: str = "") -> Any:
+    """A dataclass field holding a bool."""
+    return _declare(Switch(label, words), default)
+
+
+def text(label: str, *, default: str = "", longest: int = 200, words: str = "") -> Any:
+    """A dataclass field holding a line of text."""
+    return _declare(Text(label, longest, words), default)
+
+
+def part(label: str, *kinds: type, default: Any = MISSING, **more: Any) -> Any:
+    """A dataclass field holding a record or, with ``many=True``, a tuple of records."""
+    return _declare(Part(label, kinds, **more), default)
+
+
+def declared(record: Any) -> dict[str, Declaration]:
+    """Field name -> declaration, in order, of a record or its class (fields without one left out)."""
+    cls = record if isinstance(record, type) else type(record)
+    known = _DECLARED.get(cls)
+    if known is None:
+        known = {f.name: f.metadata["declared"] for f in fields(cls) if "declared" in f.metadata}
+        _DECLARED[cls] = known
+    return known
+
+
+_DECLARED: dict[type, dict[str, Declaration]] = {}
+
+
+def file_key(name: str, declaration: Declaration) -> str:
+    """The key under which a field stands in the file: its name and, for a quantity, its unit."""
+    return name + declaration.dimension.suffix if isinstance(declaration, Quantity) else name

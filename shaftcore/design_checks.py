@@ -1,0 +1,193 @@
+"""Notices: what the user must see beside numbers that were computed all the same."""
+
+from collections.abc import Iterator, Sequence
+
+import numpy as np
+
+from shaftcore.abutment import largest_fillet, least_abutment
+from shaftcore.beam_loads import BeamLoads
+from shaftcore.geometry import faces_of
+from shaftcore.notch_factors import NotchFactors
+from shaftcore.notch_sensitivity import NEUBER_RANGE
+from shaftcore.notch_sites import Seating
+from shaftcore.notches._contract import LOAD_SORTS
+from shaftcore.notches.kinds import KINDS
+from shaftcore.records import Notice
+from shaftcore.results import Judged, SeatLimit
+from shaftcore.shaft import Shaft, Torque
+from shaftcore.sources import SOURCES
+from shaftcore.stations import Station
+from shaftcore.strength_factors import SIZE_HIGH, SIZE_LOW
+
+BALANCE = 1e-6
+"""Torque left over below this share of the largest torque is rounding of the entries."""
+
+LOW_WORTH_SAYING = 0.03
+"""Share by which finite elements must lie above a fit before it is worth a notice."""
+
+
+def seat_limits(shaft: Shaft, seated: Sequence[Seating]) -> tuple[SeatLimit, ...]:
+    """The largest fillet each shoulder allows: the seated bearing's corner, else the room on the thin side."""
+    limits = []
+    spans = [(seating.place, seating.site().span) for seating in seated]
+    faces = faces_of(shaft)
+    ids = [segment.id for segment in shaft.segments]
+    for seating in seated:
+        if seating.kind.key != "shoulder":
+            continue
+        index = ids.index(seating.place)
+        thin = index if seating.around.left_diameter < seating.around.right_diameter else index + 1
+        begin, end = faces[thin], faces[thin + 1]
+        others = [s for place, s in spans if place != seating.place and s[0] >= begin - 1e-9 and s[1] <= end + 1e-9]
+        room = min(
+            [end - begin, *((seating.around.x - s[1]) if thin == index else (s[0] - seating.around.x) for s in others)]
+        )
+        step = abs(seating.around.left_diameter - seating.around.right_diameter) / 2
+        by_room = room if room <= step else (room**2 / step + step) / 2
+        corner = seating.record.bearing_corner
+        by_corner = largest_fillet(corner) if corner else np.inf
+        if by_corner <= by_room:
+            limits.append(SeatLimit(seating.place, by_corner, f"bearing corner r_s,min {corner:g} mm"))
+        else:
+            limits.append(SeatLimit(seating.place, by_room, "room on the thinner segment"))
+    return tuple(limits)
+
+
+def notices_of(
+    shaft: Shaft,
+    stations: Sequence[Station],
+    seated: Sequence[Seating],
+    loads: BeamLoads,
+    factors: NotchFactors,
+    judged: Judged,
+) -> tuple[Notice, ...]:
+    """All notices, those that make the margins provisional first."""
+    return (
+        *_balance(shaft, loads),
+        *_shaft_wide(shaft),
+        *_seats(shaft, seated, stations),
+        *_station_flags(shaft, stations, factors, judged),
+    )
+
+
+def _balance(shaft: Shaft, loads: BeamLoads) -> Iterator[Notice]:
+    torques = [load for load in shaft.loads if isinstance(load, Torque)]
+    for left_over, largest, word in (
+        (loads.torque_left_over[0], max((abs(t.torque) for t in torques), default=0.0), "mean torques"),
+        (loads.torque_left_over[1], max((abs(t.amplitude) for t in torques), default=0.0), "torque amplitudes"),
+    ):
+        if abs(left_over) > BALANCE * largest:
+            side = "more goes in than comes out" if left_over > 0 else "more comes out than goes in"
+            yield Notice(
+                "unbalanced torque",
+                f"The {word} do not balance by {abs(left_over) / 1e3:.4g} N·m ({side}); every margin is provisional "
+                "until a torque elsewhere makes up for it.",
+                provisional=True,
+            )
+
+
+def _shaft_wide(shaft: Shaft) -> Iterator[Notice]:
+    tensile = shaft.material.tensile_strength
+    if not shaft.loads:
+        yield Notice("no load", "No load is set on the shaft yet, so no station is stressed.", provisional=True)
+    if shaft.judgement.sensitivity == "neuber":
+        for sort, limits in NEUBER_RANGE.items():
+            if not limits.low <= tensile <= limits.high:
+                yield Notice(
+                    "outside a fit",
+                    f"Neuber's constant in {sort} is fitted for {limits} MPa; S_ut {tensile:g} MPa is held at the "
+                    "nearer end.",
+                )
+    if shaft.judgement.user_factor != 1 and not shaft.judgement.user_factor_reason:
+        yield Notice("reason missing", "The own factor on the endurance limit has no reason beside it.")
+
+
+def _seats(shaft: Shaft, seated: Sequence[Seating], stations: Sequence[Station]) -> Iterator[Notice]:
+    index = {station.place: i for i, station in enumerate(stations) if station.kind == "shoulder"}
+    for seating in seated:
+        if seating.kind.key != "shoulder" or not seating.record.bearing_corner:
+            continue
+        corner, r = seating.record.bearing_corner, seating.record.radius
+        step = abs(seating.around.left_diameter - seating.around.right_diameter) / 2
+        where = index[seating.place]
+        if r > largest_fillet(corner):
+            yield Notice(
+                "fillet too large for its bearing",
+                f"Fillet r {r:g} mm is larger than {largest_fillet(corner):g} mm, the most a bearing corner "
+                f"r_s,min {corner:g} mm lets seat (DIN 5418): the ring would ride on the fillet.",
+                seating.place,
+                where,
+            )
+        if step < least_abutment(corner):
+            yield Notice(
+                "low abutment",
+                f"Step height {step:g} mm is below {least_abutment(corner):g} mm, the usual least abutment for a "
+                f"bearing corner r_s,min {corner:g} mm (catalogue value).",
+                seating.place,
+                where,
+            )
+
+
+def _station_flags(
+    shaft: Shaft, stations: Sequence[Station], factors: NotchFactors, judged: Judged
+) -> Iterator[Notice]:
+    source = shaft.judgement.kt_source
+    size = judged.d if shaft.duty.turning else 0.37 * judged.d
+    too_small_or_large = (size < SIZE_LOW) | (size > SIZE_HIGH)
+    for i, station in enumerate(stations):
+        if too_small_or_large[i]:
+            yield Notice(
+                "outside a fit",
+                f"The size factor is fitted for {SIZE_LOW:g} to {SIZE_HIGH:g} mm; {size[i]:.4g} mm is held at the "
+                "nearer end.",
+                station.place,
+                i,
+            )
+        if station.site is None:
+            continue
+        kind = KINDS[station.kind]
+        for key, words in kind.remarks(station.site):
+            yield Notice(key, words[0].upper() + words[1:] + ".", station.place, i)
+        fits = kind.fits[source]
+        outside = [sort for row, sort in enumerate(LOAD_SORTS) if factors.outside[row, i]]
+        if outside:
+            ranges = "; ".join(f"{sort}: {', '.join(map(str, fits[sort].ranges))}" for sort in outside)
+            measures = kind.parameters({name: np.array(value) for name, value in station.site.sizes.items()})
+            have = ", ".join(
+                f"{symbol} = {float(measures[symbol]):.3g}"
+                for symbol in dict.fromkeys(r.symbol for sort in outside for r in fits[sort].ranges)
+            )
+            yield Notice(
+                "outside a fit",
+                f"Kt after {SOURCES[fits[outside[0]].source].short} is used outside its range ({ranges}); here {have}. "
+                "The value is carried on from the nearest end.",
+                station.place,
+                i,
+            )
+        low = factors.low_by[:, i]
+        if low.max() > LOW_WORTH_SAYING:
+            words = ", ".join(
+                f"{sort} {low[row]:.0%}" for row, sort in enumerate(LOAD_SORTS) if low[row] > LOW_WORTH_SAYING
+            )
+            yield Notice(
+                "fit below finite elements",
+                f"For a root this sharp finite elements give more than {SOURCES[fits['bending'].source].short}: "
+                f"up to {words} more Kt.",
+                station.place,
+                i,
+            )
+        if factors.held[:, i].any():
+            yield Notice(
+                "Kf held",
+                "The root radius is so small that the sensitivity rule would let Kf fall again; Kf is held at its peak.",
+                station.place,
+                i,
+            )
+        if station.site.bore > 0:
+            yield Notice(
+                "bored section",
+                f"Kt is that of a solid shaft; the section is bored d_i/d = {station.site.bore / station.site.d:.2f}. "
+                "The nominal stress counts the bore.",
+                station.place,
+                i,
+            )

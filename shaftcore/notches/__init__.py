@@ -1,0 +1,1 @@
+"""Stress raisers: one module a kind, all after the same contract."""

@@ -1,0 +1,98 @@
+"""What every kind of stress raiser declares, and nothing more.
+
+A raiser kind is a record: words, sizes, where it goes, published fits for Kt with the range of
+each, outline, handles. Evaluation, bench, forms, file, sheet and manual read it from here.
+"""
+
+from collections.abc import Callable, Mapping
+from dataclasses import dataclass, field
+from typing import Any, Literal
+
+import numpy as np
+from numpy.typing import NDArray
+
+from shaftcore.records import ValidRange
+
+Array = NDArray[np.float64]
+Sizes = Mapping[str, Array]
+LoadSort = Literal["bending", "tension", "torsion"]
+LOAD_SORTS: tuple[LoadSort, ...] = ("bending", "tension", "torsion")
+
+
+@dataclass(frozen=True)
+class Around:
+    """The plain shaft just left and right of a place (mm)."""
+
+    x: float
+    left_diameter: float
+    right_diameter: float
+    left_bore: float
+    right_bore: float
+    left_finish: str
+    right_finish: str
+
+
+@dataclass(frozen=True)
+class Site:
+    """One raiser set on the shaft, ready for the formulas.
+
+    `d` and `bore` (mm) bound the net section the nominal stress is taken on; `sizes` holds what
+    the kind's fits ask for, in mm; `span` is the stretch of shaft the raiser takes up.
+    """
+
+    kind: str
+    place: str
+    x: float
+    d: float
+    bore: float
+    finish: str
+    sizes: Mapping[str, float]
+    span: tuple[float, float]
+
+
+@dataclass(frozen=True)
+class Handle:
+    """A point of the upper outline by which one size is dragged.
+
+    Pulling along `direction` (a unit vector in x, radius) makes the size grow.
+    """
+
+    size: str
+    x: float
+    y: float
+    direction: tuple[float, float]
+
+
+@dataclass(frozen=True)
+class Fit:
+    """A published formula for Kt under one load.
+
+    `value(sizes)` gives Kt on the net section for arrays of one shape, continued in a sensible
+    way outside `ranges`, which name the parameters of `RaiserKind.parameters`. `formula` is the
+    text of the formula. `low_by` lists (r/d, share): how far finite elements lie above the fit
+    at worst for fillets about that sharp, 0 where the fit is safe; () where nothing is known.
+    """
+
+    source: str
+    value: Callable[[Sizes], Array]
+    ranges: tuple[ValidRange, ...]
+    formula: str
+    low_by: tuple[tuple[float, float], ...] = ()
+
+
+@dataclass(frozen=True)
+class RaiserKind:
+    """Everything the program knows about one kind of raiser."""
+
+    key: str
+    label: str
+    record: type
+    goes: Literal["at a step", "on a diameter"]
+    words: str
+    size_symbols: Mapping[str, str]
+    site: Callable[[Any, str, Around], Site]
+    parameters: Callable[[Sizes], Sizes]
+    fits: Mapping[str, Mapping[LoadSort, Fit]]
+    outline: Callable[[Any, Around], Array]
+    handles: Callable[[Any, Around], tuple[Handle, ...]]
+    remarks: Callable[[Site], tuple[tuple[str, str], ...]] = field(default=lambda site: ())

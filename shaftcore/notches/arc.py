@@ -1,0 +1,25 @@
+"""What shoulders and round grooves share: a circular arc of radius r that climbs a height h."""
+
+import math
+
+from shaftcore.notches._contract import Sizes
+from shaftcore.records import ValidRange
+
+SIZE_SYMBOLS = {"d": "d", "D": "D", "h": "h", "r": "r"}
+DIN_RANGES = (ValidRange("r/h", 0.03, math.inf), ValidRange("d/D", 0.0, 0.98))
+
+
+def arc_along(r: float, h: float) -> float:
+    """Length along the shaft (mm) the arc takes; beyond a quarter circle the flank is upright."""
+    return r if r <= h else math.sqrt(h * (2 * r - h))
+
+
+def arc_turn(r: float, h: float) -> float:
+    """Angle (rad) through which the arc turns while it climbs, a right angle at most."""
+    return math.acos(max(1 - h / r, 0.0))
+
+
+def parameters(sizes: Sizes) -> Sizes:
+    """The ratios that the ranges of the fits are stated in."""
+    h, r, d, large = sizes["h"], sizes["r"], sizes["d"], sizes["D"]
+    return {"h/r": h / r, "r/h": r / h, "r/d": r / d, "d/D": d / large, "D/d": large / d}
