@@ -179,7 +179,7 @@ def _station_flags(
         if factors.held[:, i].any():
             yield Notice(
                 "Kf held",
-                "The root radius is so small that the sensitivity rule would let Kf fall again; Kf is held at its peak.",
+                "The root radius is so small that the sensitivity rule would let Kf fall again; it is held at its peak.",
                 station.place,
                 i,
             )

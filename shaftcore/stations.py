@@ -32,7 +32,9 @@ class Station:
 def place_stations(shaft: Shaft, profile: Profile, seated: tuple[Seating, ...]) -> tuple[Station, ...]:
     """All stations from left to right. A plain place inside a raiser's stretch is the raiser's."""
     sites = [seating.site() for seating in seated]
-    found = [(site.x, site.kind, site.place, _site_label(shaft, site), site) for site in sites]
+    found: list[tuple[float, str, str, str, Site | None]] = [
+        (site.x, site.kind, site.place, _site_label(shaft, site), site) for site in sites
+    ]
     spans = np.array([site.span for site in sites]).reshape(-1, 2)
     taken = [site.x for site in sites]
     for x, place, label in _plain_places(shaft, profile):
