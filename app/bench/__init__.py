@@ -1,0 +1,1 @@
+"""The bench: the shaft in side view, true to scale, with everything that stands on it."""
