@@ -108,3 +108,32 @@ def palette_of(theme: Theme) -> QPalette:
     for which in (role.Text, role.WindowText, role.ButtonText):
         palette.setColor(QPalette.ColorGroup.Disabled, which, QColor(theme.faint))
     return palette
+
+
+def style_sheet(theme: Theme) -> str:
+    """The few rules that the palette alone cannot say."""
+    return f"""
+        QMainWindow, QDialog {{ background: {theme.panel}; }}
+        QSplitter::handle {{ background: {theme.rule}; }}
+        QSplitter::handle:horizontal {{ width: 1px; }}
+        QSplitter::handle:vertical {{ height: 1px; }}
+        QMenuBar {{ background: {theme.panel}; color: {theme.ink}; border-bottom: 1px solid {theme.rule}; }}
+        QMenuBar::item:selected, QMenu::item:selected {{ background: {theme.accent_soft}; color: {theme.ink}; }}
+        QMenu {{ background: {theme.raised}; color: {theme.ink}; border: 1px solid {theme.rule}; }}
+        QMenu::item:disabled {{ color: {theme.faint}; }}
+        QToolTip {{ background: {theme.raised}; color: {theme.ink}; border: 1px solid {theme.rule}; padding: 3px; }}
+        QStatusBar {{ background: {theme.panel}; color: {theme.faint}; border-top: 1px solid {theme.rule}; }}
+        QStatusBar::item {{ border: none; }}
+        QToolButton#foldHead {{ border: none; padding: 5px 10px; text-align: left; color: {theme.ink};
+            background: {theme.panel}; font-weight: bold; }}
+        QToolButton#foldHead:hover, QToolButton#foldHead:focus {{ background: {theme.accent_soft}; }}
+        QTextBrowser {{ background: {theme.paper}; color: {theme.ink}; border: none; }}
+    """
+
+
+def apply_theme(app: QApplication, theme: Theme) -> None:
+    """Dress the whole program; widgets that paint themselves have `set_theme` beside this."""
+    app.setStyle("Fusion")
+    app.setPalette(palette_of(theme))
+    app.setFont(text_font())
+    app.setStyleSheet(style_sheet(theme))

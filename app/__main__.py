@@ -1,0 +1,50 @@
+"""`filletwright` and `python -m app`: the commands without a window, or the window itself."""
+
+import os
+import sys
+from pathlib import Path
+
+NO_DISPLAY = (
+    "filletwright: there is no display here; to write the margin sheet without one: "
+    "filletwright sheet SHAFT.json OUT.pdf"
+)
+
+
+def main(argv: list[str] | None = None) -> int:
+    """Run one command; returns the exit status."""
+    words = sys.argv[1:] if argv is None else argv
+    from shaftcore import command
+
+    if words and words[0] == "likeness":
+        return _likeness(words[1:])
+    if words and (words[0] in command.COMMANDS or words[0].startswith("-")):
+        return command.main(words)
+    if len(words) > 1:
+        print(f"filletwright: one shaft file at a time, not {len(words)}", file=sys.stderr)
+        return 2
+    if not _display_there():
+        print(NO_DISPLAY, file=sys.stderr)
+        return 2
+    from app.start import open_window
+
+    return open_window(Path(words[0]) if words else None)
+
+
+def _display_there() -> bool:
+    if not sys.platform.startswith("linux") or os.environ.get("QT_QPA_PLATFORM"):
+        return True
+    return bool(os.environ.get("DISPLAY") or os.environ.get("WAYLAND_DISPLAY"))
+
+
+def _likeness(words: list[str]) -> int:
+    if len(words) != 2 or words[0].startswith("-"):
+        print("filletwright: usage: filletwright likeness SHAFT.json OUT.png", file=sys.stderr)
+        return 2
+    os.environ["QT_QPA_PLATFORM"] = "offscreen"
+    from app.start import write_likeness
+
+    return write_likeness(Path(words[0]), Path(words[1]))
+
+
+if __name__ == "__main__":
+    sys.exit(main())

@@ -1,0 +1,39 @@
+"""Asking for file names, and whether to keep unsaved work."""
+
+from enum import Enum
+from pathlib import Path
+
+from PySide6.QtWidgets import QFileDialog, QMessageBox, QWidget
+
+SHAFT_SUFFIX = ".shaft.json"
+SHAFT_FILTER = "Shaft files (*.shaft.json *.json)"
+
+
+class Unsaved(Enum):
+    SAVE = "save"
+    DROP = "drop"
+    STAY = "stay"
+
+
+def ask_open(parent: QWidget, folder: str) -> Path | None:
+    name, _ = QFileDialog.getOpenFileName(parent, "Open a shaft", folder, SHAFT_FILTER)
+    return Path(name) if name else None
+
+
+def ask_save(parent: QWidget, head: str, suggestion: Path, file_filter: str, suffix: str) -> Path | None:
+    """A name to write to, ending in `suffix`."""
+    name, _ = QFileDialog.getSaveFileName(parent, head, str(suggestion), file_filter)
+    if not name:
+        return None
+    return Path(name) if name.endswith((suffix, Path(suffix).suffix)) else Path(name + suffix)
+
+
+def ask_unsaved(parent: QWidget, name: str) -> Unsaved:
+    """What is to become of unsaved changes."""
+    button = QMessageBox.StandardButton
+    box = QMessageBox(QMessageBox.Icon.NoIcon, "Filletwright", f"Keep the changes to {name}?", parent=parent)
+    box.setInformativeText("They are not saved yet.")
+    box.setStandardButtons(button.Save | button.Discard | button.Cancel)
+    box.setDefaultButton(button.Save)
+    answer = box.exec()
+    return {int(button.Save): Unsaved.SAVE, int(button.Discard): Unsaved.DROP}.get(int(answer), Unsaved.STAY)

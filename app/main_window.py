@@ -1,0 +1,337 @@
+"""The one window: bench and traces share an x axis at the left, ledger and workings stand at the right."""
+
+from datetime import date
+from pathlib import Path
+
+from PySide6.QtCore import Qt
+from PySide6.QtGui import QCloseEvent, QDragEnterEvent, QDropEvent
+from PySide6.QtWidgets import QApplication, QLabel, QMainWindow, QSplitter, QVBoxLayout, QWidget
+from shaftcore.ledger_table import write_ledger_csv
+from shaftcore.shaft_file import read_shaft, write_shaft
+
+from app.actions import build_actions
+from app.bench.hand import make_hand
+from app.bench.view import BenchView
+from app.document import Document, Scene
+from app.error_messages import guarded, report, tell
+from app.file_dialogs import SHAFT_FILTER, SHAFT_SUFFIX, Unsaved, ask_open, ask_save, ask_unsaved
+from app.fold import Fold
+from app.kit import Kit
+from app.manual.view import ManualWindow
+from app.menus import Menus
+from app.panels.givens import Givens
+from app.panels.ledger import Ledger
+from app.panels.notices import Notices
+from app.panels.thing import ThingPanel
+from app.panels.workings import Workings
+from app.preferences import Preferences
+from app.ruler import Ruler
+from app.sheet_export import export_sheet
+from app.status_line import status_words
+from app.theme import DARK, LIGHT, Theme, apply_theme
+from app.traces.view import TraceView
+from shaftcore.errors import FilletwrightError
+from shaftcore.shaft import Shaft
+
+SMALLEST = (1000, 620)
+
+
+class MainWindow(QMainWindow):
+    """Arranges the parts and carries out the commands; what is shown lives in the document."""
+
+    def __init__(self, preferences: Preferences, desktop: Theme) -> None:
+        super().__init__()
+        self.preferences, self._desktop = preferences, desktop
+        self.theme = self._theme_by_choice()
+        self.document = Document()
+        self.ruler = Ruler()
+        self.bench = BenchView(self.document, self.ruler, self.theme)
+        self.bench.hand = make_hand(self.bench, self.document)
+        self.kit = Kit(self.document, self.bench, self.theme)
+        self.traces = TraceView(self.document, self.ruler, self.theme)
+        self.ledger = Ledger(self.document, self.theme)
+        self.workings = Workings(self.document, self.theme)
+        self.givens = Givens(self.document, self.theme)
+        self.thing = ThingPanel(self.document, self.theme)
+        self.notices = Notices(self.document, self.theme)
+        self._manual: ManualWindow | None = None
+        self._arrange()
+        self.actions_by_key = build_actions(self, self._slots())
+        self.menus = Menus(self)
+        self._status = QLabel()
+        self._status.setAccessibleName("Governing station")
+        self.statusBar().addPermanentWidget(self._status)
+        self.statusBar().setSizeGripEnabled(False)
+        self.document.shown.connect(self._shown)
+        self.document.refused.connect(self._refused)
+        self.document.renamed.connect(self._renamed)
+        self.setAcceptDrops(True)
+        self.setMinimumSize(*SMALLEST)
+        self.set_theme(self.theme)
+        self._restore()
+        self._renamed()
+        self._shown(self.document.scene)
+
+    # arrangement ----------------------------------------------------------------------------------
+
+    def _arrange(self) -> None:
+        below = QWidget()
+        stack = QVBoxLayout(below)
+        stack.setContentsMargins(0, 0, 0, 0)
+        stack.setSpacing(0)
+        stack.addWidget(self.kit)
+        stack.addWidget(self.traces, 1)
+        self._left = QSplitter(Qt.Orientation.Vertical)
+        self._left.addWidget(self.bench)
+        self._left.addWidget(below)
+        self._left.setStretchFactor(0, 4)
+        self._left.setStretchFactor(1, 5)
+        self.folds = {
+            "ledger": Fold("Ledger", self.ledger),
+            "chosen": Fold("Chosen on the bench", self.thing, opened=False),
+            "givens": Fold("Givens", self.givens, opened=False),
+            "workings": Fold("Workings", self.workings),
+            "notices": Fold("Notices", self.notices, opened=False),
+        }
+        self._right = QSplitter(Qt.Orientation.Vertical)
+        for fold, share in zip(self.folds.values(), (5, 3, 5, 5, 2), strict=True):
+            self._right.addWidget(fold)
+            self._right.setStretchFactor(self._right.count() - 1, share)
+        self._across = QSplitter(Qt.Orientation.Horizontal)
+        self._across.addWidget(self._left)
+        self._across.addWidget(self._right)
+        self._across.setStretchFactor(0, 5)
+        self._across.setStretchFactor(1, 3)
+        for splitter in (self._left, self._right, self._across):
+            splitter.setChildrenCollapsible(False)
+        self.setCentralWidget(self._across)
+        self.resize(1366, 768)
+        self._across.setSizes([860, 506])
+
+    def set_theme(self, theme: Theme) -> None:
+        self.theme = theme
+        app = QApplication.instance()
+        if isinstance(app, QApplication):
+            apply_theme(app, theme)
+        for part in (
+            self.bench,
+            self.kit,
+            self.traces,
+            self.ledger,
+            self.workings,
+            self.givens,
+            self.thing,
+            self.notices,
+        ):
+            part.set_theme(theme)
+
+    def choose_theme(self, name: str) -> None:
+        """ "light", "dark" or "" for the desktop's own."""
+        self.preferences.keep("theme", name)
+        self.set_theme(self._theme_by_choice())
+
+    def _theme_by_choice(self) -> Theme:
+        return {"light": LIGHT, "dark": DARK}.get(self.preferences.words("theme", ""), self._desktop)
+
+    def _restore(self) -> None:
+        for key, splitter in (("left", self._left), ("right", self._right), ("across", self._across)):
+            state = self.preferences.state(f"split/{key}")
+            if state is not None:
+                splitter.restoreState(state)
+        geometry = self.preferences.state("geometry")
+        if geometry is not None:
+            self.restoreGeometry(geometry)
+        if self.preferences.words("units", "SI") == "US":
+            self.document.set_system("US")
+        self.traces.show_tracks(self.preferences.list("tracks", list(self.traces.shown_tracks)))
+        for key in self.preferences.list("opened folds", [k for k, fold in self.folds.items() if fold.opened]):
+            if key in self.folds:
+                self.folds[key].set_opened(True)
+
+    def _remember(self) -> None:
+        for key, splitter in (("left", self._left), ("right", self._right), ("across", self._across)):
+            self.preferences.keep(f"split/{key}", splitter.saveState())
+        self.preferences.keep("geometry", self.saveGeometry())
+        self.preferences.keep("units", self.document.scene.system)
+        self.preferences.keep("tracks", list(self.traces.shown_tracks))
+        self.preferences.keep("opened folds", [key for key, fold in self.folds.items() if fold.opened])
+
+    # what is shown --------------------------------------------------------------------------------
+
+    @guarded
+    def _shown(self, scene: Scene) -> None:
+        self._status.setText(status_words(scene))
+        if scene.live:
+            return
+        count = len(scene.missing) + (len(scene.results.notices) if scene.results else 0)
+        self.folds["notices"].set_title(f"Notices ({count})" if count else "Notices")
+        for key in ("sheet", "ledger_csv"):
+            self.actions_by_key[key].setEnabled(scene.results is not None)
+
+    @guarded
+    def _refused(self, words: str) -> None:
+        self.statusBar().showMessage(words, 8000)
+
+    @guarded
+    def _renamed(self) -> None:
+        name = self.document.path.name if self.document.path else "unnamed shaft"
+        self.setWindowTitle(f"{name}[*] — Filletwright")
+        self.setWindowModified(self.document.modified)
+
+    # commands -------------------------------------------------------------------------------------
+
+    def _slots(self) -> dict[str, object]:
+        return {
+            "new": self.begin_new,
+            "open": self.ask_open,
+            "save": self.save,
+            "save_as": self.save_as,
+            "sheet": self.write_sheet,
+            "ledger_csv": self.write_ledger,
+            "likeness": self.write_picture,
+            "quit": self.close,
+            "fit": self.fit,
+            "closer": lambda: self.ruler.zoom(1.25, self.bench.width() / 2),
+            "farther": lambda: self.ruler.zoom(0.8, self.bench.width() / 2),
+            "next_part": self.next_part,
+            "manual": lambda: self.open_manual("start"),
+            "cautions": lambda: self.open_manual("cautions"),
+            "about": self.tell_about,
+        }
+
+    def begin_new(self) -> None:
+        if self._may_leave():
+            self.document.load(Shaft(), None)
+
+    def ask_open(self) -> None:
+        path = ask_open(self, self.preferences.folder())
+        if path is not None:
+            self.open_file(path)
+
+    def open_file(self, path: Path) -> bool:
+        """Open a shaft file in place of the present one; what is wrong with it is said, nothing is lost."""
+        try:
+            shaft = read_shaft(path)
+        except FilletwrightError as error:
+            report(error, self)
+            return False
+        if not self._may_leave():
+            return False
+        self.document.load(shaft, path)
+        self._note_file(path)
+        return True
+
+    def open_copy(self, path: Path) -> None:
+        """Open a demo shaft as an unnamed one, so that the demo itself stays as it is."""
+        if self._may_leave():
+            self.document.load(read_shaft(path), None)
+
+    def save(self) -> bool:
+        return self._save_to(self.document.path) if self.document.path else self.save_as()
+
+    def save_as(self) -> bool:
+        suggestion = self.document.path or Path(self.preferences.folder()) / f"shaft{SHAFT_SUFFIX}"
+        path = ask_save(self, "Save the shaft", suggestion, SHAFT_FILTER, SHAFT_SUFFIX)
+        return path is not None and self._save_to(path)
+
+    def _save_to(self, path: Path) -> bool:
+        try:
+            write_shaft(self.document.shaft, path)
+        except FilletwrightError as error:
+            report(error, self)
+            return False
+        self.document.saved_as(path)
+        self._note_file(path)
+        return True
+
+    def _note_file(self, path: Path) -> None:
+        self.preferences.note_file(path)
+        self.preferences.keep("folder", str(path.resolve().parent))
+
+    def write_sheet(self) -> None:
+        results = self.document.scene.results
+        if results is None:
+            return
+        path = ask_save(self, "Write the margin sheet", self._beside(".pdf"), "PDF (*.pdf)", ".pdf")
+        if path is not None:
+            export_sheet(self, results, path, date.today(), self.document.scene.system)
+
+    def write_ledger(self) -> None:
+        results = self.document.scene.results
+        path = ask_save(self, "Write the ledger", self._beside(".csv"), "CSV (*.csv)", ".csv")
+        if results is not None and path is not None:
+            write_ledger_csv(results, path)
+            self.statusBar().showMessage(f"Ledger written to {path}", 8000)
+
+    def write_picture(self) -> None:
+        path = ask_save(self, "Write a picture of the window", self._beside(".png"), "PNG (*.png)", ".png")
+        if path is None:
+            return
+        if self.grab().save(str(path), "PNG"):
+            self.statusBar().showMessage(f"Picture written to {path}", 8000)
+        else:
+            tell("The picture could not be written", f"{path}: choose a folder you may write to.", self)
+
+    def _beside(self, suffix: str) -> Path:
+        path = self.document.path
+        if path is None:
+            return Path(self.preferences.folder()) / f"shaft{suffix}"
+        return path.with_name(path.name.removesuffix(".json").removesuffix(".shaft") + suffix)
+
+    def fit(self) -> None:
+        self.bench.fit()
+
+    def next_part(self) -> None:
+        """Give the keyboard to the next open part of the window."""
+        parts: list[QWidget] = [self.bench, self.kit, self.traces]
+        parts += [fold.content for fold in self.folds.values() if fold.opened]
+        now = QApplication.focusWidget()
+        at = next((i for i, part in enumerate(parts) if now and (part is now or part.isAncestorOf(now))), -1)
+        target = parts[(at + 1) % len(parts)]
+        inner = target if target.focusPolicy() & Qt.FocusPolicy.TabFocus else target.nextInFocusChain()
+        inner.setFocus(Qt.FocusReason.ShortcutFocusReason)
+
+    def open_manual(self, page: str) -> None:
+        if self._manual is None:
+            self._manual = ManualWindow(self)
+        self._manual.open_page(page)
+
+    def tell_about(self) -> None:
+        from shaftcore import VERSION
+
+        tell(
+            f"Filletwright {VERSION}",
+            "Sizes rotating shafts: diameters, shoulders and fillets with a fatigue margin at every station.\n\n"
+            "A design aid. Results defer to the codes in force and to a licensed engineer's judgement.\n\n"
+            "© the Filletwright authors, MIT licence.",
+            self,
+        )
+
+    # manners of a window --------------------------------------------------------------------------
+
+    def _may_leave(self) -> bool:
+        """True once unsaved changes are saved or given up."""
+        if not self.document.modified:
+            return True
+        name = self.document.path.name if self.document.path else "this shaft"
+        answer = ask_unsaved(self, name)
+        return self.save() if answer is Unsaved.SAVE else answer is Unsaved.DROP
+
+    @guarded
+    def closeEvent(self, event: QCloseEvent) -> None:  # noqa: N802 (Qt's name)
+        if self._may_leave():
+            self._remember()
+            event.accept()
+        else:
+            event.ignore()
+
+    @guarded
+    def dragEnterEvent(self, event: QDragEnterEvent) -> None:  # noqa: N802 (Qt's name)
+        if any(url.isLocalFile() for url in event.mimeData().urls()):
+            event.acceptProposedAction()
+
+    @guarded
+    def dropEvent(self, event: QDropEvent) -> None:  # noqa: N802 (Qt's name)
+        files = [url.toLocalFile() for url in event.mimeData().urls() if url.isLocalFile()]
+        if files:
+            self.open_file(Path(files[0]))
