@@ -1,6 +1,7 @@
 """The shaft's outline as points, for everything that draws it."""
 
 from functools import lru_cache
+from itertools import pairwise
 from typing import Any
 
 import numpy as np
@@ -30,11 +31,7 @@ def upper_outline(shaft: Shaft) -> Array:
 def bore_outline(shaft: Shaft) -> Array:
     """Points (2 n, 2) of (x, bore radius), mm, two for each of n segments; radius 0 where solid."""
     faces = faces_of(shaft)
-    rows = [
-        (x, segment.bore / 2)
-        for segment, ends in zip(shaft.segments, zip(faces, faces[1:], strict=False), strict=True)
-        for x in ends
-    ]
+    rows = [(x, segment.bore / 2) for segment, ends in zip(shaft.segments, pairwise(faces), strict=True) for x in ends]
     return np.array(rows, dtype=float).reshape(-1, 2)
 
 
@@ -43,7 +40,7 @@ def _corners(shaft: Shaft) -> list[tuple[float, Array]]:
     faces, segments = faces_of(shaft), shaft.segments
     radii = [
         (segments[0].diameter / 2,),
-        *((a.right_diameter / 2, b.diameter / 2) for a, b in zip(segments, segments[1:], strict=False)),
+        *((a.right_diameter / 2, b.diameter / 2) for a, b in pairwise(segments)),
         (segments[-1].right_diameter / 2,),
     ]
     return [
