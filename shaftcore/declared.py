@@ -5,6 +5,7 @@ written a second time. Read it back with `declared(record_or_class)`.
 """
 
 import math
+import re
 from dataclasses import MISSING, dataclass, field, fields
 from typing import Any
 
@@ -62,14 +63,29 @@ class Switch:
     label: str
     words: str = ""
 
+    def allowed(self) -> str:
+        return "true or false"
+
+
+TEXT_PATTERN = r"^[^\u0000-\u0008\u000b-\u001f\u007f-\u009f\ud800-\udfff]*$"
+"""Any characters but control characters and halves of a pair, which no file or sheet can carry."""
+
 
 @dataclass(frozen=True)
 class Text:
-    """A line of text of the user's."""
+    """A line of text of the user's; it may be empty unless `shortest` says otherwise."""
 
     label: str
     longest: int = 200
     words: str = ""
+    shortest: int = 0
+
+    def holds(self, value: str) -> bool:
+        return self.shortest <= len(value) <= self.longest and re.match(TEXT_PATTERN, value) is not None
+
+    def allowed(self) -> str:
+        span = f"{self.shortest} to {self.longest}" if self.shortest else f"at most {self.longest}"
+        return f"text of {span} characters, no control characters"
 
 
 @dataclass(frozen=True)
@@ -106,9 +122,9 @@ def switch(label: str, *, default: bool, words: str = "") -> Any:
     return _declare(Switch(label, words), default)
 
 
-def text(label: str, *, default: str = "", longest: int = 200, words: str = "") -> Any:
+def text(label: str, *, default: str = "", longest: int = 200, words: str = "", shortest: int = 0) -> Any:
     """A dataclass field holding a line of text."""
-    return _declare(Text(label, longest, words), default)
+    return _declare(Text(label, longest, words, shortest), default)
 
 
 def part(label: str, *kinds: type, default: Any = MISSING, **more: Any) -> Any:
@@ -132,3 +148,19 @@ _DECLARED: dict[type, dict[str, Declaration]] = {}
 def file_key(name: str, declaration: Declaration) -> str:
     """The key under which a field stands in the file: its name and, for a quantity, its unit."""
     return name + declaration.dimension.suffix if isinstance(declaration, Quantity) else name
+
+
+def may_be_left_out(declaration: Declaration) -> bool:
+    """Whether the file may lack a field: what may be none, a list, a text, or a record of such fields alone.
+
+    No number and no choice is ever assumed for a file that does not state it.
+    """
+    if isinstance(declaration, Part):
+        return (
+            declaration.optional
+            or declaration.many
+            or all(may_be_left_out(inner) for kind in declaration.kinds for inner in declared(kind).values())
+        )
+    if isinstance(declaration, Text):
+        return declaration.shortest == 0
+    return not isinstance(declaration, Switch) and declaration.optional

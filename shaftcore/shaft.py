@@ -23,7 +23,7 @@ class Segment:
     """One stretch of the shaft, a cylinder or (with `end_diameter`) a cone, with its right-hand face."""
 
     label: ClassVar[str] = "Segment"
-    id: str = text("Id", longest=40, words=ID_WORDS)
+    id: str = text("Id", longest=40, shortest=1, words=ID_WORDS)
     length: float = quantity("Length", "length", 0.0, LONGEST, symbol="L", above=True, default=50.0)
     diameter: float = quantity("Diameter", "length", 0.0, 10_000.0, symbol="d", above=True, default=50.0)
     end_diameter: float | None = quantity(
@@ -50,7 +50,7 @@ class Support:
     """A bearing: rigid across the shaft, and along it where it is the locating one."""
 
     label: ClassVar[str] = "Support"
-    id: str = text("Id", longest=40, words=ID_WORDS)
+    id: str = text("Id", longest=40, shortest=1, words=ID_WORDS)
     x: float = quantity("Position", "length", 0.0, 1000 * LONGEST, symbol="x", default=0.0)
     name: str = text("Name", longest=60)
     locating: bool = switch("Holds the shaft along its axis", default=False)
@@ -62,7 +62,7 @@ class RadialForce:
 
     kind: ClassVar[str] = "radial force"
     label: ClassVar[str] = "Radial force"
-    id: str = text("Id", longest=40, words=ID_WORDS)
+    id: str = text("Id", longest=40, shortest=1, words=ID_WORDS)
     x: float = quantity("Position", "length", 0.0, 1000 * LONGEST, symbol="x", default=0.0)
     force: float = quantity("Force", "force", -LARGEST_FORCE, LARGEST_FORCE, symbol="F", default=0.0)
     angle: float = quantity(
@@ -92,7 +92,7 @@ class Torque:
 
     kind: ClassVar[str] = "torque"
     label: ClassVar[str] = "Torque"
-    id: str = text("Id", longest=40, words=ID_WORDS)
+    id: str = text("Id", longest=40, shortest=1, words=ID_WORDS)
     x: float = quantity("Position", "length", 0.0, 1000 * LONGEST, symbol="x", default=0.0)
     torque: float = quantity(
         "Mean torque",
@@ -121,7 +121,7 @@ class AxialForce:
 
     kind: ClassVar[str] = "axial force"
     label: ClassVar[str] = "Axial force"
-    id: str = text("Id", longest=40, words=ID_WORDS)
+    id: str = text("Id", longest=40, shortest=1, words=ID_WORDS)
     x: float = quantity("Position", "length", 0.0, 1000 * LONGEST, symbol="x", default=0.0)
     force: float = quantity(
         "Mean force", "force", -LARGEST_FORCE, LARGEST_FORCE, symbol="F", default=0.0, words="Positive to the right."

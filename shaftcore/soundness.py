@@ -61,29 +61,43 @@ def _own_problems(record: Any) -> tuple[tuple[str, Problem], ...]:
     return tuple(
         (file_key(name, declaration), problem)
         for name, declaration in declared(record).items()
-        if (problem := _plain_problem(declaration, getattr(record, name))) is not None
+        if (problem := plain_problem(declaration, getattr(record, name))) is not None
     )
 
 
-def _plain_problem(declaration: Any, value: Any) -> Problem | None:
+def plain_problem(declaration: Any, value: Any) -> Problem | None:
+    """What is wrong with the value of one field (internal units), its path left empty; None for a part."""
+    if isinstance(declaration, Part) or (value is None and getattr(declaration, "optional", False)):
+        return None
     if isinstance(declaration, Quantity):
-        if value is None and declaration.optional:
-            return None
-        if isinstance(value, bool) or not isinstance(value, (int, float)):
-            return Problem("", f"{value!r}", declaration.allowed(in_file=True), "give a number")
-        if not declaration.holds(value):
-            unit = declaration.dimension.file
-            shown = f"{unit.shown(value):.6g} {unit.symbol}".rstrip() if math.isfinite(value) else str(value)
-            return Problem("", shown, declaration.allowed(in_file=True), "give a number in this range")
-    elif isinstance(declaration, Choice):
-        if not (value is None and declaration.optional) and value not in {v for v, _ in declaration.options}:
-            return Problem("", f"{value!r}", declaration.allowed(), "choose one of these")
+        return _number_problem(declaration, value)
+    if isinstance(declaration, Choice):
+        fits, remedy = value in [v for v, _ in declaration.options], "choose one of these"
     elif isinstance(declaration, Switch):
-        if not isinstance(value, bool):
-            return Problem("", f"{value!r}", "true or false", "give one of these")
-    elif isinstance(declaration, Text) and (not isinstance(value, str) or len(value) > declaration.longest):
-        return Problem("", f"{value!r:.60}", f"text of {declaration.longest} characters at most", "shorten it")
-    return None
+        fits, remedy = isinstance(value, bool), "give one of these"
+    else:
+        fits = isinstance(value, str) and declaration.holds(value)
+        remedy = _text_remedy(declaration, value)
+    return None if fits else Problem("", f"{value!r:.60}", declaration.allowed(), remedy)
+
+
+def _number_problem(quantity: Quantity, value: Any) -> Problem | None:
+    allowed = quantity.allowed(in_file=True)
+    if isinstance(value, bool) or not isinstance(value, (int, float)):
+        return Problem("", f"{value!r:.60}", allowed, "give a number")
+    if quantity.holds(value):
+        return None
+    unit = quantity.dimension.file
+    shown = f"{unit.shown(value):.6g} {unit.symbol}".rstrip() if math.isfinite(value) else str(value)
+    return Problem("", shown, allowed, "give a number in this range")
+
+
+def _text_remedy(text: Text, value: Any) -> str:
+    if not isinstance(value, str):
+        return "give a text"
+    if len(value) < text.shortest:
+        return "give it a name of its own"
+    return "shorten it" if len(value) > text.longest else "remove the control characters"
 
 
 def _id_problems(shaft: Shaft) -> Iterator[Problem]:
@@ -91,9 +105,7 @@ def _id_problems(shaft: Shaft) -> Iterator[Problem]:
     for group in ("segments", "raisers", "supports", "loads"):
         for index, thing in enumerate(getattr(shaft, group)):
             path = f"{group}[{index}].id"
-            if not thing.id:
-                yield Problem(path, "empty", "a name", "give it a name of its own")
-            elif thing.id in seen:
+            if thing.id in seen:
                 yield Problem(path, f'"{thing.id}"', f"a name not used by {seen[thing.id]}", "rename one of the two")
             seen.setdefault(thing.id, path.removesuffix(".id"))
 
