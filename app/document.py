@@ -11,6 +11,7 @@ from pathlib import Path
 from PySide6.QtCore import QObject, Signal
 from PySide6.QtGui import QUndoCommand, QUndoStack
 
+from app.error_messages import guarded
 from shaftcore.errors import UnsoundShaftError
 from shaftcore.evaluation import evaluate
 from shaftcore.records import Problem
@@ -45,9 +46,11 @@ class ChangeShaft(QUndoCommand):
         super().__init__(words)
         self._document, self.before, self.after, self.merge = document, before, after, merge
 
+    @guarded
     def undo(self) -> None:
         self._document._settle(self.before)
 
+    @guarded
     def redo(self) -> None:
         self._document._settle(self.after)
 
@@ -79,7 +82,7 @@ class Document(QObject):
         self.path: Path | None = None
         self.undo_stack = QUndoStack(self)
         self.undo_stack.cleanChanged.connect(lambda _: self.renamed.emit())
-        self._settled = Shaft()
+        self._settled, self._settled_scene = Shaft(), self.scene
         self._previewed: Shaft | None = None
         self._settle(Shaft())
 
@@ -120,7 +123,9 @@ class Document(QObject):
         scene = self._scene_of(shaft, live=True)
         if scene is None:
             return False
-        self._previewed = shaft
+        begins, self._previewed = not self.in_gesture, shaft
+        if begins:
+            self._rest_undo()
         self._show(scene)
         return True
 
@@ -128,14 +133,16 @@ class Document(QObject):
         """End a gesture and keep what was last previewed as one step."""
         after, self._previewed = self._previewed, None
         if after is None or after == self._settled:
-            self._settle(self._settled)
+            self.cancel()
             return
         self.undo_stack.push(ChangeShaft(self, self._settled, after, words, None))
 
     def cancel(self) -> None:
-        """End a gesture and take it back."""
+        """End a gesture and take it back; nothing is computed, so that it works after any failure."""
         self._previewed = None
-        self._settle(self._settled)
+        self._rest_undo()
+        back = replace(self._settled_scene, chosen=self.scene.chosen, station=None, system=self.scene.system)
+        self._show(_with_choice_kept(back, self.scene))
 
     def change(self, shaft: Shaft, words: str, merge: str | None = None) -> bool:
         """One step outside a gesture; steps that share `merge` become one. False where refused."""
@@ -164,6 +171,8 @@ class Document(QObject):
     # inside ---------------------------------------------------------------------------------------
 
     def _scene_of(self, shaft: Shaft, live: bool) -> Scene | None:
+        if shaft is self.scene.shaft and (self.scene.results is not None or self.scene.missing):
+            return replace(self.scene, live=live)
         results: Results | None = None
         missing: tuple[Problem, ...] = ()
         try:
@@ -180,8 +189,14 @@ class Document(QObject):
     def _settle(self, shaft: Shaft) -> None:
         scene = self._scene_of(shaft, live=False)
         if scene is not None:
-            self._settled = shaft
+            self._settled, self._settled_scene, self._previewed = shaft, scene, None
+            self._rest_undo()
             self._show(scene)
+
+    def _rest_undo(self) -> None:
+        """Actions made from the undo stack are off during a gesture and as the stack has them after it."""
+        self.undo_stack.canUndoChanged.emit(self.undo_stack.canUndo() and not self.in_gesture)
+        self.undo_stack.canRedoChanged.emit(self.undo_stack.canRedo() and not self.in_gesture)
 
     def _show(self, scene: Scene) -> None:
         self.scene = scene

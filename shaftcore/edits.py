@@ -114,6 +114,17 @@ def _usual_radius(shaft: Shaft, index: int) -> float:
     return max(fitting) if fitting else min(FIRST_RADII[0], max(room, 1e-3))
 
 
+def set_size(shaft: Shaft, id: str, name: str, value: float | None, at_step: bool = False) -> Shaft:
+    """One declared size of a thing, or (`at_step`) of the shoulder at a segment's right-hand face."""
+    if at_step:
+        return replace_shoulder(shaft, id, **{name: value})
+    if name == "x" and value is not None:
+        return move_thing(shaft, id, value)
+    if name == "length" and value is not None:
+        return set_length(shaft, id, value)
+    return replace_thing(shaft, id, **{name: value})
+
+
 # segments -------------------------------------------------------------------------------------------
 
 

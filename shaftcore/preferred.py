@@ -9,10 +9,11 @@ import math
 from bisect import bisect_left, bisect_right
 from typing import Literal
 
+from shaftcore.abutment import CORNERS
 from shaftcore.declared import Quantity
 from shaftcore.units import System, dimension
 
-SizeSort = Literal["radius", "diameter", "length", "place", "turn", "number"]
+SizeSort = Literal["radius", "corner", "diameter", "length", "place", "turn", "number"]
 
 R40: tuple[float, ...] = (
     *(1.0, 1.06, 1.12, 1.18, 1.25, 1.32, 1.4, 1.5, 1.6, 1.7, 1.8, 1.9, 2.0, 2.12, 2.24, 2.36, 2.5, 2.65, 2.8, 3.0),
@@ -40,6 +41,8 @@ def sort_of(name: str, quantity: Quantity) -> SizeSort:
         return "turn"
     if quantity.dimension_name != "length":
         return "number"
+    if name == "bearing_corner":
+        return "corner"
     if quantity.symbol.startswith("r"):
         return "radius"
     return "diameter" if "iameter" in quantity.label or quantity.label == "Bore" else "length"
@@ -119,6 +122,8 @@ def _rows(sort: SizeSort, shown: float, system: System, factor: float) -> list[t
     """Rows of sizes (in the unit shown) that reach beyond `shown`, the finest first."""
     if sort in ("place", "turn"):
         return []
+    if sort == "corner":
+        return [tuple(corner / factor for corner, _, _ in CORNERS)]
     if system == "US" and sort in ("radius", "diameter", "length"):
         return [_inches(shown)]
     if sort == "radius":
