@@ -36,9 +36,14 @@ class Quantity:
     def allowed(self, system: System = "SI", in_file: bool = False) -> str:
         """The range in words, in the file's unit or in what the user reads."""
         unit = self.dimension.file if in_file else self.dimension.unit(system)
-        low, high = (f"{unit.shown(end):.6g}" for end in (self.low, self.high))
+        low, high = (_plain(unit.shown(end)) for end in (self.low, self.high))
         begin = f"above {low} up to" if self.above else f"{low} to"
         return f"{begin} {high} {unit.symbol}".rstrip() + (", or none" if self.optional else "")
+
+
+def _plain(number: float) -> str:
+    """A number without an exponent where people would write none."""
+    return f"{number:.0f}" if abs(number) >= 1e5 else f"{number:.6g}"
 
 
 @dataclass(frozen=True)

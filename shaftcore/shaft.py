@@ -12,7 +12,12 @@ from shaftcore.notches.kinds import RAISER_RECORDS, Raiser
 from shaftcore.notches.shoulder import Shoulder
 from shaftcore.surface import FINISHES
 
-LONGEST = 100_000.0
+SHORTEST, LONGEST = 0.01, 100_000.0
+"""Lengths (mm) of a segment; the whole shaft is no longer than the longest either."""
+
+THINNEST, THICKEST = 0.1, 10_000.0
+"""Diameters (mm), from a watch pivot to a kiln roller."""
+
 LARGEST_FORCE = 1e8
 LARGEST_TORQUE = 1e11
 ID_WORDS = "Name of this thing inside the file, unique on the shaft."
@@ -24,19 +29,18 @@ class Segment:
 
     label: ClassVar[str] = "Segment"
     id: str = text("Id", longest=40, shortest=1, words=ID_WORDS)
-    length: float = quantity("Length", "length", 0.0, LONGEST, symbol="L", above=True, default=50.0)
-    diameter: float = quantity("Diameter", "length", 0.0, 10_000.0, symbol="d", above=True, default=50.0)
+    length: float = quantity("Length", "length", SHORTEST, LONGEST, symbol="L", default=50.0)
+    diameter: float = quantity("Diameter", "length", THINNEST, THICKEST, symbol="d", default=50.0)
     end_diameter: float | None = quantity(
         "Diameter at the right-hand end",
         "length",
-        0.0,
-        10_000.0,
-        above=True,
+        THINNEST,
+        THICKEST,
         optional=True,
         default=None,
         words="Makes the segment a taper. None for a cylinder.",
     )
-    bore: float = quantity("Bore", "length", 0.0, 10_000.0, symbol="d_i", default=0.0, words="0 for solid.")
+    bore: float = quantity("Bore", "length", 0.0, THICKEST, symbol="d_i", default=0.0, words="0 for solid.")
     finish: str = choice("Finish", FINISHES, default="machined")
     shoulder: Shoulder | None = part("Shoulder at the right-hand face", Shoulder, default=None, optional=True)
 
@@ -51,7 +55,7 @@ class Support:
 
     label: ClassVar[str] = "Support"
     id: str = text("Id", longest=40, shortest=1, words=ID_WORDS)
-    x: float = quantity("Position", "length", 0.0, 1000 * LONGEST, symbol="x", default=0.0)
+    x: float = quantity("Position", "length", 0.0, LONGEST, symbol="x", default=0.0)
     name: str = text("Name", longest=60)
     locating: bool = switch("Holds the shaft along its axis", default=False)
 
@@ -63,7 +67,7 @@ class RadialForce:
     kind: ClassVar[str] = "radial force"
     label: ClassVar[str] = "Radial force"
     id: str = text("Id", longest=40, shortest=1, words=ID_WORDS)
-    x: float = quantity("Position", "length", 0.0, 1000 * LONGEST, symbol="x", default=0.0)
+    x: float = quantity("Position", "length", 0.0, LONGEST, symbol="x", default=0.0)
     force: float = quantity("Force", "force", -LARGEST_FORCE, LARGEST_FORCE, symbol="F", default=0.0)
     angle: float = quantity(
         "Angle",
@@ -93,7 +97,7 @@ class Torque:
     kind: ClassVar[str] = "torque"
     label: ClassVar[str] = "Torque"
     id: str = text("Id", longest=40, shortest=1, words=ID_WORDS)
-    x: float = quantity("Position", "length", 0.0, 1000 * LONGEST, symbol="x", default=0.0)
+    x: float = quantity("Position", "length", 0.0, LONGEST, symbol="x", default=0.0)
     torque: float = quantity(
         "Mean torque",
         "torque",
@@ -122,7 +126,7 @@ class AxialForce:
     kind: ClassVar[str] = "axial force"
     label: ClassVar[str] = "Axial force"
     id: str = text("Id", longest=40, shortest=1, words=ID_WORDS)
-    x: float = quantity("Position", "length", 0.0, 1000 * LONGEST, symbol="x", default=0.0)
+    x: float = quantity("Position", "length", 0.0, LONGEST, symbol="x", default=0.0)
     force: float = quantity(
         "Mean force", "force", -LARGEST_FORCE, LARGEST_FORCE, symbol="F", default=0.0, words="Positive to the right."
     )

@@ -11,7 +11,7 @@ from shaftcore.errors import UnsoundShaftError
 from shaftcore.geometry import faces_of
 from shaftcore.notch_sites import Seating, seatings
 from shaftcore.records import Problem
-from shaftcore.shaft import Shaft
+from shaftcore.shaft import LONGEST, Shaft
 
 SLACK = 1e-9
 
@@ -131,6 +131,8 @@ def _geometry_problems(shaft: Shaft) -> Iterator[Problem]:
                 yield Problem(
                     f"{path}.bore_mm", f"{bore:g} mm beside the face", f"less than {thin:g} mm", "shorten the bore"
                 )
+    if shaft.length > LONGEST:
+        yield Problem("segments", f"{shaft.length:g} mm in all", f"up to {LONGEST:.0f} mm in all", "shorten some")
     if shaft.material.yield_strength > shaft.material.tensile_strength:
         yield Problem(
             "material.yield_strength_MPa",
