@@ -132,14 +132,14 @@ def _station_flags(
     shaft: Shaft, stations: Sequence[Station], factors: NotchFactors, judged: Judged
 ) -> Iterator[Notice]:
     source = shaft.judgement.kt_source
-    size = judged.d if shaft.duty.turning else 0.37 * judged.d
+    size = judged.strength.size_diameter
     too_small_or_large = (size < SIZE_LOW) | (size > SIZE_HIGH)
     for i, station in enumerate(stations):
         if too_small_or_large[i]:
             yield Notice(
                 "outside a fit",
-                f"The size factor is fitted for {SIZE_LOW:g} to {SIZE_HIGH:g} mm; {size[i]:.4g} mm is held at the "
-                "nearer end.",
+                f"The size factor is fitted for {SIZE_LOW:g} to {SIZE_HIGH:g} mm; for {size[i]:.4g} mm "
+                f"{'it is 1' if size[i] < SIZE_LOW else 'its power is carried on'}.",
                 station.place,
                 i,
             )

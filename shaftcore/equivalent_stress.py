@@ -6,9 +6,13 @@ After the shaft chapter of the Shigley textbooks, from memory. MPa; arrays of on
 from dataclasses import dataclass
 
 import numpy as np
+from numpy.typing import NDArray
 
 from shaftcore.notches._contract import Array
 from shaftcore.strength_factors import AXIAL_FACTOR
+
+ROUNDING = 1e-9
+"""A stress below this share of the others is left over from summing forces, not a load."""
 
 
 @dataclass(frozen=True, eq=False)
@@ -30,6 +34,16 @@ class Fatigue:
     bending: Array
     axial: Array
     torsion: Array
+
+
+def axial_alone(s: Nominal) -> NDArray[np.bool_]:
+    """Where nothing but axial stress alternates; stresses that are rounding beside it count as none."""
+    return (s.axial_amplitude > 0) & (s.bending_amplitude + s.torsion_amplitude <= ROUNDING * s.axial_amplitude)
+
+
+def torsion_alternates(s: Nominal) -> NDArray[np.bool_]:
+    """Where a torsion amplitude counts at all beside the other amplitudes."""
+    return s.torsion_amplitude > ROUNDING * (s.bending_amplitude + s.axial_amplitude)
 
 
 def equivalent_amplitude(s: Nominal, k: Fatigue) -> Array:

@@ -4,7 +4,15 @@ import numpy as np
 from numpy.typing import NDArray
 
 from shaftcore.beam_loads import BeamLoads
-from shaftcore.equivalent_stress import Fatigue, Nominal, equivalent_amplitude, equivalent_mean, greatest_stress
+from shaftcore.equivalent_stress import (
+    Fatigue,
+    Nominal,
+    axial_alone,
+    equivalent_amplitude,
+    equivalent_mean,
+    greatest_stress,
+    torsion_alternates,
+)
 from shaftcore.mean_stress_rules import RULES, yield_factor
 from shaftcore.notches._contract import Array
 from shaftcore.results import Judged, Strength
@@ -14,6 +22,7 @@ from shaftcore.strength_factors import (
     finish_factors,
     plain_endurance,
     reliability_factor,
+    size_diameter,
     size_factor,
     temperature_factor,
 )
@@ -40,23 +49,26 @@ def station_stresses(loads: BeamLoads, d: Array, bore: Array, turning: bool) -> 
     )
 
 
-def strength_at(shaft: Shaft, d: Array, finish: NDArray[np.intp], axial_alone: NDArray[np.bool_]) -> Strength:
-    """Endurance limit at each point: `finish` numbers the finishes as in `surface.FINISHES`."""
+def strength_at(shaft: Shaft, d: Array, finish: NDArray[np.intp], nominal: Nominal) -> Strength:
+    """Endurance limit at each point: `finish` numbers the finishes as in `surface.FINISHES`.
+
+    A size factor belongs to what alternates there, hence the stresses.
+    """
     judgement, tensile = shaft.judgement, shaft.material.tensile_strength
     plain = plain_endurance(tensile)
     ka = finish_factors(judgement.finish_table, tensile)[finish]
-    kb = size_factor(d, shaft.duty.turning, axial_alone)
+    size = size_diameter(d, shaft.duty.turning, torsion_alternates(nominal))
+    kb = size_factor(size, axial_alone(nominal))
     kd = temperature_factor(shaft.duty.temperature)
     ke = reliability_factor(judgement.reliability)
     endurance = ka * kb * kd * ke * judgement.user_factor * plain
-    return Strength(plain, ka, kb, 1.0, kd, ke, judgement.user_factor, endurance)
+    return Strength(plain, ka, kb, size, 1.0, kd, ke, judgement.user_factor, endurance)
 
 
 def judge(shaft: Shaft, nominal: Nominal, fatigue: Fatigue, d: Array, bore: Array, finish: NDArray[np.intp]) -> Judged:
     """n, margins and utilisation at points given by net section, stresses and fatigue factors."""
     judgement, material = shaft.judgement, shaft.material
-    only_axial = (nominal.axial_amplitude > 0) & (nominal.bending_amplitude == 0) & (nominal.torsion_amplitude == 0)
-    strength = strength_at(shaft, d, finish, only_axial)
+    strength = strength_at(shaft, d, finish, nominal)
     amplitude = equivalent_amplitude(nominal, fatigue)
     mean = equivalent_mean(nominal, fatigue, judgement.notch_on_steady_torque)
     greatest = greatest_stress(nominal, fatigue, judgement.notch_on_yield)
@@ -67,6 +79,7 @@ def judge(shaft: Shaft, nominal: Nominal, fatigue: Fatigue, d: Array, bore: Arra
     return Judged(
         d=d,
         bore=bore,
+        finish=finish,
         nominal=nominal,
         amplitude=amplitude,
         mean=mean,

@@ -10,11 +10,17 @@ from shaftcore.notches._contract import Array
 
 @dataclass(frozen=True)
 class MeanStressRule:
-    """A rule: `factor(amplitude, mean, endurance, tensile, yield)` gives n, all MPa; mean >= 0."""
+    """A rule: `factor(amplitude, mean, endurance, tensile, yield)` gives n, all MPa; mean >= 0.
+
+    `solved` is the formula solved for n, `numbers` the same as a template with the names of the
+    arguments in braces.
+    """
 
     key: str
     label: str
     formula: str
+    solved: str
+    numbers: str
     source: str
     factor: Callable[[Array, Array, Array, float, float], Array]
 
@@ -38,8 +44,24 @@ def _inverse(use: Array) -> Array:
 RULES: dict[str, MeanStressRule] = {
     rule.key: rule
     for rule in (
-        MeanStressRule("goodman", "Goodman", "1/n = σa'/Se + σm'/Sut", "goodman", goodman),
-        MeanStressRule("gerber", "Gerber", "n σa'/Se + (n σm'/Sut)² = 1", "gerber", gerber),
+        MeanStressRule(
+            "goodman",
+            "Goodman",
+            "1/n = σa'/Se + σm'/Sut",
+            "1/(σa'/Se + σm'/Sut)",
+            "1/({amplitude}/{endurance} + {mean}/{tensile})",
+            "goodman",
+            goodman,
+        ),
+        MeanStressRule(
+            "gerber",
+            "Gerber",
+            "n σa'/Se + (n σm'/Sut)² = 1",
+            "2/(σa'/Se + √((σa'/Se)² + 4 (σm'/Sut)²))",
+            "2/({amplitude}/{endurance} + √(({amplitude}/{endurance})^2 + 4 × ({mean}/{tensile})^2))",
+            "gerber",
+            gerber,
+        ),
     )
 }
 

@@ -21,7 +21,8 @@ LOAD_ROWS = {sort: row for row, sort in enumerate(LOAD_SORTS)}
 class NotchFactors:
     """Arrays (3 loads in the order of LOAD_SORTS, n stations); 1 where the section is plain.
 
-    `held` marks where Kf is kept at its peak because a smaller radius would seem to lower it.
+    `held` marks where Kf is kept at its peak because a smaller radius would seem to lower it;
+    `radius` (mm) is the root radius Kf was taken at, the raiser's own where it is not held.
     `outside` marks where a fit is used outside its range, `low_by` the share by which finite
     elements are known to lie above the fit thereabouts.
     """
@@ -30,6 +31,7 @@ class NotchFactors:
     q: Array
     kf: Array
     held: NDArray[np.bool_]
+    radius: Array
     outside: NDArray[np.bool_]
     low_by: Array
 
@@ -38,7 +40,13 @@ def notch_factors(sites: Sequence[Site | None], judgement: Judgement, tensile_st
     """Factors for one entry a station, None for a plain section."""
     shape = (len(LOAD_SORTS), len(sites))
     found = NotchFactors(
-        np.ones(shape), np.zeros(shape), np.ones(shape), np.zeros(shape, bool), np.zeros(shape, bool), np.zeros(shape)
+        np.ones(shape),
+        np.zeros(shape),
+        np.ones(shape),
+        np.zeros(shape, bool),
+        np.zeros(shape),
+        np.zeros(shape, bool),
+        np.zeros(shape),
     )
     for key, kind in KINDS.items():
         index = np.array([i for i, site in enumerate(sites) if site is not None and site.kind == key], dtype=np.intp)
@@ -68,26 +76,30 @@ def _one_load(
 ) -> None:
     torsion = row == LOAD_ROWS["torsion"]
     kt, q, kf = kf_of(fit, sizes, rule, tensile_strength, torsion)
-    found.kt[row, index], found.q[row, index] = kt, q
+    found.kt[row, index], found.q[row, index], found.radius[row, index] = kt, q, sizes["r"]
     small = sizes["r"] < HOLD_RADII[-1]
     if small.any():
-        peak = _peak_above(
+        peak, radius = _peak_above(
             {name: values[small] for name, values in sizes.items()}, fit, rule, tensile_strength, torsion
         )
-        found.held[row, index[small]] = peak > kf[small] * 1.001
-        kf[small] = np.maximum(peak, kf[small])
+        held = peak > kf[small] * 1.001
+        found.held[row, index[small]] = held
+        found.radius[row, index[small]] = np.where(held, radius, sizes["r"][small])
+        kf[small] = np.where(held, peak, kf[small])
     found.kf[row, index] = kf
 
 
-def _peak_above(sizes: Sizes, fit: Fit, rule: str, tensile_strength: float, torsion: bool) -> Array:
-    """Largest Kf for any root radius not below the given one, all else kept.
+def _peak_above(sizes: Sizes, fit: Fit, rule: str, tensile_strength: float, torsion: bool) -> tuple[Array, Array]:
+    """Largest Kf, and its radius, for any root radius not below the given one, all else kept.
 
     Kt grows as r^-½ at most while q falls in proportion to √r or r, so Kf passes a peak and would
     fall to 1 for a sharp corner; no real corner does, so below the peak Kf stays at it.
     """
     grid = {name: values[:, None] for name, values in sizes.items()}
     grid["r"] = np.maximum(grid["r"], HOLD_RADII)
-    return kf_of(fit, grid, rule, tensile_strength, torsion)[2].max(axis=1)
+    kf = kf_of(fit, grid, rule, tensile_strength, torsion)[2]
+    top, rows = kf.argmax(axis=1), np.arange(len(kf))
+    return kf[rows, top], grid["r"][rows, top]
 
 
 def _outside(fit: Fit, measures: Sizes) -> NDArray[np.bool_]:

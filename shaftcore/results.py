@@ -3,6 +3,7 @@
 from dataclasses import dataclass
 
 import numpy as np
+from numpy.typing import NDArray
 
 from shaftcore.beam_loads import BeamLoads
 from shaftcore.equivalent_stress import Nominal
@@ -15,11 +16,15 @@ from shaftcore.stations import Station
 
 @dataclass(frozen=True, eq=False)
 class Strength:
-    """Marin factors and limits at each point (arrays), MPa; the scalars hold for the whole shaft."""
+    """Marin factors and limits at each point (arrays), MPa; the scalars hold for the whole shaft.
+
+    `size_diameter` (mm) is the diameter kb was taken for.
+    """
 
     plain: float
     ka: Array
     kb: Array
+    size_diameter: Array
     kc: float
     kd: float
     ke: float
@@ -31,12 +36,15 @@ class Strength:
 class Judged:
     """The chain from stress to margin at each point: net section (mm), stresses (MPa), factors.
 
+    `finish` numbers the finishes as in `surface.FINISHES`.
+
     `margin` and `yield_margin` are n/n_asked - 1; `utilisation` is the larger of n_asked/n of
     both checks. An unloaded place has n = inf, margin inf and utilisation 0.
     """
 
     d: Array
     bore: Array
+    finish: NDArray[np.intp]
     nominal: Nominal
     amplitude: Array
     mean: Array

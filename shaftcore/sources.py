@@ -29,5 +29,13 @@ SOURCES: dict[str, Source] = {
     "statics": Source("statics", "Equilibrium of the shaft and elementary beam theory", from_memory=False),
     "goodman": Source("Goodman", "J. Goodman, straight line between endurance limit and tensile strength"),
     "gerber": Source("Gerber", "W. Gerber, parabola between endurance limit and tensile strength"),
+    "marin": Source("Marin", "J. Marin, factors on the endurance limit, with the constants of the Shigley textbooks"),
+    "given": Source("given", "The shaft as described by its author", from_memory=False),
+    "judgement": Source("judgement", "The judgement chosen for this shaft", from_memory=False),
+    "fe": Source(
+        "finite elements",
+        "Converged axisymmetric finite-element solutions of shoulders and grooves, Poisson's ratio 0.3",
+        from_memory=False,
+    ),
     "practice": Source("common practice", "Common practice of the trade, no source", from_memory=False),
 }

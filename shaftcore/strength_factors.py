@@ -10,6 +10,7 @@ from numpy.typing import ArrayLike
 
 from shaftcore.notches._contract import Array
 from shaftcore.surface import FINISHES
+from shaftcore.units import dimension
 
 FINISH_TABLES: dict[str, dict[str, tuple[float, float]]] = {
     "older": {
@@ -29,6 +30,9 @@ FINISH_TABLES: dict[str, dict[str, tuple[float, float]]] = {
 
 SIZE_LOW, SIZE_SWITCH, SIZE_HIGH = 2.79, 51.0, 254.0
 """Diameters (mm) between which the two size formulas hold."""
+
+SIZE_SMALL, SIZE_LARGE = (1.24, -0.107), (1.51, -0.157)
+"""kb = factor d^power up to SIZE_SWITCH and above it."""
 
 STANDING_SHARE = 0.37
 """Equivalent diameter of a round bar that does not turn under its load, as a share of d."""
@@ -53,25 +57,46 @@ def finish_factors(table: str, tensile_strength: float) -> Array:
     return np.array([min(rows[name][0] * tensile_strength ** rows[name][1], 1.0) for name, _ in FINISHES])
 
 
-def size_factor(d: ArrayLike, turning: bool, axial_alone: ArrayLike = False) -> Array:
-    """kb = 1.24 d^-0.107 up to 51 mm, 1.51 d^-0.157 above; 1 under axial load alone.
+def size_diameter(d: ArrayLike, turning: bool, torsion_alternates: ArrayLike = False) -> Array:
+    """Diameter (mm) the size factor is taken for: d, and 0.37 d where a standing shaft is only bent.
 
-    A shaft that stands still uses 0.37 d. d is held within 2.79 and 254 mm.
+    The 0.37 stands for the small part of the surface near the highest bending stress. Alternating
+    torsion stresses the whole surface alike, standing or turning, so it takes d in full.
     """
-    d = np.asarray(d, dtype=float) * (1.0 if turning else STANDING_SHARE)
-    d = np.clip(d, SIZE_LOW, SIZE_HIGH)
-    kb = np.where(d <= SIZE_SWITCH, 1.24 * d**-0.107, 1.51 * d**-0.157)
+    d = np.asarray(d, dtype=float)
+    return d if turning else np.where(torsion_alternates, d, STANDING_SHARE * d)
+
+
+def size_factor(size_diameter: ArrayLike, axial_alone: ArrayLike = False) -> Array:
+    """kb = 1.24 d^-0.107 up to 51 mm, 1.51 d^-0.157 above; 1 under axial load alone, never above 1.
+
+    Fitted for 2.79 to 254 mm. Below, the bound of 1 rules; above, the power is carried on, since
+    holding the last value would be unsafe.
+    """
+    d = np.asarray(size_diameter, dtype=float)
+    (low, low_power), (high, high_power) = SIZE_SMALL, SIZE_LARGE
+    kb = np.where(d <= SIZE_SWITCH, low * d**low_power, high * d**high_power)
     return np.where(axial_alone, 1.0, np.minimum(kb, 1.0))
+
+
+def in_fahrenheit(celsius: float) -> float:
+    """The temperature in the unit the published polynomial asks for."""
+    return dimension("temperature").us.shown(celsius)
 
 
 def temperature_factor(celsius: float) -> float:
     """kd: polynomial in °F from 70 to 1000 °F; 1 below."""
-    fahrenheit = min(celsius * 9 / 5 + 32, TEMPERATURE_HIGH_F)
+    fahrenheit = min(in_fahrenheit(celsius), TEMPERATURE_HIGH_F)
     if fahrenheit < TEMPERATURE_LOW_F:
         return 1.0
     return float(np.polynomial.polynomial.polyval(fahrenheit, TEMPERATURE_FIT))
 
 
+def reliability_quantile(reliability: float) -> float:
+    """z, the quantile of the standard normal distribution."""
+    return NormalDist().inv_cdf(reliability)
+
+
 def reliability_factor(reliability: float) -> float:
-    """ke = 1 - 0.08 z, z the normal quantile of the reliability."""
-    return 1 - RELIABILITY_SPREAD * NormalDist().inv_cdf(reliability)
+    """ke = 1 - 0.08 z."""
+    return 1 - RELIABILITY_SPREAD * reliability_quantile(reliability)

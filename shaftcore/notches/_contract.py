@@ -11,6 +11,7 @@ from typing import Any, Literal
 import numpy as np
 from numpy.typing import NDArray
 
+from shaftcore.calculation_lines import Line
 from shaftcore.records import ValidRange
 
 Array = NDArray[np.float64]
@@ -69,7 +70,8 @@ class Fit:
 
     `value(sizes)` gives Kt on the net section for arrays of one shape, continued in a sensible
     way outside `ranges`, which name the parameters of `RaiserKind.parameters`. `formula` is the
-    text of the formula. `low_by` lists (r/d, share): how far finite elements lie above the fit
+    text of the formula; `steps(sizes, symbol)` writes the same out line by line for one set of
+    sizes, ending with Kt under the given symbol. `low_by` lists (r/d, share): how far finite elements lie above the fit
     at worst for fillets about that sharp, 0 where the fit is safe; () where nothing is known.
     """
 
@@ -77,6 +79,7 @@ class Fit:
     value: Callable[[Sizes], Array]
     ranges: tuple[ValidRange, ...]
     formula: str
+    steps: Callable[[Mapping[str, float], str], tuple[Line, ...]]
     low_by: tuple[tuple[float, float], ...] = ()
 
 

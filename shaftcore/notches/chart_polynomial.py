@@ -6,10 +6,11 @@ steepest growth a sharp corner can have, so the continuation is on the safe side
 first (q small) the excess Kt - 1 is carried on as √q, so that Kt tends to 1 as the step vanishes.
 """
 
-from collections.abc import Sequence
+from collections.abc import Mapping, Sequence
 
 import numpy as np
 
+from shaftcore.calculation_lines import Line, line
 from shaftcore.notches._contract import Array, Fit, Sizes
 from shaftcore.records import ValidRange
 
@@ -17,12 +18,24 @@ Coefficients = tuple[tuple[float, float, float], ...]
 Piece = tuple[float, float, Coefficients]
 """One stretch of q: from, to, and the (a, b, c) of C1..C4."""
 
+SOURCE = "pilkey"
+FORMULA = "C1 + C2 (2h/D) + C3 (2h/D)² + C4 (2h/D)³"
+
+
+def _piece_at(pieces: Sequence[Piece], q: Array) -> Array:
+    """The (a, b, c) of C1..C4 at each q, shape (..., 4, 3)."""
+    ends = np.array([end for _, end, _ in pieces[:-1]])
+    return np.array([coefficients for _, _, coefficients in pieces])[np.searchsorted(ends, q)]
+
+
+def _coefficients(pieces: Sequence[Piece], q: Array) -> Array:
+    """C1..C4 at each q, shape (..., 4)."""
+    table, root = _piece_at(pieces, q), np.sqrt(q)
+    return table[..., 0] + table[..., 1] * root[..., None] + table[..., 2] * q[..., None]
+
 
 def _kt_inside(pieces: Sequence[Piece], x: Array, q: Array) -> Array:
-    ends = np.array([end for _, end, _ in pieces[:-1]])
-    table = np.array([coefficients for _, _, coefficients in pieces])[np.searchsorted(ends, q)]
-    root = np.sqrt(q)
-    c1, c2, c3, c4 = np.moveaxis(table[..., 0] + table[..., 1] * root[..., None] + table[..., 2] * q[..., None], -1, 0)
+    c1, c2, c3, c4 = np.moveaxis(_coefficients(pieces, q), -1, 0)
     return c1 + x * (c2 + x * (c3 + x * c4))
 
 
@@ -36,12 +49,66 @@ def chart_kt(pieces: Sequence[Piece], sizes: Sizes) -> Array:
     return np.where(q < low, 1 + (kt - 1) * np.sqrt(q / low), kt)
 
 
+def chart_steps(pieces: Sequence[Piece], sizes: Mapping[str, float], symbol: str) -> tuple[Line, ...]:
+    """The fit written out for one raiser: ratios, C1..C4, Kt, and how it is carried on out of range."""
+    x, q = 2 * sizes["h"] / sizes["D"], sizes["h"] / sizes["r"]
+    low, high = pieces[0][0], pieces[-1][1]
+    held = min(max(q, low), high)
+    lines = [
+        line("2h/D", "Relative step", "2 h/D", "2 × {h}/{D}", x, "", SOURCE, h=sizes["h"], D=sizes["D"]),
+        line("h/r", "Sharpness", "h/r", "{h}/{r}", q, "", SOURCE, h=sizes["h"], r=sizes["r"]),
+    ]
+    if held != q:
+        end = f"outside {low:g} ≤ h/r ≤ {high:g}: coefficients of the nearer end"
+        lines.append(line("q_0", "Sharpness in range", "nearer end of the range", "{q}", held, "", SOURCE, end, q=held))
+    c = _coefficients(pieces, np.array(held))
+    for number, (row, value) in enumerate(zip(_piece_at(pieces, np.array(held)), c, strict=True), start=1):
+        lines.append(_coefficient_line(f"C{number}", row, held, float(value)))
+    raw = float(_kt_inside(pieces, np.array(x), np.array(held)))
+    c1, c2, c3, c4 = (float(value) for value in c)
+    numbers = "{c1} + {c2} × {x} + {c3} × {x}^2 + {c4} × {x}^3"
+    last = symbol if held == q and raw >= 1 else f"{symbol},0"
+    lines.append(
+        line(last, "Stress concentration", FORMULA, numbers, raw, "ratio", SOURCE, x=x, c1=c1, c2=c2, c3=c3, c4=c4)
+    )
+    return (*lines, *_carried_on(symbol, max(raw, 1.0), raw, q, held))
+
+
+def _coefficient_line(symbol: str, row: Array, q: float, value: float) -> Line:
+    a, b, c = (float(number) for number in row)
+    return line(
+        symbol, "Coefficient", "a + b √(h/r) + c (h/r)", "{a} + {b} × √({q}) + {c} × {q}", value, "", SOURCE,
+        a=a, b=b, c=c, q=q,
+    )  # fmt: skip
+
+
+def _carried_on(symbol: str, kt: float, raw: float, q: float, held: float) -> tuple[Line, ...]:
+    """The lines that follow the polynomial where it is not yet Kt itself."""
+    if held == q:
+        if raw >= 1:
+            return ()
+        return (
+            line(symbol, "Stress concentration", "1, the least", "1", 1.0, "ratio", SOURCE, "fit below 1: 1 taken"),
+        )
+    if q > held:
+        formula, numbers, value = "Kt,0 √((h/r)/q_0)", "{kt} × √({q}/{held})", kt * np.sqrt(q / held)
+        flag = "sharper than the fit: carried on as √(h/r), the steepest a sharp corner can grow"
+    else:
+        formula, numbers = "1 + (Kt,0 − 1) √((h/r)/q_0)", "1 + ({kt} − 1) × √({q}/{held})"
+        value = 1 + (kt - 1) * np.sqrt(q / held)
+        flag = "blunter than the fit: the excess over 1 is carried on as √(h/r)"
+    return (
+        line(symbol, "Stress concentration", formula, numbers, value, "ratio", SOURCE, flag, kt=kt, q=q, held=held),
+    )
+
+
 def chart_fit(pieces: Sequence[Piece], low_by: tuple[tuple[float, float], ...] = ()) -> Fit:
     """The fit over all its stretches of q as one `Fit`."""
     return Fit(
-        source="pilkey",
+        source=SOURCE,
         value=lambda sizes: chart_kt(pieces, sizes),
         ranges=(ValidRange("h/r", pieces[0][0], pieces[-1][1]),),
-        formula="Kt = C1 + C2 (2h/D) + C3 (2h/D)² + C4 (2h/D)³",
+        formula=f"Kt = {FORMULA}",
+        steps=lambda sizes, symbol: chart_steps(pieces, sizes, symbol),
         low_by=low_by,
     )

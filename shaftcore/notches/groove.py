@@ -10,7 +10,7 @@ from shaftcore.declared import choice, quantity, text
 from shaftcore.notches._contract import Around, Array, Fit, Handle, LoadSort, RaiserKind, Site
 from shaftcore.notches.arc import DIN_RANGES, SIZE_SYMBOLS, arc_along, parameters
 from shaftcore.notches.chart_polynomial import Piece, chart_fit
-from shaftcore.notches.din_form import din_fit
+from shaftcore.notches.din_form import FormConstants, din_fit
 from shaftcore.surface import FINISHES
 
 BENDING: tuple[Piece, ...] = (
@@ -33,9 +33,9 @@ FITS: dict[str, dict[LoadSort, Fit]] = {
         "torsion": chart_fit(TORSION),
     },
     "din 743-2": {
-        "bending": din_fit(0.2, 2.75, 0.0, 1, DIN_RANGES),
-        "tension": din_fit(0.22, 1.37, 0.0, 1, DIN_RANGES),
-        "torsion": din_fit(0.7, 10.3, 0.0, 1, DIN_RANGES),
+        "bending": din_fit(FormConstants(0.2, 2.75), DIN_RANGES),
+        "tension": din_fit(FormConstants(0.22, 1.37), DIN_RANGES),
+        "torsion": din_fit(FormConstants(0.7, 10.3), DIN_RANGES),
     },
 }
 
@@ -46,10 +46,10 @@ class Groove:
 
     kind: ClassVar[str] = "groove"
     label: ClassVar[str] = "Round groove"
-    id: str = text("Id", longest=40, words="Name of this thing inside the file, unique on the shaft.")
+    id: str = text("Id", longest=40, shortest=1, words="Name of this thing inside the file, unique on the shaft.")
     x: float = quantity("Position", "length", 0.0, 1e8, symbol="x", default=0.0)
-    depth: float = quantity("Depth", "length", 0.0, 5000.0, symbol="h", above=True, default=1.0)
-    radius: float = quantity("Root radius", "length", 0.0, 1000.0, symbol="r", above=True, default=1.0)
+    depth: float = quantity("Depth", "length", 0.001, 5000.0, symbol="h", default=1.0)
+    radius: float = quantity("Root radius", "length", 0.001, 1000.0, symbol="r", default=1.0)
     finish: str | None = choice(
         "Finish of the groove", FINISHES, default=None, optional=True, none_words="as its segment"
     )

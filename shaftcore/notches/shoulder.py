@@ -14,7 +14,7 @@ from shaftcore.declared import choice, quantity
 from shaftcore.notches._contract import Around, Array, Fit, Handle, LoadSort, RaiserKind, Site
 from shaftcore.notches.arc import DIN_RANGES, SIZE_SYMBOLS, arc_along, arc_turn, parameters
 from shaftcore.notches.chart_polynomial import Piece, chart_fit
-from shaftcore.notches.din_form import din_fit
+from shaftcore.notches.din_form import FormConstants, din_fit
 from shaftcore.surface import FINISHES
 
 BENDING: tuple[Piece, ...] = (
@@ -36,9 +36,9 @@ FITS: dict[str, dict[LoadSort, Fit]] = {
         "torsion": chart_fit(TORSION),
     },
     "din 743-2": {
-        "bending": din_fit(0.62, 5.8, 0.2, 3, DIN_RANGES),
-        "tension": din_fit(0.62, 3.5, 0.0, 1, DIN_RANGES),
-        "torsion": din_fit(3.4, 19.0, 1.0, 2, DIN_RANGES),
+        "bending": din_fit(FormConstants(0.62, 5.8, 0.2, 3), DIN_RANGES),
+        "tension": din_fit(FormConstants(0.62, 3.5), DIN_RANGES),
+        "torsion": din_fit(FormConstants(3.4, 19.0, 1.0, 2), DIN_RANGES),
     },
 }
 
@@ -48,7 +48,7 @@ class Shoulder:
     """The fillet where the diameter steps at a segment's right-hand face, and what seats there."""
 
     label: ClassVar[str] = "Shoulder"
-    radius: float = quantity("Fillet radius", "length", 0.0, 1000.0, symbol="r", above=True)
+    radius: float = quantity("Fillet radius", "length", 0.001, 1000.0, symbol="r")
     finish: str | None = choice(
         "Finish of the fillet", FINISHES, default=None, optional=True, none_words="as the thinner segment"
     )

@@ -1,0 +1,75 @@
+"""One line of a hand calculation as data, and how its numbers are written.
+
+`numbers` uses only digits, + − × / ^ ( ) π and √( ), so a pocket calculator follows it.
+"""
+
+import math
+import re
+from dataclasses import dataclass
+from decimal import Decimal
+
+DIGITS = 6
+"""Significant digits of every printed number."""
+
+_PLUS_NEGATIVE = re.compile(r"\+ \(−([\d.]+)\)(?!\^)")
+_WHOLLY_NEGATIVE = re.compile(r"^\(−([\d.]+)\)$")
+"""Signs that read better without parentheses: "a + (−2)" as "a − 2", "(−3)" alone as "−3"."""
+
+
+@dataclass(frozen=True)
+class Line:
+    """A result with the formula as in the book and the same with numbers put in.
+
+    `numbers` and `value` are in internal units (mm, N, N·mm, MPa); `dimension` is a key of
+    units.DIMENSIONS or ""; `source` a key of sources.SOURCES; `flag` a remark to show beside it.
+    """
+
+    symbol: str
+    label: str
+    formula: str
+    numbers: str
+    value: float
+    dimension: str
+    source: str
+    flag: str = ""
+
+
+def written(value: float) -> str:
+    """A number with six significant digits, in parentheses where negative, tiny ones by a power of ten."""
+    if value < 0:
+        return f"(−{written(-value)})"
+    if 0 < value < 1e-6 or value >= 1e15:
+        digits, power = f"{value:.{DIGITS - 1}e}".split("e")
+        exponent = f"{int(power)}".replace("-", "−")
+        return f"({Decimal(digits).normalize():f} × 10^{exponent})"
+    return f"{Decimal(f'{value:.{DIGITS}g}'):f}"
+
+
+def line(
+    symbol: str,
+    label: str,
+    formula: str,
+    numbers: str,
+    value: float,
+    dimension: str,
+    source: str,
+    flag: str = "",
+    **put_in: float,
+) -> Line:
+    """A line whose `numbers` is a template with the names of `put_in` in braces."""
+    if not math.isfinite(value):
+        raise ValueError(f"{symbol} has no finite value to write down")
+    text = numbers.format(**{name: written(float(number)) for name, number in put_in.items()})
+    text = _WHOLLY_NEGATIVE.sub(r"−\1", _PLUS_NEGATIVE.sub(r"− \1", text))
+    return Line(symbol, label, formula, text, float(value), dimension, source, flag)
+
+
+def given(
+    symbol: str, label: str, value: float, dimension: str, source: str = "given", flag: str = "", *, formula: str = ""
+) -> Line:
+    """A line that only states a number: an entry of the user's, a choice, or what another place worked out."""
+    formula = formula or _STATED[source]
+    return line(symbol, label, formula, "{number}", value, dimension, source, flag, number=value)
+
+
+_STATED = {"given": "as described", "judgement": "as chosen", "statics": "by equilibrium"}
