@@ -7,6 +7,7 @@ plain one, grooves and fillets left out; a step stiffens in full from its face o
 """
 
 from dataclasses import dataclass
+from functools import cached_property
 
 import numpy as np
 from numpy.typing import NDArray
@@ -19,6 +20,9 @@ from shaftcore.shaft import AxialForce, RadialForce, Shaft, Torque
 _GAUSS_X, _GAUSS_W = (np.array(values) for values in np.polynomial.legendre.leggauss(3))
 _GAUSS_X, _GAUSS_W = (_GAUSS_X + 1) / 2, _GAUSS_W / 2
 
+ROUNDING = 1e-13
+"""Share of the sum of all loads below which a sum of them is rounding."""
+
 
 @dataclass(frozen=True, eq=False)
 class PointLoads:
@@ -27,17 +31,27 @@ class PointLoads:
     x: Array
     size: Array
 
-    def sums(self, x: Array, right: NDArray[np.bool_]) -> tuple[Array, Array]:
-        """Sum of sizes, and of sizes times lever arm, of all loads left of each x (there too if `right`)."""
+    @cached_property
+    def _running(self) -> tuple[Array, Array, Array, Array]:
+        """Places in order, running sums of sizes and of sizes times place, and the sums of all sizes' bulk."""
         order = np.argsort(self.x, kind="stable")
-        at = self.x[order]
-        size = self.size[..., order]
-        zero = np.zeros((*size.shape[:-1], 1))
-        running = np.concatenate([zero, np.cumsum(size, axis=-1)], axis=-1)
-        running_x = np.concatenate([zero, np.cumsum(size * at, axis=-1)], axis=-1)
-        count = np.where(right, np.searchsorted(at, x, "right"), np.searchsorted(at, x, "left"))
-        total = running[..., count]
-        return total, total * x - running_x[..., count]
+        x, size = self.x[order], self.size[..., order]
+        return x, _running(size), _running(size * x), ROUNDING * np.abs(size).sum(-1, keepdims=True)
+
+    def sums(self, x: Array, right: NDArray[np.bool_] | None = None) -> tuple[Array, Array]:
+        """Sum of sizes, and of sizes times lever arm, of all loads left of each x.
+
+        Loads at x itself count where `right` is true (everywhere if left out). What is but the
+        rounding of sums that cancel is none.
+        """
+        at, total, first_moment, rounding = self._running
+        count = np.searchsorted(at, x, "right")
+        if right is not None:
+            count = np.where(right, count, np.searchsorted(at, x, "left"))
+        force = total[..., count]
+        moment = force * x - first_moment[..., count]
+        span = float(max(np.abs(x).max(initial=0.0), np.abs(at).max(initial=0.0)))
+        return np.where(np.abs(force) > rounding, force, 0.0), np.where(np.abs(moment) > rounding * span, moment, 0.0)
 
 
 @dataclass(frozen=True, eq=False)
@@ -153,8 +167,7 @@ class Flexure:
         `start` has shape (..., 2). Three Gauss points an interval integrate M/EI: exact on a
         cylinder, and to rounding on the short intervals of a taper.
         """
-        flat = self.places.ravel()
-        shear, moment = loads.sums(flat, np.ones(flat.shape, dtype=bool))
+        shear, moment = loads.sums(self.places.ravel())
         shape = (*shear.shape[:-1], *self.places.shape)
         curve = moment.reshape(shape) * self.bending
         slip = shear.reshape(shape) * self.shearing

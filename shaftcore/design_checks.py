@@ -11,6 +11,7 @@ from shaftcore.notch_factors import NotchFactors
 from shaftcore.notch_sensitivity import NEUBER_RANGE
 from shaftcore.notch_sites import Seating
 from shaftcore.notches._contract import LOAD_SORTS
+from shaftcore.notches.arc import largest_arc_radius
 from shaftcore.notches.kinds import KINDS
 from shaftcore.records import Notice
 from shaftcore.results import Judged, SeatLimit
@@ -27,30 +28,30 @@ LOW_WORTH_SAYING = 0.03
 
 
 def seat_limits(shaft: Shaft, seated: Sequence[Seating]) -> tuple[SeatLimit, ...]:
-    """The largest fillet each shoulder allows: the seated bearing's corner, else the room on the thin side."""
-    limits = []
-    spans = [(seating.place, seating.site().span) for seating in seated]
+    """What caps each shoulder's fillet: room on the thin side; where a bearing seats, its corner and the step, too."""
     faces = faces_of(shaft)
-    ids = [segment.id for segment in shaft.segments]
+    neighbours: dict[int, list[tuple[float, float]]] = {}
     for seating in seated:
-        if seating.kind.key != "shoulder":
-            continue
-        index = ids.index(seating.place)
-        thin = index if seating.around.left_diameter < seating.around.right_diameter else index + 1
-        begin, end = faces[thin], faces[thin + 1]
-        others = [s for place, s in spans if place != seating.place and s[0] >= begin - 1e-9 and s[1] <= end + 1e-9]
-        room = min(
-            [end - begin, *((seating.around.x - s[1]) if thin == index else (s[0] - seating.around.x) for s in others)]
-        )
-        step = abs(seating.around.left_diameter - seating.around.right_diameter) / 2
-        by_room = room if room <= step else (room**2 / step + step) / 2
-        corner = seating.record.bearing_corner
-        by_corner = largest_fillet(corner) if corner else np.inf
-        if by_corner <= by_room:
-            limits.append(SeatLimit(seating.place, by_corner, f"bearing corner r_s,min {corner:g} mm"))
-        else:
-            limits.append(SeatLimit(seating.place, by_room, "room on the thinner segment"))
-    return tuple(limits)
+        neighbours.setdefault(seating.segment, []).append(seating.site.span)
+    return tuple(
+        _seat_limit(seating, faces, neighbours[seating.segment]) for seating in seated if seating.kind.key == "shoulder"
+    )
+
+
+def _seat_limit(seating: Seating, faces: Sequence[float], spans: Sequence[tuple[float, float]]) -> SeatLimit:
+    low, high = faces[seating.segment : seating.segment + 2]
+    face, own, step = seating.around.x, seating.site.span, seating.site.sizes["h"]
+    if face == high:
+        room = face - max([low, *(end for begin, end in spans if (begin, end) != own)])
+    else:
+        room = min([high, *(begin for begin, end in spans if (begin, end) != own)]) - face
+    caps = [(largest_arc_radius(room, step), "room on the thinner segment")]
+    corner = seating.record.bearing_corner
+    if corner:
+        caps.append((step, f"step height {step:g} mm, or nothing is left to seat on"))
+        caps.append((largest_fillet(corner), f"bearing corner r_s,min {corner:g} mm"))
+    allowed, reason = min(reversed(caps), key=lambda cap: cap[0])
+    return SeatLimit(seating.place, allowed, reason)
 
 
 def notices_of(
@@ -179,7 +180,7 @@ def _station_flags(
         if factors.held[:, i].any():
             yield Notice(
                 "Kf held",
-                "The root radius is so small that the sensitivity rule would let Kf fall again; it is held at its peak.",
+                "At so small a root radius the sensitivity rule would let Kf fall again; it is held at its peak.",
                 station.place,
                 i,
             )

@@ -1,5 +1,7 @@
 """Where things lie on a shaft, and the plain section at any place."""
 
+from bisect import bisect_right
+from collections.abc import Sequence
 from dataclasses import dataclass
 from itertools import accumulate
 
@@ -46,9 +48,9 @@ def profile_of(shaft: Shaft) -> Profile:
     segments = shaft.segments
     return Profile(
         faces=np.array(faces_of(shaft)),
-        left=np.array([s.diameter for s in segments]),
-        right=np.array([s.right_diameter for s in segments]),
-        bore=np.array([s.bore for s in segments]),
+        left=np.array([s.diameter for s in segments], dtype=float),
+        right=np.array([s.right_diameter for s in segments], dtype=float),
+        bore=np.array([s.bore for s in segments], dtype=float),
         finish=np.array([FINISH_NUMBER[s.finish] for s in segments], dtype=np.intp),
     )
 
@@ -58,12 +60,15 @@ def around_face(left: Segment, right: Segment, x: float) -> Around:
     return Around(x, left.right_diameter, right.diameter, left.bore, right.bore, left.finish, right.finish)
 
 
-def around_place(shaft: Shaft, x: float, faces: tuple[float, ...]) -> Around:
-    """The plain shaft either side of any place inside the shaft."""
-    for index, segment in enumerate(shaft.segments):
-        begin, end = faces[index], faces[index + 1]
-        if x < end or index == len(shaft.segments) - 1:
-            share = min(max((x - begin) / (end - begin), 0.0), 1.0)
-            d = segment.diameter + share * (segment.right_diameter - segment.diameter)
-            return Around(x, d, d, segment.bore, segment.bore, segment.finish, segment.finish)
-    raise IndexError("a shaft without segments has no places")
+def segment_index(faces: Sequence[float], x: float) -> int:
+    """Index of the segment at x; at a face the one to its right, the outermost beyond the ends."""
+    return min(max(bisect_right(faces, x) - 1, 0), len(faces) - 2)
+
+
+def around_place(shaft: Shaft, x: float, faces: Sequence[float]) -> Around:
+    """The plain shaft either side of any place inside the shaft, which must have a segment."""
+    index = segment_index(faces, x)
+    segment, begin, end = shaft.segments[index], faces[index], faces[index + 1]
+    share = min(max((x - begin) / (end - begin), 0.0), 1.0)
+    d = segment.diameter + share * (segment.right_diameter - segment.diameter)
+    return Around(x, d, d, segment.bore, segment.bore, segment.finish, segment.finish)

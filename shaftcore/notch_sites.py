@@ -1,9 +1,10 @@
 """From the description to the raisers as they sit on the shaft."""
 
 from dataclasses import dataclass
+from functools import cached_property
 from typing import Any
 
-from shaftcore.geometry import around_face, around_place, faces_of
+from shaftcore.geometry import around_face, around_place, faces_of, segment_index
 from shaftcore.notches._contract import Around, RaiserKind, Site
 from shaftcore.notches.kinds import KINDS
 from shaftcore.shaft import Shaft
@@ -11,14 +12,22 @@ from shaftcore.shaft import Shaft
 
 @dataclass(frozen=True)
 class Seating:
-    """A raiser record with its kind and the plain shaft around it; `place` is the id it goes by."""
+    """A raiser record with its kind and the plain shaft around it.
+
+    `place` is the id it goes by, `path` where it stands in the file, `segment` the index of the
+    segment it cuts into: at a step the thinner one.
+    """
 
     kind: RaiserKind
     record: Any
     place: str
     around: Around
+    path: str
+    segment: int
 
+    @cached_property
     def site(self) -> Site:
+        """The raiser ready for the formulas."""
         return self.kind.site(self.record, self.place, self.around)
 
 
@@ -29,10 +38,29 @@ def seatings(shaft: Shaft) -> tuple[Seating, ...]:
     and shoulders without a step are left out (`soundness` reports the former).
     """
     faces = faces_of(shaft)
-    found = []
-    for left, right, x in zip(shaft.segments, shaft.segments[1:], faces[1:], strict=False):
-        if left.shoulder is not None and left.right_diameter != right.diameter:
-            found.append(Seating(KINDS["shoulder"], left.shoulder, left.id, around_face(left, right, x)))
-    for raiser in shaft.raisers:
-        found.append(Seating(KINDS[raiser.kind], raiser, raiser.id, around_place(shaft, raiser.x, faces)))
-    return tuple(found)
+    return (*_shoulders(shaft, faces), *_on_segments(shaft, faces))
+
+
+def _shoulders(shaft: Shaft, faces: tuple[float, ...]) -> list[Seating]:
+    kind, found = KINDS["shoulder"], []
+    for index, (left, right) in enumerate(zip(shaft.segments, shaft.segments[1:], strict=False)):
+        step = right.diameter - left.right_diameter
+        if left.shoulder is not None and step:
+            around = around_face(left, right, faces[index + 1])
+            thin = index if step > 0 else index + 1
+            found.append(Seating(kind, left.shoulder, left.id, around, f"segments[{index}].shoulder", thin))
+    return found
+
+
+def _on_segments(shaft: Shaft, faces: tuple[float, ...]) -> list[Seating]:
+    return [
+        Seating(
+            KINDS[raiser.kind],
+            raiser,
+            raiser.id,
+            around_place(shaft, raiser.x, faces),
+            f"raisers[{index}]",
+            segment_index(faces, raiser.x),
+        )
+        for index, raiser in enumerate(shaft.raisers)
+    ]

@@ -14,6 +14,11 @@ def arc_along(r: float, h: float) -> float:
     return r if r <= h else math.sqrt(h * (2 * r - h))
 
 
+def largest_arc_radius(room: float, h: float) -> float:
+    """The largest radius (mm) whose arc takes no more than `room` along the shaft: `arc_along` turned round."""
+    return room if room <= h else (room**2 / h + h) / 2
+
+
 def arc_turn(r: float, h: float) -> float:
     """Angle (rad) through which the arc turns while it climbs, a right angle at most."""
     return math.acos(max(1 - h / r, 0.0))

@@ -10,12 +10,13 @@ from typing import Any
 
 from shaftcore.declared import Choice, Declaration, Part, Quantity, declared, file_key, may_be_left_out
 from shaftcore.errors import ShaftFileError
+from shaftcore.field_problems import plain_problem
 from shaftcore.records import Problem
 from shaftcore.shaft import Shaft
 from shaftcore.shaft_file.file_numbers import internal
 from shaftcore.shaft_file.json_text import LARGEST_FILE, Object, decoded, key_shown, parsed, shown
 from shaftcore.shaft_file.versions import migrated
-from shaftcore.soundness import plain_problem, problems_of
+from shaftcore.soundness import problems_of
 from shaftcore.whole_file import read_at_most
 
 MOST_PROBLEMS = 200
