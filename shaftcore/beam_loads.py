@@ -32,26 +32,30 @@ class PointLoads:
     size: Array
 
     @cached_property
-    def _running(self) -> tuple[Array, Array, Array, Array]:
-        """Places in order, running sums of sizes and of sizes times place, and the sums of all sizes' bulk."""
+    def _sums(self) -> tuple[Array, Array, Array]:
+        """Places in order, running sums of sizes and of sizes times place."""
         order = np.argsort(self.x, kind="stable")
         x, size = self.x[order], self.size[..., order]
-        return x, _running(size), _running(size * x), ROUNDING * np.abs(size).sum(-1, keepdims=True)
+        return x, _running(size), _running(size * x)
 
     def sums(self, x: Array, right: NDArray[np.bool_] | None = None) -> tuple[Array, Array]:
         """Sum of sizes, and of sizes times lever arm, of all loads left of each x.
 
-        Loads at x itself count where `right` is true (everywhere if left out). What is but the
-        rounding of sums that cancel is none.
+        Loads at x itself count where `right` is true (everywhere if left out).
         """
-        at, total, first_moment, rounding = self._running
+        at, total, first_moment = self._sums
         count = np.searchsorted(at, x, "right")
         if right is not None:
             count = np.where(right, count, np.searchsorted(at, x, "left"))
         force = total[..., count]
-        moment = force * x - first_moment[..., count]
-        span = float(max(np.abs(x).max(initial=0.0), np.abs(at).max(initial=0.0)))
-        return np.where(np.abs(force) > rounding, force, 0.0), np.where(np.abs(moment) > rounding * span, moment, 0.0)
+        return force, force * x - first_moment[..., count]
+
+    def felt(self, x: Array, right: NDArray[np.bool_]) -> tuple[Array, Array]:
+        """As `sums`, with none where the loads cancel but for rounding: beyond the last load, say."""
+        force, moment = self.sums(x, right)
+        rounding = ROUNDING * np.abs(self.size).sum(-1, keepdims=True)
+        reach = max(np.abs(x).max(), np.abs(self.x).max(initial=0.0))
+        return np.where(np.abs(force) > rounding, force, 0.0), np.where(np.abs(moment) > rounding * reach, moment, 0.0)
 
 
 @dataclass(frozen=True, eq=False)
@@ -93,39 +97,37 @@ def beam_loads(shaft: Shaft, profile: Profile, x: Array, side: Array) -> BeamLoa
     supports leave the shaft free to move (checked before by `soundness`).
     """
     right = side > 0
-    radial = _radial_loads(shaft)
-    bed = Bed(
-        np.array([s.x for s in shaft.supports]),
-        np.full(len(shaft.supports), np.inf),
-        np.zeros((2, len(shaft.supports))),
-    )
+    radial, bed = _radial_loads(shaft), _bed(shaft)
     flexure = Flexure(shaft, profile, np.unique(x))
-    reactions, start = support_reactions(flexure, radial, bed)
+    reactions, deflection, slope = borne(flexure, radial, bed)
     carried = PointLoads(np.concatenate([radial.x, bed.x]), np.concatenate([radial.size, reactions], axis=-1))
-    shear, moment = carried.sums(x, right)
-    bent = flexure.bend(carried, start)
-    at = np.searchsorted(flexure.x, x)
+    shear, moment = carried.felt(x, right)
     torque_loads, axial_loads, axial_reaction = _loads_along(shaft)
-    torque, _ = torque_loads.sums(x, right)
-    axial, _ = axial_loads.sums(x, right)
+    at = np.searchsorted(flexure.x, x)
     return BeamLoads(
         x=x,
         side=side,
         shear=shear,
         moment=moment,
-        normal=-axial,
-        torque=torque,
-        deflection=bent[0][..., at],
-        slope=bent[1][..., at],
+        normal=-axial_loads.felt(x, right)[0],
+        torque=torque_loads.felt(x, right)[0],
+        deflection=deflection[..., at],
+        slope=slope[..., at],
         reactions=reactions,
         axial_reaction=axial_reaction,
         torque_left_over=torque_loads.size.sum(axis=-1),
     )
 
 
+def _bed(shaft: Shaft) -> Bed:
+    count = len(shaft.supports)
+    return Bed(np.array([s.x for s in shaft.supports]), np.full(count, np.inf), np.zeros((2, count)))
+
+
 def _radial_loads(shaft: Shaft) -> PointLoads:
+    """All forces pulsate in phase: each amplitude points the way its mean does, however that is written."""
     forces = [load for load in shaft.loads if isinstance(load, RadialForce)]
-    size = np.array([[f.force, f.amplitude] for f in forces]).reshape(-1, 2).T
+    size = np.array([[f.force, -f.amplitude if f.force < 0 else f.amplitude] for f in forces]).reshape(-1, 2).T
     angle = np.radians([f.angle for f in forces])
     planes = np.array([np.cos(angle), np.sin(angle)])
     return PointLoads(np.array([f.x for f in forces]), size[:, None, :] * planes[None])
@@ -140,7 +142,7 @@ def _loads_along(shaft: Shaft) -> tuple[PointLoads, PointLoads, Array]:
     held = [s.x for s in shaft.supports if s.locating][:1]
     at = np.array([a.x for a in axials] + held)
     push = np.concatenate([push, reaction[:, None]], axis=1) if held else push
-    return PointLoads(np.array([t.x for t in torques]), twist), PointLoads(at, push), reaction
+    return PointLoads(np.array([t.x for t in torques], dtype=float), twist), PointLoads(at, push), reaction
 
 
 class Flexure:
@@ -161,52 +163,53 @@ class Flexure:
         stiff = shear_modulus * shear_coefficient(d, bore, material.poisson_ratio) * area(d, bore)
         self.shearing = (1 / stiff).reshape(shape)
 
-    def bend(self, loads: PointLoads, start: Array) -> tuple[Array, Array]:
-        """Deflection and slope (..., m) under `loads` for given deflection and slope at x[0].
+    def bend(self, loads: PointLoads) -> tuple[Array, Array]:
+        """Deflection and slope (..., m) under `loads` where both are 0 at x[0].
 
-        `start` has shape (..., 2). Three Gauss points an interval integrate M/EI: exact on a
-        cylinder, and to rounding on the short intervals of a taper.
+        Three Gauss points an interval integrate M/EI: exact on a cylinder, and to rounding on the
+        short intervals of a taper.
         """
         shear, moment = loads.sums(self.places.ravel())
         shape = (*shear.shape[:-1], *self.places.shape)
         curve = moment.reshape(shape) * self.bending
         slip = shear.reshape(shape) * self.shearing
-        turn = self.step * (curve @ _GAUSS_W)
-        slope = start[..., 1:] + _running(turn)
-        lift = self.step * (slope[..., :-1] - slip @ _GAUSS_W + self.step * (curve @ (_GAUSS_W * (1 - _GAUSS_X))))
-        return start[..., :1] + _running(lift), slope
+        slope = _running(self.step * (curve @ _GAUSS_W))
+        lift = slope[..., :-1] - slip @ _GAUSS_W + self.step * (curve @ (_GAUSS_W * (1 - _GAUSS_X)))
+        return _running(self.step * lift), slope
 
 
 def _running(values: Array) -> Array:
-    return np.concatenate([np.zeros((*values.shape[:-1], 1)), np.cumsum(values, axis=-1)], axis=-1)
+    sums = np.zeros((*values.shape[:-1], values.shape[-1] + 1))
+    np.cumsum(values, axis=-1, out=sums[..., 1:])
+    return sums
 
 
-def support_reactions(flexure: Flexure, loads: PointLoads, bed: Bed) -> tuple[Array, Array]:
-    """Reactions (set, plane, n) and start values (set, plane, 2) by the force method.
+def borne(flexure: Flexure, loads: PointLoads, bed: Bed) -> tuple[Array, Array, Array]:
+    """Reactions (set, plane, support), deflection and slope (set, plane, m) of the beam on its bed.
 
-    Unknown are the reactions and the rigid-body deflection and slope at the left end; the
-    equations are deflection = offset - R/k at each support, and force and moment balance.
+    By the force method: unknown are the reactions and the rigid-body deflection and slope at the
+    left end; the equations are deflection = offset - R/k at each support, and force and moment
+    balance. The bent line is the sum of what loads and reactions each do.
     """
-    n = len(bed.x)
-    begin, length = flexure.x[0], flexure.x[-1] - flexure.x[0]
+    free, free_slope = flexure.bend(loads)
+    unit, unit_slope = flexure.bend(PointLoads(bed.x, np.eye(len(bed.x))))
+    reactions, start = _balance(flexure, loads, bed, free, unit)
+    arm = flexure.x - flexure.x[0]
+    deflection = free + reactions @ unit + start[..., :1] + start[..., 1:] * arm
+    return reactions, deflection, free_slope + reactions @ unit_slope + start[..., 1:]
+
+
+def _balance(flexure: Flexure, loads: PointLoads, bed: Bed, free: Array, unit: Array) -> tuple[Array, Array]:
+    """Reactions (..., n) and rigid-body deflection and slope at x[0] (..., 2)."""
+    n, begin, length = len(bed.x), flexure.x[0], flexure.x[-1] - flexure.x[0]
     at = np.searchsorted(flexure.x, bed.x)
-    unit = PointLoads(bed.x, np.eye(n))
-    give = flexure.bend(unit, np.zeros((n, 2)))[0][:, at]
-    free = flexure.bend(loads, np.zeros((*loads.size.shape[:-1], 2)))[0][..., at]
-    scale = 1 / max(float(np.abs(give).max()), 1e-300)
+    scale = 1 / max(float(np.abs(unit[:, at]).max()), 1e-300)
     arm = (bed.x - begin) / length
     matrix = np.zeros((n + 2, n + 2))
-    matrix[:n, :n] = (give.T + np.diag(1 / bed.stiffness)) * scale
+    matrix[:n, :n] = (unit[:, at].T + np.diag(1 / bed.stiffness)) * scale
     matrix[:n, n], matrix[:n, n + 1] = 1.0, arm
     matrix[n, :n], matrix[n + 1, :n] = 1.0, arm
-    known = np.concatenate(
-        [
-            (bed.offset - free) * scale,
-            -loads.size.sum(-1)[..., None],
-            -(loads.size * (loads.x - begin) / length).sum(-1)[..., None],
-        ],
-        axis=-1,
-    )
-    solved = np.linalg.solve(matrix, np.moveaxis(known.reshape(-1, n + 2), 0, -1)).T.reshape(known.shape)
-    start = solved[..., n:] / scale
-    return solved[..., :n], start / np.array([1.0, length])
+    moment = (loads.size * (loads.x - begin) / length).sum(-1)
+    known = [(bed.offset - free[..., at]) * scale, -loads.size.sum(-1)[..., None], -moment[..., None]]
+    solved = np.linalg.solve(matrix, np.concatenate(known, axis=-1)[..., None])[..., 0]
+    return solved[..., :n], solved[..., n:] / scale / np.array([1.0, length])
