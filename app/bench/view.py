@@ -2,8 +2,9 @@
 
 from typing import Protocol
 
-from PySide6.QtCore import QEvent, QPointF, QRect, Qt
+from PySide6.QtCore import QEvent, QLineF, QPointF, QRect, Qt
 from PySide6.QtGui import (
+    QColor,
     QContextMenuEvent,
     QDragEnterEvent,
     QDragMoveEvent,
@@ -12,12 +13,18 @@ from PySide6.QtGui import (
     QMouseEvent,
     QPainter,
     QPaintEvent,
+    QPixmap,
     QResizeEvent,
     QWheelEvent,
 )
 from PySide6.QtWidgets import QWidget
 
+from app.bench.callouts import Offsets
+from app.bench.drawing import Drawing
 from app.bench.frame import Frame
+from app.bench.polygons import hairline
+from app.bench.stage import FOOT, Plan, Stage, Type
+from app.bench.words import description
 from app.document import Document, Scene
 from app.error_messages import guarded
 from app.ruler import Ruler
@@ -25,8 +32,6 @@ from app.theme import Theme
 from shaftcore.shaft import Shaft
 
 LEAST_HEIGHT = 220
-FOOT = 62.0
-"""Pixels at the bottom for station numbers, ruler marks and the legend."""
 ZOOM_PER_NOTCH = 1.2
 PAN_PER_NOTCH = 60.0
 NOTCH = 120.0
@@ -66,6 +71,11 @@ class BenchView(QWidget):
         self._fitted_size = (0.0, 0.0)
         self._opened: Shaft | None = None
         self._hovered: float | None = None
+        self._letters: Type | None = None
+        self._plan = Plan(document.shaft)
+        self._drawing: Drawing | None = None
+        self._offsets: Offsets = {}
+        self._still: QPixmap | None = None
         self.setMinimumHeight(LEAST_HEIGHT)
         self.setMouseTracking(True)
         self.setAcceptDrops(True)
@@ -100,7 +110,7 @@ class BenchView(QWidget):
 
     def set_theme(self, theme: Theme) -> None:
         self.theme = theme
-        self.update()
+        self._redraw()
 
     def fit(self) -> None:
         """Show the whole shaft."""
@@ -114,13 +124,22 @@ class BenchView(QWidget):
         _, height = self.to_shaft(pos)
         self.ruler.zoom(factor, pos.x())
         self._lift += pos.y() - self.frame.y(height)
-        self.update()
+        self._redraw()
 
     @guarded
     def _show(self, scene: Scene) -> None:
         may_fit = self.ruler.fitted and not (scene.live or self.keep_view)
         if may_fit and scene.shaft.segments and _size(scene.shaft) != self._fitted_size:
             self.fit()
+        if scene.shaft is not self._plan.shaft:
+            self._plan = Plan(scene.shaft)
+        if not scene.live:
+            self.setAccessibleDescription(description(scene))
+        self._redraw()
+
+    def _redraw(self) -> None:
+        """Lay the picture out anew at the next repaint."""
+        self._drawing = self._still = None
         self.update()
 
     @guarded
@@ -141,14 +160,52 @@ class BenchView(QWidget):
     def _ruler_moved(self) -> None:
         if self.ruler.fitted:
             self._lift = 0.0
-        self.update()
+        self._redraw()
+
+    # picture --------------------------------------------------------------------------------------
+
+    def _laid_out(self) -> Drawing:
+        """The picture of the present scene; during a gesture words keep the places they had."""
+        if self._drawing is None:
+            scene = self.document.scene
+            if self._letters is None:
+                self._letters = Type()
+            stage = Stage(scene, self._plan, self.frame, self.theme, self.devicePixelRatioF())
+            self._drawing = Drawing(stage, self._letters, self._offsets if scene.live else {})
+            if not scene.live:
+                self._offsets = self._drawing.offsets
+        return self._drawing
+
+    def _paint_picture(self, painter: QPainter) -> None:
+        painter.fillRect(self.rect(), QColor(self.theme.paper))
+        self._laid_out().paint(painter)
+
+    def _picture(self) -> QPixmap:
+        """The picture at rest, kept, so that the hairline and the hand cost no redrawing."""
+        ratio = self.devicePixelRatioF()
+        if self._still is None or self._still.devicePixelRatio() != ratio:
+            self._drawing = None
+            still = QPixmap(self.size() * ratio)
+            still.setDevicePixelRatio(ratio)
+            painter = QPainter(still)
+            self._paint_picture(painter)
+            painter.end()
+            self._still = still
+        return self._still
 
     # events ---------------------------------------------------------------------------------------
 
     @guarded
     def paintEvent(self, event: QPaintEvent) -> None:  # noqa: N802 (Qt's name)
         painter = QPainter(self)
-        painter.fillRect(event.rect(), self.theme.paper)
+        if self.document.scene.live:
+            self._paint_picture(painter)
+        else:
+            painter.drawPixmap(0, 0, self._picture())
+        if self._hovered is not None:
+            x = self.ruler.to_px(self._hovered)
+            painter.setPen(hairline(self.theme.faint))
+            painter.drawLine(QLineF(x, 0, x, self.height()))
         if self.hand is not None:
             self.hand.overlay(painter)
         painter.end()
@@ -203,7 +260,7 @@ class BenchView(QWidget):
         elif event.modifiers() & Qt.KeyboardModifier.ShiftModifier:
             self.ruler.fitted = False
             self._lift += (turned.y() or turned.x()) / NOTCH * PAN_PER_NOTCH
-            self.update()
+            self._redraw()
         else:
             self.ruler.pan((turned.y() or turned.x()) / NOTCH * PAN_PER_NOTCH)
         event.accept()

@@ -1,0 +1,103 @@
+"""The whole drawing of the shaft, from back to front, as one routine a newcomer can read."""
+
+from PySide6.QtCore import QLineF, QPointF
+from PySide6.QtGui import QPainter
+
+from app.bench.body import draw_edges, draw_metal, part_of_outline
+from app.bench.callouts import Callout, Offsets, draw_callout, place_callouts
+from app.bench.dimensions import chosen_raiser, chosen_segment, draw_segment_dimensions
+from app.bench.foot import STATION_LINE, draw_foot
+from app.bench.polygons import draw_weighted, hairline
+from app.bench.stage import Stage, Type
+from app.bench.symbols import Glyph, draw_glyph, glyphs_of
+from app.bench.utilisation_band import draw_band, draw_ticks, utilisation_columns
+from app.bench.words import next_step
+
+CHOSEN_WEIGHT = 3.0
+
+
+class Drawing:
+    """One picture, laid out once and painted as often as wanted."""
+
+    def __init__(self, stage: Stage, letters: Type, kept: Offsets | None = None) -> None:
+        self.stage, self.letters = stage, letters
+        self.glyphs: list[Glyph] = glyphs_of(stage) if stage.shaft.segments else []
+        self.callouts: list[Callout] = place_callouts(stage, letters, self.glyphs, kept or {})
+        self.columns = utilisation_columns(stage)
+
+    @property
+    def offsets(self) -> Offsets:
+        """Where the words stand, to keep them there during a gesture."""
+        return {callout.key: callout.room.topLeft() - callout.anchor for callout in self.callouts}
+
+    def paint(self, painter: QPainter) -> None:
+        stage = self.stage
+        painter.setRenderHint(QPainter.RenderHint.TextAntialiasing, True)
+        draw_foot(painter, stage, self.letters)
+        if stage.shaft.segments:
+            self._paint_shaft(painter)
+        else:
+            self._paint_empty_axis(painter)
+        self._paint_hint(painter)
+
+    def _paint_shaft(self, painter: QPainter) -> None:
+        stage = self.stage
+        self._paint_station_line(painter)
+        draw_metal(painter, stage)
+        if stage.scene.results is not None:
+            draw_band(painter, stage, self.columns)
+        draw_edges(painter, stage)
+        if stage.scene.results is not None:
+            draw_ticks(painter, stage, self.columns)
+        self._paint_chosen(painter)
+        for glyph in self.glyphs:
+            draw_glyph(painter, stage, glyph)
+        for callout in self.callouts:
+            draw_callout(painter, stage, self.letters, callout)
+
+    def _paint_station_line(self, painter: QPainter) -> None:
+        """From the chosen station down to its number."""
+        stage = self.stage
+        results, index = stage.scene.results, stage.scene.station
+        if results is None or index is None:
+            return
+        x = stage.frame.x(results.stations[index].x)
+        painter.setRenderHint(QPainter.RenderHint.Antialiasing, False)
+        painter.setPen(hairline(stage.theme.accent))
+        painter.drawLine(QLineF(x, stage.frame.axis, x, stage.foot + STATION_LINE - 10))
+
+    def _paint_chosen(self, painter: QPainter) -> None:
+        """The chosen segment's or raiser's part of the outline, in accent and weight."""
+        stage = self.stage
+        index, seating = chosen_segment(stage), chosen_raiser(stage)
+        if index is not None:
+            faces = stage.plan.profile.faces
+            lines = part_of_outline(stage, float(faces[index]), float(faces[index + 1]))
+        elif seating is not None:
+            lines = part_of_outline(stage, *seating.site.span)
+        else:
+            return
+        painter.setRenderHint(QPainter.RenderHint.Antialiasing, True)
+        draw_weighted(painter, lines, stage.theme.accent, CHOSEN_WEIGHT)
+        if index is not None:
+            draw_segment_dimensions(painter, stage, self.letters, index)
+
+    def _paint_empty_axis(self, painter: QPainter) -> None:
+        stage = self.stage
+        pen = hairline(stage.theme.faint)
+        pen.setDashPattern([14.0, 4.0, 3.0, 4.0])
+        painter.setPen(pen)
+        painter.drawLine(QLineF(40.0, stage.frame.axis, stage.frame.width - 20.0, stage.frame.axis))
+
+    def _paint_hint(self, painter: QPainter) -> None:
+        """What to do next: in the middle of an empty bench, else in the first two rows."""
+        step = next_step(self.stage.scene)
+        if step is None:
+            return
+        stage, letters = self.stage, self.letters
+        top = 6.0 if stage.shaft.segments else stage.frame.axis - 3 * letters.line
+        for i, (text, bold) in enumerate(((step[0], True), (step[1], False))):
+            painter.setFont(letters.font(bold))
+            painter.setPen(hairline(stage.theme.accent if bold else stage.theme.ink))
+            left = (stage.frame.width - letters.width(text, bold)) / 2
+            painter.drawText(QPointF(left, top + i * letters.line + letters.ascent), text)
