@@ -3,7 +3,7 @@
 shaft -> raisers and stations -> beam loads -> nominal stresses -> notch factors -> margins -> Results
 """
 
-from dataclasses import fields, is_dataclass
+from dataclasses import is_dataclass
 from typing import Any
 
 import numpy as np
@@ -47,8 +47,7 @@ def evaluate(shaft: Shaft) -> Results:
 
 def _lock(record: Any) -> None:
     """Make every array of the results read-only."""
-    for f in fields(record):
-        value = getattr(record, f.name)
+    for value in vars(record).values():
         if isinstance(value, np.ndarray):
             value.flags.writeable = False
         elif is_dataclass(value) and not isinstance(value, Shaft):

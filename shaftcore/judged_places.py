@@ -1,6 +1,6 @@
 """Where the shaft is judged: along its whole length, and each station wherever it is worst off."""
 
-from dataclasses import fields, is_dataclass
+from dataclasses import is_dataclass
 from typing import Any
 
 import numpy as np
@@ -97,12 +97,10 @@ _NOT_ALONG_X = {"reactions", "axial_reaction", "torque_left_over"}
 
 def taken(record: Any, index: Any) -> Any:
     """A record of arrays over points, with the points `index` chosen; anything else is kept."""
-    values = {}
-    for f in fields(record):
-        value = getattr(record, f.name)
-        if is_dataclass(value):
-            value = taken(value, index)
-        elif isinstance(value, np.ndarray) and f.name not in _NOT_ALONG_X:
-            value = value[..., index]
-        values[f.name] = value
+    values = dict(vars(record))
+    for name, value in values.items():
+        if isinstance(value, np.ndarray):
+            values[name] = value if name in _NOT_ALONG_X else value[..., index]
+        elif is_dataclass(value):
+            values[name] = taken(value, index)
     return type(record)(**values)

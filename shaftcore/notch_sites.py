@@ -1,7 +1,7 @@
 """From the description to the raisers as they sit on the shaft."""
 
 from dataclasses import dataclass
-from functools import cached_property
+from itertools import pairwise
 from typing import Any
 
 from shaftcore.geometry import around_face, around_place, faces_of, segment_index
@@ -14,21 +14,17 @@ from shaftcore.shaft import Shaft
 class Seating:
     """A raiser record with its kind and the plain shaft around it.
 
-    `place` is the id it goes by, `path` where it stands in the file, `segment` the index of the
-    segment it cuts into: at a step the thinner one.
+    `place` is the id it goes by, `site` what the formulas ask for, `path` where it stands in the
+    file, `segment` the index of the segment it cuts into: at a step the thinner one.
     """
 
     kind: RaiserKind
     record: Any
     place: str
     around: Around
+    site: Site
     path: str
     segment: int
-
-    @cached_property
-    def site(self) -> Site:
-        """The raiser ready for the formulas."""
-        return self.kind.site(self.record, self.place, self.around)
 
 
 def seatings(shaft: Shaft) -> tuple[Seating, ...]:
@@ -42,25 +38,24 @@ def seatings(shaft: Shaft) -> tuple[Seating, ...]:
 
 
 def _shoulders(shaft: Shaft, faces: tuple[float, ...]) -> list[Seating]:
-    kind, found = KINDS["shoulder"], []
-    for index, (left, right) in enumerate(zip(shaft.segments, shaft.segments[1:], strict=False)):
+    found = []
+    for index, (left, right) in enumerate(pairwise(shaft.segments)):
         step = right.diameter - left.right_diameter
         if left.shoulder is not None and step:
             around = around_face(left, right, faces[index + 1])
             thin = index if step > 0 else index + 1
-            found.append(Seating(kind, left.shoulder, left.id, around, f"segments[{index}].shoulder", thin))
+            found.append(_seated("shoulder", left.shoulder, left.id, around, f"segments[{index}].shoulder", thin))
     return found
 
 
 def _on_segments(shaft: Shaft, faces: tuple[float, ...]) -> list[Seating]:
-    return [
-        Seating(
-            KINDS[raiser.kind],
-            raiser,
-            raiser.id,
-            around_place(shaft, raiser.x, faces),
-            f"raisers[{index}]",
-            segment_index(faces, raiser.x),
-        )
-        for index, raiser in enumerate(shaft.raisers)
-    ]
+    found = []
+    for index, raiser in enumerate(shaft.raisers):
+        around, segment = around_place(shaft, raiser.x, faces), segment_index(faces, raiser.x)
+        found.append(_seated(raiser.kind, raiser, raiser.id, around, f"raisers[{index}]", segment))
+    return found
+
+
+def _seated(key: str, record: Any, place: str, around: Around, path: str, segment: int) -> Seating:
+    kind = KINDS[key]
+    return Seating(kind, record, place, around, kind.site(record, place, around), path, segment)

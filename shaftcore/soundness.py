@@ -8,7 +8,7 @@ from shaftcore.field_problems import field_problems
 from shaftcore.geometry import faces_of
 from shaftcore.notch_sites import Seating, seatings
 from shaftcore.records import Problem
-from shaftcore.shaft import Segment, Shaft, things
+from shaftcore.shaft import LONGEST, Segment, Shaft, things
 
 SLACK = 1e-9
 """Share of the shaft's length by which places may miss one another by rounding."""
@@ -43,7 +43,7 @@ def _examined(shaft: Shaft) -> tuple[tuple[Problem, ...], tuple[Seating, ...]]:
         return wrong, ()
     faces = faces_of(shaft)
     amiss = (*_id_problems(shaft), *_segment_problems(shaft), *_strength_problems(shaft), *_off_the_shaft(shaft, faces))
-    seated = () if amiss else seatings(shaft)
+    seated = seatings(shaft) if shaft.segments and not amiss else ()
     return (*amiss, *_raiser_problems(shaft, faces, seated), *_missing(shaft)), seated
 
 
@@ -69,6 +69,8 @@ def _segment_problems(shaft: Shaft) -> Iterator[Problem]:
             yield Problem(
                 f"segments[{index}].bore_mm", f"{segment.bore:g} mm", f"less than {thinnest:g} mm", "reduce the bore"
             )
+    if shaft.length > LONGEST:
+        yield Problem("segments", f"{shaft.length:g} mm in all", f"up to {LONGEST:.0f} mm in all", "shorten some")
     for index, (left, right) in enumerate(itertools.pairwise(shaft.segments)):
         if left.right_diameter != right.diameter and left.shoulder is None:
             yield Problem(
@@ -153,16 +155,22 @@ def _misfit(shaft: Shaft, seating: Seating, faces: tuple[float, ...], slack: flo
             f"inside its segment, x {low:.4g} to {high:.4g} mm",
             "reduce the radius, move it or lengthen the segment",
         )
-    segment = shaft.segments[seating.segment]
-    rise = abs(segment.right_diameter - segment.diameter) / 2 * (end - begin) / segment.length
-    if seating.kind.goes == "on a diameter" and rise > GROOVE_ON_TAPER * (seating.around.left_diameter - site.d) / 2:
-        return Problem(
-            seating.path,
-            f"sits on a taper whose radius changes by {rise:.3g} mm across it",
-            f"at most {GROOVE_ON_TAPER:.0%} of its depth, since Kt is known between equal diameters only",
-            "move it to a cylinder, or make the taper flatter",
-        )
+    if seating.kind.goes == "on a diameter":
+        return _on_too_steep_a_taper(shaft.segments[seating.segment], seating)
     return None
+
+
+def _on_too_steep_a_taper(segment: Segment, seating: Seating) -> Problem | None:
+    site = seating.site
+    rise = abs(segment.right_diameter - segment.diameter) / 2 * (site.span[1] - site.span[0]) / segment.length
+    if rise <= GROOVE_ON_TAPER * (seating.around.left_diameter - site.d) / 2:
+        return None
+    return Problem(
+        seating.path,
+        f"sits on a taper whose radius changes by {rise:.3g} mm across it",
+        f"at most {GROOVE_ON_TAPER:.0%} of its depth, since Kt is known between equal diameters only",
+        "move it to a cylinder, or make the taper flatter",
+    )
 
 
 def _missing(shaft: Shaft) -> Iterator[Problem]:
