@@ -1,18 +1,21 @@
 """Kt, q and Kf of every raiser under bending, tension and torsion, one call a kind."""
 
-from collections.abc import Sequence
+from collections.abc import Callable, Sequence
 from dataclasses import dataclass
 
 import numpy as np
 from numpy.typing import NDArray
 
-from shaftcore.notch_sensitivity import fatigue_factor, sensitivity
+from shaftcore.notch_sensitivity import fatigue_factor, material_length, sensitivity
 from shaftcore.notches._contract import LOAD_SORTS, Array, Fit, Site, Sizes
 from shaftcore.notches.kinds import KINDS
 from shaftcore.shaft import Judgement
 
-HOLD_RADII = np.geomspace(0.03, 1.2, 24)
-"""Root radii (mm) among which the peak of Kf is sought; steels have it well below 1 mm."""
+PEAK_SHARES = np.geomspace(0.005, 2.2, 28)
+"""Root radii, in lengths a of the sensitivity rule, among which the peak of Kf is sought. Where Kt - 1
+grows as r^-p, Peterson's Kf peaks at r = a (1 - p)/p and Neuber's, for p < 1/2, at a ((1/2 - p)/p)²."""
+
+JUST_ABOVE = 1 + 1e-9
 
 LOAD_ROWS = {sort: row for row, sort in enumerate(LOAD_SORTS)}
 
@@ -76,30 +79,55 @@ def _one_load(
 ) -> None:
     torsion = row == LOAD_ROWS["torsion"]
     kt, q, kf = kf_of(fit, sizes, rule, tensile_strength, torsion)
-    found.kt[row, index], found.q[row, index], found.radius[row, index] = kt, q, sizes["r"]
-    small = sizes["r"] < HOLD_RADII[-1]
+    radius = sizes["r"].copy()
+    found.kt[row, index], found.q[row, index] = kt, q
+
+    def kf_at(chosen: Sizes, radii: Array) -> Array:
+        grid = {name: values[:, None] for name, values in chosen.items()}
+        return kf_of(fit, {**grid, "r": radii}, rule, tensile_strength, torsion)[2]
+
+    if seams := fit.seams(sizes):
+        radii = np.column_stack(seams) * JUST_ABOVE
+        kf, radius = _highest(sizes["r"], np.column_stack([radius, radii]), np.column_stack([kf, kf_at(sizes, radii)]))
+    tried = material_length(rule, tensile_strength, torsion) * PEAK_SHARES
+    small = sizes["r"] < tried[-1]
     if small.any():
-        peak, radius = _peak_above(
-            {name: values[small] for name, values in sizes.items()}, fit, rule, tensile_strength, torsion
-        )
-        held = peak > kf[small] * 1.001
-        found.held[row, index[small]] = held
-        found.radius[row, index[small]] = np.where(held, radius, sizes["r"][small])
-        kf[small] = np.where(held, peak, kf[small])
-    found.kf[row, index] = kf
+        chosen = {name: values[small] for name, values in sizes.items()}
+        radii = np.tile(tried, (len(chosen["r"]), 1))
+        peak, at = _peak_above(chosen, radii, kf_at)
+        higher = peak > kf[small]
+        kf[small], radius[small] = np.where(higher, peak, kf[small]), np.where(higher, at, radius[small])
+    found.kf[row, index], found.radius[row, index] = kf, radius
+    found.held[row, index] = radius > sizes["r"]
 
 
-def _peak_above(sizes: Sizes, fit: Fit, rule: str, tensile_strength: float, torsion: bool) -> tuple[Array, Array]:
-    """Largest Kf, and its radius, for any root radius not below the given one, all else kept.
+def _peak_above(sizes: Sizes, radii: Array, kf_at: Callable[[Sizes, Array], Array]) -> tuple[Array, Array]:
+    """Largest Kf of the radii tried (n, m) that are not below the raiser's own, and its radius; 0 where none is.
 
-    Kt grows as r^-½ at most while q falls in proportion to √r or r, so Kf passes a peak and would
-    fall to 1 for a sharp corner; no real corner does, so below the peak Kf stays at it.
+    Kt grows as r^-½ at most while q falls in proportion to √r or r, so Kf can pass a peak and would
+    fall to 1 for a sharp corner; no real corner does, so below the peak Kf stays at it. The same
+    holds at the seams of a fit, where Kt may jump.
     """
-    grid = {name: values[:, None] for name, values in sizes.items()}
-    grid["r"] = np.maximum(grid["r"], HOLD_RADII)
-    kf = kf_of(fit, grid, rule, tensile_strength, torsion)[2]
-    top, rows = kf.argmax(axis=1), np.arange(len(kf))
-    return kf[rows, top], grid["r"][rows, top]
+    kf = kf_at(sizes, radii)
+    finer = _vertex(radii, kf, radii >= sizes["r"][:, None])[:, None]
+    return _highest(sizes["r"], np.hstack([radii, finer]), np.hstack([kf, kf_at(sizes, finer)]))
+
+
+def _highest(own: Array, radii: Array, kf: Array) -> tuple[Array, Array]:
+    """Largest Kf (n) among radii (n, m) not below `own`, the first on a tie, and its radius."""
+    allowed = np.where(radii >= own[:, None], kf, 0.0)
+    top, rows = allowed.argmax(axis=1), np.arange(len(kf))
+    return allowed[rows, top], radii[rows, top]
+
+
+def _vertex(radii: Array, kf: Array, allowed: NDArray[np.bool_]) -> Array:
+    """Radius at the top of the parabola, over log r, through the largest allowed Kf and its neighbours."""
+    top, rows = np.where(allowed, kf, 0.0).argmax(axis=1), np.arange(len(kf))
+    middle = np.clip(top, 1, kf.shape[1] - 2)
+    before, at, after = (kf[rows, middle + step] for step in (-1, 0, 1))
+    bend = np.minimum(before - 2 * at + after, -1e-12)
+    shift = np.clip((before - after) / (2 * bend), -1.0, 1.0)
+    return radii[rows, middle] * (radii[rows, 1] / radii[rows, 0]) ** shift
 
 
 def _outside(fit: Fit, measures: Sizes) -> NDArray[np.bool_]:

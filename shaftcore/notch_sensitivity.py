@@ -35,6 +35,13 @@ def peterson_q(r: ArrayLike, tensile_strength: float, torsion: bool = False) -> 
     return 1 / (1 + peterson_a(tensile_strength, torsion) / np.asarray(r, dtype=float))
 
 
+def material_length(rule: str, tensile_strength: float, torsion: bool = False) -> float:
+    """The rule's constant a in mm, the root radius at which q is about one half."""
+    if rule == "neuber":
+        return neuber_root_a(tensile_strength, torsion) ** 2
+    return peterson_a(tensile_strength, torsion)
+
+
 def sensitivity(rule: str, r: ArrayLike, tensile_strength: float, torsion: bool = False) -> Array:
     """q by the rule named in the judgement: "neuber" or "peterson"."""
     return (neuber_q if rule == "neuber" else peterson_q)(r, tensile_strength, torsion)

@@ -71,8 +71,10 @@ class Fit:
     `value(sizes)` gives Kt on the net section for arrays of one shape, continued in a sensible
     way outside `ranges`, which name the parameters of `RaiserKind.parameters`. `formula` is the
     text of the formula; `steps(sizes, symbol)` writes the same out line by line for one set of
-    sizes, ending with Kt under the given symbol. `low_by` lists (r/d, share): how far finite elements lie above the fit
-    at worst for fillets about that sharp, 0 where the fit is safe; () where nothing is known.
+    sizes, ending with Kt under the given symbol. `seams(sizes)` gives the root radii, one array
+    each, at which pieces of the fit meet and may jump. `low_by` lists (r/d, share): how far finite
+    elements lie above the fit at worst for fillets about that sharp, 0 where the fit is safe; ()
+    where nothing is known.
     """
 
     source: str
@@ -81,6 +83,7 @@ class Fit:
     formula: str
     steps: Callable[[Mapping[str, float], str], tuple[Line, ...]]
     low_by: tuple[tuple[float, float], ...] = ()
+    seams: Callable[[Sizes], tuple[Array, ...]] = field(default=lambda sizes: ())
 
 
 @dataclass(frozen=True)

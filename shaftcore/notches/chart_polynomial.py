@@ -1,9 +1,11 @@
 """Kt = C1 + C2 x + C3 x² + C4 x³ with x = 2h/D and each C = a + b √q + c q, q = h/r.
 
 The published form of the fits to the Peterson charts (W. D. Pilkey). Inside the ranges of q the
-fit is used as published. Sharper than the last range (q large) Kt is carried on as √q, the
-steepest growth a sharp corner can have, so the continuation is on the safe side; blunter than the
-first (q small) the excess Kt - 1 is carried on as √q, so that Kt tends to 1 as the step vanishes.
+fit is used as published. Sharper than the last range (q large) Kt is carried on as a power of q,
+the steepest growth a sharp corner can have, so the continuation is on the safe side: 1/2, that of
+a crack, or 1/3, that of a right-angled inner corner in shear along its edge (the Laplace equation
+in a wedge of 270 degrees). Blunter than the first range (q small) the excess Kt - 1 is carried on
+as √q, so that Kt tends to 1 as the step vanishes.
 """
 
 from collections.abc import Mapping, Sequence
@@ -17,6 +19,9 @@ from shaftcore.records import ValidRange
 Coefficients = tuple[tuple[float, float, float], ...]
 Piece = tuple[float, float, Coefficients]
 """One stretch of q: from, to, and the (a, b, c) of C1..C4."""
+
+CRACK, CORNER_IN_SHEAR = 1 / 2, 1 / 3
+"""Powers of h/r with which the stress at a sharp root can grow."""
 
 SOURCE = "pilkey"
 FORMULA = "C1 + C2 (2h/D) + C3 (2h/D)² + C4 (2h/D)³"
@@ -35,21 +40,30 @@ def _coefficients(pieces: Sequence[Piece], q: Array) -> Array:
 
 
 def _kt_inside(pieces: Sequence[Piece], x: Array, q: Array) -> Array:
-    c1, c2, c3, c4 = np.moveaxis(_coefficients(pieces, q), -1, 0)
-    return c1 + x * (c2 + x * (c3 + x * c4))
+    """The polynomial of the stretch each q lies in, with what goes with 1, √q and q gathered first.
+
+    x may have fewer axes filled than q: many radii are tried on one step.
+    """
+    root, x = np.sqrt(q), x[..., None]
+    kt: Array = np.zeros_like(q)
+    for _, end, coefficients in reversed(pieces):
+        c1, c2, c3, c4 = np.array(coefficients)
+        gathered = c1 + x * (c2 + x * (c3 + x * c4))
+        here = gathered[..., 0] + root * (gathered[..., 1] + root * gathered[..., 2])
+        kt = np.where(q <= end, here, kt)
+    return kt
 
 
-def chart_kt(pieces: Sequence[Piece], sizes: Sizes) -> Array:
+def chart_kt(pieces: Sequence[Piece], growth: float, sizes: Sizes) -> Array:
     """Kt for arrays `D` (large diameter), `h` (step height or depth), `r` (root radius), all mm > 0."""
     q = sizes["h"] / sizes["r"]
     low, high = pieces[0][0], pieces[-1][1]
-    held = np.clip(q, low, high)
+    held = np.minimum(np.maximum(q, low), high)
     kt = np.maximum(_kt_inside(pieces, 2 * sizes["h"] / sizes["D"], held), 1.0)
-    kt = np.where(q > high, kt * np.sqrt(q / high), kt)
-    return np.where(q < low, 1 + (kt - 1) * np.sqrt(q / low), kt)
+    return np.where(q < low, 1 + (kt - 1) * np.sqrt(q / held), kt * (q / held) ** growth)
 
 
-def chart_steps(pieces: Sequence[Piece], sizes: Mapping[str, float], symbol: str) -> tuple[Line, ...]:
+def chart_steps(pieces: Sequence[Piece], growth: float, sizes: Mapping[str, float], symbol: str) -> tuple[Line, ...]:
     """The fit written out for one raiser: ratios, C1..C4, Kt, and how it is carried on out of range."""
     x, q = 2 * sizes["h"] / sizes["D"], sizes["h"] / sizes["r"]
     low, high = pieces[0][0], pieces[-1][1]
@@ -71,7 +85,7 @@ def chart_steps(pieces: Sequence[Piece], sizes: Mapping[str, float], symbol: str
     lines.append(
         line(last, "Stress concentration", FORMULA, numbers, raw, "ratio", SOURCE, x=x, c1=c1, c2=c2, c3=c3, c4=c4)
     )
-    return (*lines, *_carried_on(symbol, max(raw, 1.0), raw, q, held))
+    return (*lines, *_carried_on(symbol, raw, q, held, growth))
 
 
 def _coefficient_line(symbol: str, row: Array, q: float, value: float) -> Line:
@@ -82,7 +96,7 @@ def _coefficient_line(symbol: str, row: Array, q: float, value: float) -> Line:
     )  # fmt: skip
 
 
-def _carried_on(symbol: str, kt: float, raw: float, q: float, held: float) -> tuple[Line, ...]:
+def _carried_on(symbol: str, raw: float, q: float, held: float, growth: float) -> tuple[Line, ...]:
     """The lines that follow the polynomial where it is not yet Kt itself."""
     if held == q:
         if raw >= 1:
@@ -90,9 +104,12 @@ def _carried_on(symbol: str, kt: float, raw: float, q: float, held: float) -> tu
         return (
             line(symbol, "Stress concentration", "1, the least", "1", 1.0, "ratio", SOURCE, "fit below 1: 1 taken"),
         )
+    kt = max(raw, 1.0)
     if q > held:
-        formula, numbers, value = "Kt,0 √((h/r)/q_0)", "{kt} × √({q}/{held})", kt * np.sqrt(q / held)
-        flag = "sharper than the fit: carried on as √(h/r), the steepest a sharp corner can grow"
+        power = f"1/{1 / growth:.0f}"
+        formula, numbers = f"Kt,0 ((h/r)/q_0)^({power})", f"{{kt}} × ({{q}}/{{held}})^({power})"
+        value = kt * (q / held) ** growth
+        flag = f"sharper than the fit: carried on as (h/r)^({power}), the steepest a sharp corner can grow"
     else:
         formula, numbers = "1 + (Kt,0 − 1) √((h/r)/q_0)", "1 + ({kt} − 1) × √({q}/{held})"
         value = 1 + (kt - 1) * np.sqrt(q / held)
@@ -102,13 +119,14 @@ def _carried_on(symbol: str, kt: float, raw: float, q: float, held: float) -> tu
     )
 
 
-def chart_fit(pieces: Sequence[Piece], low_by: tuple[tuple[float, float], ...] = ()) -> Fit:
-    """The fit over all its stretches of q as one `Fit`."""
+def chart_fit(pieces: Sequence[Piece], low_by: tuple[tuple[float, float], ...] = (), growth: float = CRACK) -> Fit:
+    """The fit over all its stretches of q as one `Fit`; `growth` is its power of h/r beyond the last."""
     return Fit(
         source=SOURCE,
-        value=lambda sizes: chart_kt(pieces, sizes),
+        value=lambda sizes: chart_kt(pieces, growth, sizes),
         ranges=(ValidRange("h/r", pieces[0][0], pieces[-1][1]),),
         formula=f"Kt = {FORMULA}",
-        steps=lambda sizes, symbol: chart_steps(pieces, sizes, symbol),
+        steps=lambda sizes, symbol: chart_steps(pieces, growth, sizes, symbol),
         low_by=low_by,
+        seams=lambda sizes: tuple(sizes["h"] / end for end in (pieces[0][0], *(end for _, end, _ in pieces))),
     )

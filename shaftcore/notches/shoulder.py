@@ -13,7 +13,7 @@ import numpy as np
 from shaftcore.declared import choice, quantity
 from shaftcore.notches._contract import Around, Array, Fit, Handle, LoadSort, RaiserKind, Site
 from shaftcore.notches.arc import DIN_RANGES, SIZE_SYMBOLS, arc_along, arc_turn, parameters
-from shaftcore.notches.chart_polynomial import Piece, chart_fit
+from shaftcore.notches.chart_polynomial import CORNER_IN_SHEAR, Piece, chart_fit
 from shaftcore.notches.din_form import FormConstants, din_fit
 from shaftcore.surface import FINISHES
 
@@ -33,7 +33,7 @@ FITS: dict[str, dict[LoadSort, Fit]] = {
     "chart polynomial": {
         "bending": chart_fit(BENDING),
         "tension": chart_fit(TENSION),
-        "torsion": chart_fit(TORSION),
+        "torsion": chart_fit(TORSION, growth=CORNER_IN_SHEAR),
     },
     "din 743-2": {
         "bending": din_fit(FormConstants(0.62, 5.8, 0.2, 3), DIN_RANGES),
