@@ -47,8 +47,8 @@ class PointLoads:
         count = np.searchsorted(at, x, "right")
         if right is not None:
             count = np.where(right, count, np.searchsorted(at, x, "left"))
-        force = total[..., count]
-        return force, force * x - first_moment[..., count]
+        force = total.take(count, axis=-1)
+        return force, force * x - first_moment.take(count, axis=-1)
 
     def felt(self, x: Array, right: NDArray[np.bool_]) -> tuple[Array, Array]:
         """As `sums`, with none where the loads cancel but for rounding: beyond the last load, say."""

@@ -28,14 +28,15 @@ def trace_points(shaft: Shaft, profile: Profile, stations: tuple[Station, ...]) 
     Places where something jumps, and stations, stand twice.
     """
     jumps = [*(s.x for s in shaft.supports), *(load.x for load in shaft.loads), *(s.x for s in stations)]
-    twice = np.unique(np.concatenate([jumps, profile.faces[1:-1]]))
+    twice = np.concatenate([jumps, profile.faces[1:-1]])
     even = np.linspace(profile.faces[0], profile.faces[-1], TRACE_POINTS)
-    even = even[~np.isin(even, twice)]
-    x = np.concatenate([twice, twice, even])
+    once = np.unique(np.concatenate([twice, even]))
+    copies = np.ones(len(once), dtype=np.intp)
+    copies[np.searchsorted(once, twice)] = 2
+    x = np.repeat(once, copies)
     side = np.ones(len(x))
-    side[: len(twice)] = -1.0
-    order = np.lexsort((side, x))
-    return x[order], side[order]
+    side[np.cumsum(copies)[copies == 2] - 2] = -1.0
+    return x, side
 
 
 def judge_places(
@@ -100,7 +101,8 @@ def taken(record: Any, index: Any) -> Any:
     values = dict(vars(record))
     for name, value in values.items():
         if isinstance(value, np.ndarray):
-            values[name] = value if name in _NOT_ALONG_X else value[..., index]
+            if name not in _NOT_ALONG_X:
+                values[name] = value[..., index] if isinstance(index, slice) else value.take(index, axis=-1)
         elif is_dataclass(value):
             values[name] = taken(value, index)
     return type(record)(**values)
