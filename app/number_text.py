@@ -1,0 +1,165 @@
+"""Numbers as people read and type them: units of either system, decimal comma or point."""
+
+import math
+import re
+from collections.abc import Callable
+from functools import lru_cache
+
+from shaftcore.declared import Quantity
+from shaftcore.errors import QuantityError
+from shaftcore.units import System, Unit, dimension, readable_units
+
+UNLOADED = "unloaded"
+NOTHING = "–"
+GROUP = "\u202f"
+"""A narrow space between groups of three digits: no sign that could be taken for a decimal one."""
+
+Entry = float | int | str | None
+_SPACES = re.compile(r"[\s\u00a0\u2009\u202f]+")
+_NUMBER = re.compile(r"([+-]?)([\d.,' ]*\d[.,]?)(?:[eE]([+-]?\d{1,3}))?(?![\d.,])")
+
+
+# writing --------------------------------------------------------------------------------------
+
+
+@lru_cache(maxsize=512)
+def writer(
+    dimension_name: str, system: System, decimals: int | None = None, signed: bool = False
+) -> Callable[[Entry], str]:
+    """A function that writes values (internal units) of one sort; words pass, None becomes a dash.
+
+    An empty dimension stands for counts and words. inf means that nothing loads the place.
+    """
+    if not dimension_name:
+        return lambda value: NOTHING if value is None else str(value)
+    unit = dimension(dimension_name).unit(system)
+    form = f"{'+' if signed else ''},.{unit.decimals if decimals is None else decimals}f"
+    factor, zero = unit.factor, unit.zero
+
+    def write(value: Entry) -> str:
+        if value is None or isinstance(value, str):
+            return NOTHING if value is None else value
+        if not math.isfinite(value):
+            return UNLOADED if value > 0 else NOTHING
+        text = _set(format(value / factor + zero, form))
+        # a margin that fails by a hair keeps its minus; a length of minus nought does not
+        return text if signed or text[0] != "−" or text.strip("−0.") else text[1:]
+
+    return write
+
+
+def _set(text: str) -> str:
+    """Digits of `text` grouped from five on, and a true minus sign."""
+    if "," in text:
+        whole = text.partition(".")[0].lstrip("+-")
+        text = text.replace(",", GROUP if len(whole) > 5 else "")
+    return "−" + text[1:] if text[0] == "-" else text
+
+
+def shown(value: Entry, dimension_name: str, system: System, decimals: int | None = None, signed: bool = False) -> str:
+    """A value (internal units) as it stands in a table, without its unit."""
+    return writer(dimension_name, system, decimals, signed)(value)
+
+
+def with_unit(value: Entry, dimension_name: str, system: System, decimals: int | None = None) -> str:
+    """A value with its unit, as it stands in running text."""
+    text = shown(value, dimension_name, system, decimals)
+    symbol = unit_symbol(dimension_name, system)
+    bare = not symbol or text in (UNLOADED, NOTHING) or isinstance(value, str)
+    return text if bare else f"{text}\u00a0{symbol}"
+
+
+def unit_symbol(dimension_name: str, system: System) -> str:
+    return dimension(dimension_name).unit(system).symbol if dimension_name else ""
+
+
+def editable(value: float | None, declaration: Quantity, system: System) -> str:
+    """A value as it stands in a field: every digit that matters, so that nothing is rounded away."""
+    if value is None:
+        return ""
+    return f"{declaration.dimension.unit(system).shown(value):.9g}".replace("-", "−")
+
+
+# reading --------------------------------------------------------------------------------------
+
+
+def parse(text: str, declaration: Quantity, system: System) -> float:
+    """The typed number in internal units; without a unit it is in the one of `system`.
+
+    Raises QuantityError naming the place, what was typed, the allowed range and its unit.
+    """
+    number, rest = _number_and_unit(text, declaration, system)
+    unit = _unit_of(rest, declaration, system)
+    value = unit.internal(number)
+    if not declaration.holds(value):
+        value = _at_end(value, declaration)
+    if not declaration.holds(value):
+        raise QuantityError(
+            f"{declaration.label}: {' '.join(text.split())} is out of range. Allowed: {declaration.allowed(system)}."
+        )
+    return value
+
+
+def _at_end(value: float, declaration: Quantity) -> float:
+    """The end of the range where only rounding of a conversion lies between."""
+    for end in (declaration.low, declaration.high):
+        if math.isclose(value, end, rel_tol=1e-9):
+            return end
+    return value
+
+
+def _number_and_unit(text: str, declaration: Quantity, system: System) -> tuple[float, str]:
+    plain = _SPACES.sub(" ", text.strip()).replace("−", "-").replace("’", "'")
+    found = _NUMBER.match(plain)
+    number = None if found is None else _number(*found.groups(), declaration, system)
+    if found is None or number is None:
+        what = f"“{plain[:40]}” is no number" if plain else "a number is needed"
+        raise QuantityError(f"{declaration.label}: {what}. Allowed: {declaration.allowed(system)}.")
+    return number, plain[found.end() :]
+
+
+def _number(sign: str, digits: str, power: str | None, declaration: Quantity, system: System) -> float | None:
+    """The value of a run of digits; None where its groups or decimal signs make no sense."""
+    digits = digits.strip()
+    decimal = max(digits.rfind("."), digits.rfind(","))
+    whole, fraction = (digits, "") if decimal < 0 else (digits[:decimal], digits[decimal + 1 :])
+    groups = re.split(r"[ ',.]", whole)
+    if not all(map(str.isdigit, groups[1:])) or not (groups[0].isdigit() or (groups == [""] and fraction)):
+        return None
+    if len(groups) > 1 and not _grouped(whole, groups, digits[decimal] if decimal >= 0 else ""):
+        return None
+    if fraction and not fraction.isdigit():
+        return None
+    if system == "US" and "," in digits and len(groups) == 1 and len(fraction) == 3 and groups[0].strip("0"):
+        raise QuantityError(
+            f"{declaration.label}: {digits} can be read in two ways. "
+            f"Write {groups[0]}{fraction}, or {groups[0]}.{fraction}."
+        )
+    return float(f"{sign}{''.join(groups)}.{fraction or 0}e{power or 0}")
+
+
+def _grouped(whole: str, groups: list[str], decimal: str) -> bool:
+    """True where digits stand in threes behind one sign, which is not the decimal one."""
+    signs = set(whole) - set("0123456789")
+    return len(signs) == 1 and decimal not in signs and len(groups[0]) <= 3 and all(len(g) == 3 for g in groups[1:])
+
+
+def _unit_of(text: str, declaration: Quantity, system: System) -> Unit:
+    wanted = _bare(text)
+    if not wanted:
+        return declaration.dimension.unit(system)
+    units = {_bare(unit.symbol): unit for unit in reversed(readable_units(declaration.dimension_name))}
+    if wanted in units:
+        return units[wanted]
+    known = ", ".join(dict.fromkeys(u.symbol for u in readable_units(declaration.dimension_name) if u.symbol))
+    raise QuantityError(
+        f"{declaration.label}: the unit “{text.strip()[:20]}” is not known here. "
+        + (f"Known: {known}. " if known else "It is a bare number. ")
+        + f"Allowed: {declaration.allowed(system)}."
+    )
+
+
+def _bare(symbol: str) -> str:
+    """A unit's symbol without the signs that people leave out or write in other ways."""
+    text = symbol.strip().strip(".").casefold().replace('"', "in").replace("”", "in").replace("″", "in")
+    return re.sub(r"[·*.\-\s]", "", text).replace("μ", "µ").replace("mm2", "mm²")
