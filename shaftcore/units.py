@@ -64,10 +64,27 @@ DIMENSIONS: dict[str, Dimension] = {
     "ratio": _same("", Unit("", decimals=3)),
     "share": Dimension("", Unit(""), Unit("%", 0.01, decimals=3), Unit("%", 0.01, decimals=3)),
     "deflection": _same("_mm", Unit("mm", decimals=4), Unit("in", INCH, decimals=6)),
-    "slope": _same("_rad", Unit("mrad", 1e-3, decimals=3)),
+    "slope": Dimension("_rad", Unit("rad"), Unit("mrad", 1e-3, decimals=3), Unit("mrad", 1e-3, decimals=3)),
 }
 
 
 def dimension(name: str) -> Dimension:
     """The dimension of that name; KeyError is a programming slip, never the user's."""
     return DIMENSIONS[name]
+
+
+ALSO_READ: dict[str, tuple[Unit, ...]] = {
+    "length": (Unit("cm", 10.0), Unit("m", 1e3), Unit("µm", 1e-3), Unit("ft", 12 * INCH)),
+    "force": (Unit("kN", 1e3), Unit("lb", POUND_FORCE)),
+    "torque": (Unit("kN·m", 1e6), Unit("N·mm"), Unit("lbf·ft", 12 * POUND_FORCE * INCH)),
+    "stress": (Unit("GPa", 1e3), Unit("N/mm²"), Unit("psi", POUND_FORCE / INCH**2)),
+    "angle": (Unit("deg"),),
+    "temperature": (Unit("C"), Unit("F", 5 / 9, 32)),
+}
+"""Units that may be typed besides those shown."""
+
+
+def readable_units(name: str) -> tuple[Unit, ...]:
+    """Every unit in which a number of that dimension may be typed."""
+    sort = DIMENSIONS[name]
+    return (sort.si, sort.us, sort.file, *ALSO_READ.get(name, ()))
