@@ -28,14 +28,20 @@ TORSION: tuple[Piece, ...] = (
 
 FITS: dict[str, dict[LoadSort, Fit]] = {
     "chart polynomial": {
-        "bending": chart_fit(BENDING),
-        "tension": chart_fit(TENSION),
-        "torsion": chart_fit(TORSION),
+        "bending": chart_fit(BENDING, low_by=((0.02, 0.107), (0.05, 0.081), (0.1, 0.069), (0.2, 0.001))),
+        "tension": chart_fit(TENSION, low_by=((0.02, 0.124), (0.05, 0.103), (0.1, 0.089), (0.2, 0.075))),
+        "torsion": chart_fit(TORSION, low_by=((0.02, 0.108), (0.05, 0.054), (0.1, 0.023), (0.2, 0.002))),
     },
     "din 743-2": {
-        "bending": din_fit(FormConstants(0.2, 2.75), DIN_RANGES),
-        "tension": din_fit(FormConstants(0.22, 1.37), DIN_RANGES),
-        "torsion": din_fit(FormConstants(0.7, 10.3), DIN_RANGES),
+        "bending": din_fit(
+            FormConstants(0.2, 2.75), DIN_RANGES, low_by=((0.02, 0.094), (0.05, 0.026), (0.1, 0.0), (0.2, 0.0))
+        ),
+        "tension": din_fit(
+            FormConstants(0.22, 1.37), DIN_RANGES, low_by=((0.02, 0.117), (0.05, 0.065), (0.1, 0.033), (0.2, 0.014))
+        ),
+        "torsion": din_fit(
+            FormConstants(0.7, 10.3), DIN_RANGES, low_by=((0.02, 0.126), (0.05, 0.04), (0.1, 0.0), (0.2, 0.0))
+        ),
     },
 }
 

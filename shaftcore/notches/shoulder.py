@@ -31,14 +31,28 @@ TORSION: tuple[Piece, ...] = (
 
 FITS: dict[str, dict[LoadSort, Fit]] = {
     "chart polynomial": {
-        "bending": chart_fit(BENDING),
-        "tension": chart_fit(TENSION),
-        "torsion": chart_fit(TORSION, growth=CORNER_IN_SHEAR),
+        "bending": chart_fit(BENDING, low_by=((0.01, 0.139), (0.03, 0.085), (0.05, 0.068), (0.1, 0.033), (0.2, 0.007))),
+        "tension": chart_fit(TENSION, low_by=((0.01, 0.289), (0.03, 0.242), (0.05, 0.196), (0.1, 0.137), (0.2, 0.096))),
+        "torsion": chart_fit(
+            TORSION, low_by=((0.01, 0.0), (0.03, 0.0), (0.05, 0.0), (0.1, 0.0), (0.2, 0.0)), growth=CORNER_IN_SHEAR
+        ),
     },
     "din 743-2": {
-        "bending": din_fit(FormConstants(0.62, 5.8, 0.2, 3), DIN_RANGES),
-        "tension": din_fit(FormConstants(0.62, 3.5), DIN_RANGES),
-        "torsion": din_fit(FormConstants(3.4, 19.0, 1.0, 2), DIN_RANGES),
+        "bending": din_fit(
+            FormConstants(0.62, 5.8, 0.2, 3),
+            DIN_RANGES,
+            low_by=((0.01, 0.185), (0.03, 0.12), (0.05, 0.086), (0.1, 0.047), (0.2, 0.024)),
+        ),
+        "tension": din_fit(
+            FormConstants(0.62, 3.5),
+            DIN_RANGES,
+            low_by=((0.01, 0.261), (0.03, 0.216), (0.05, 0.189), (0.1, 0.149), (0.2, 0.112)),
+        ),
+        "torsion": din_fit(
+            FormConstants(3.4, 19.0, 1.0, 2),
+            DIN_RANGES,
+            low_by=((0.01, 0.093), (0.03, 0.049), (0.05, 0.028), (0.1, 0.01), (0.2, 0.0)),
+        ),
     },
 }
 
