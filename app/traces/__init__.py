@@ -1,0 +1,1 @@
+"""The traces: stacked charts under the bench, over the same x axis."""
