@@ -4,6 +4,7 @@ Where the file's unit differs from the core's (N·m for N·mm) the decimal digit
 multiplied as binary fractions, so that what is written is read back the same to the last bit.
 """
 
+import math
 from decimal import Decimal, DecimalException
 
 from shaftcore.units import Unit
@@ -22,13 +23,13 @@ class Number(float):
 
 def internal(value: float, unit: Unit) -> float:
     """A number of the file in the core's unit; inf where it is too large for any float."""
-    if unit.factor == 1 or not value or value in (float("inf"), float("-inf")) or value != value:
+    if unit.factor == 1 or not math.isfinite(value):
         return float(value)
     text = value.text if isinstance(value, Number) else repr(value)
     try:
         return float(Decimal(text) * Decimal(repr(unit.factor)))
-    except DecimalException:
-        return float("inf")
+    except DecimalException:  # an exponent beyond all reason, and not infinite: nothing is left of it
+        return float(value)
 
 
 def in_file(value: float, unit: Unit) -> str:
