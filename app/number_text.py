@@ -74,10 +74,16 @@ def unit_symbol(dimension_name: str, system: System) -> str:
 
 
 def editable(value: float | None, declaration: Quantity, system: System) -> str:
-    """A value as it stands in a field: every digit that matters, so that nothing is rounded away."""
+    """A value as it stands in a field: as it was typed, or six digits where a conversion left a long tail.
+
+    The field holds the full value beside its text, so nothing is rounded away unless it is typed anew.
+    """
     if value is None:
         return ""
-    return f"{declaration.dimension.unit(system).shown(value):.9g}".replace("-", "−")
+    text = f"{declaration.dimension.unit(system).shown(value):.12g}"
+    if sum(map(str.isdigit, text.partition("e")[0].lstrip("-0."))) > 9:
+        text = f"{float(text):.6g}"
+    return text.replace("-", "−")
 
 
 # reading --------------------------------------------------------------------------------------
@@ -111,16 +117,16 @@ def _at_end(value: float, declaration: Quantity) -> float:
 def _number_and_unit(text: str, declaration: Quantity, system: System) -> tuple[float, str]:
     plain = _SPACES.sub(" ", text.strip()).replace("−", "-").replace("’", "'")
     found = _NUMBER.match(plain)
-    number = None if found is None else _number(*found.groups(), declaration, system)
+    number = None if found is None else _number(found, declaration, system)
     if found is None or number is None:
         what = f"“{plain[:40]}” is no number" if plain else "a number is needed"
         raise QuantityError(f"{declaration.label}: {what}. Allowed: {declaration.allowed(system)}.")
     return number, plain[found.end() :]
 
 
-def _number(sign: str, digits: str, power: str | None, declaration: Quantity, system: System) -> float | None:
+def _number(found: re.Match[str], declaration: Quantity, system: System) -> float | None:
     """The value of a run of digits; None where its groups or decimal signs make no sense."""
-    digits = digits.strip()
+    sign, digits, power = found[1], found[2].strip(), found[3]
     decimal = max(digits.rfind("."), digits.rfind(","))
     whole, fraction = (digits, "") if decimal < 0 else (digits[:decimal], digits[decimal + 1 :])
     groups = re.split(r"[ ',.]", whole)

@@ -86,7 +86,7 @@ class QuantityField(QLineEdit):
         self.setText(editable(self.value, self.declaration, self._system))
         self._say("")
         unit = unit_symbol(self.declaration.dimension_name, self._system)
-        self.setTextMargins(0, 0, self.fontMetrics().horizontalAdvance(unit) + _GAP if unit else 0, 0)
+        self.setTextMargins(0, 0, self.fontMetrics().horizontalAdvance(unit) + _GAP + 4 if unit else 0, 0)
         self._echo(self.value)
 
     def _echo(self, value: float | None) -> None:
@@ -127,8 +127,8 @@ class QuantityField(QLineEdit):
 
     @guarded
     def _leave(self) -> None:
-        """Take what was typed; what cannot be read stays with its message."""
-        if not self.isModified():
+        """Offer what was typed to the owner; the owner answers with `set_value` or `refuse`."""
+        if not self.isModified() and not self.problem:
             return
         try:
             value = self._read()
@@ -136,9 +136,10 @@ class QuantityField(QLineEdit):
             self._say(str(error))
             return
         self.setModified(False)
-        changed, self.value = value != self.value, value
-        self._write()
-        if changed:
+        if value == self.value:
+            self._write()
+        else:
+            self._say("")
             self.committed.emit(value)
 
     @guarded
@@ -154,8 +155,8 @@ class QuantityField(QLineEdit):
     def paintEvent(self, event: QPaintEvent) -> None:  # noqa: N802 (Qt's name)
         super().paintEvent(event)
         unit = unit_symbol(self.declaration.dimension_name, self._system)
-        if not unit and not self.problem:
-            return
+        if self.text().strip()[-1:].isalpha():
+            unit = ""  # one was typed
         painter = QPainter(self)
         box = QRectF(self.rect())
         if self.problem:
