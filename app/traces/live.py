@@ -47,8 +47,8 @@ class Polyline:
     def _provide(self, room: int) -> None:
         self.polygon = QPolygonF([QPointF()] * room)
         first = shiboken6.getCppPointer(self.polygon.data())[0]
-        memory: Any = shiboken6.VoidPtr(first, room * 16, True)
-        self._points = np.frombuffer(memory, dtype=np.float64).reshape(room, 2)
+        memory_at: Any = shiboken6.VoidPtr  # its stubs know one argument only
+        self._points = np.frombuffer(memory_at(first, room * 16, True), dtype=np.float64).reshape(room, 2)
 
 
 class LivePainter:

@@ -1,6 +1,7 @@
 """The picture of the traces from one scene to the next: what is kept, what is drawn anew and when."""
 
 from collections.abc import Sequence
+from typing import TYPE_CHECKING
 
 from PySide6.QtGui import QPainter, QPixmap
 
@@ -14,6 +15,9 @@ from app.traces.pace import Pace
 from app.traces.plots import Frame, Plot, View
 from app.traces.tracks import Curve, Track, curves_of
 from shaftcore.results import Results
+
+if TYPE_CHECKING:
+    from app.traces.frame import Chart
 
 Curves = list[tuple[Curve, ...]]
 
@@ -37,6 +41,7 @@ class Picture:
         self._ghost: Curves = []
         self._ghosted: QPixmap | None = None
         self._painter = LivePainter()
+        self._chart: Chart | None = None
 
     # scenes -----------------------------------------------------------------------------------------
 
@@ -97,14 +102,16 @@ class Picture:
 
     def _draw(self, view: View) -> Frame:
         # here, so that the plotting library is loaded only once there is something to plot
-        from app.traces.frame import draw_frame
+        from app.traces.frame import Chart
 
         bands = bands_of([track.key for track in self.tracks], self.weights, view.height)
         plots = [
             Plot(track, band, curves, self._scales_for(track, curves, view))
             for track, band, curves in zip(self.tracks, bands, self.curves, strict=True)
         ]
-        frame = draw_frame(plots, view)
+        if self._chart is None or not self._chart.serves(plots, view):
+            self._chart = Chart(plots, view)
+        frame = self._chart.draw(plots, view)
         self.heads = heads_of(plots, view)
         for pixmap in (frame.bare, frame.full):
             painter = QPainter(pixmap)
