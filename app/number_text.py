@@ -95,7 +95,7 @@ def parse(text: str, declaration: Quantity, system: System) -> float:
     Raises QuantityError naming the place, what was typed, the allowed range and its unit.
     """
     number, rest = _number_and_unit(text, declaration, system)
-    unit = _unit_of(rest, declaration, system)
+    unit = _unit_of(rest, text, declaration, system)
     value = unit.internal(number)
     if not declaration.holds(value):
         value = _at_end(value, declaration)
@@ -118,7 +118,8 @@ def _number_and_unit(text: str, declaration: Quantity, system: System) -> tuple[
     plain = _SPACES.sub(" ", text.strip()).replace("−", "-").replace("’", "'")
     found = _NUMBER.match(plain)
     number = None if found is None else _number(found, declaration, system)
-    if found is None or number is None:
+    strange = found is not None and not re.match(r"\s*([^\W\d_]|[\"”″°%]|$)", plain[found.end() :])
+    if found is None or number is None or strange:
         what = f"“{plain[:40]}” is no number" if plain else "a number is needed"
         raise QuantityError(f"{declaration.label}: {what}. Allowed: {declaration.allowed(system)}.")
     return number, plain[found.end() :]
@@ -150,8 +151,8 @@ def _grouped(whole: str, groups: list[str], decimal: str) -> bool:
     return len(signs) == 1 and decimal not in signs and len(groups[0]) <= 3 and all(len(g) == 3 for g in groups[1:])
 
 
-def _unit_of(text: str, declaration: Quantity, system: System) -> Unit:
-    wanted = _bare(text)
+def _unit_of(symbol: str, text: str, declaration: Quantity, system: System) -> Unit:
+    wanted = _bare(symbol)
     if not wanted:
         return declaration.dimension.unit(system)
     units = {_bare(unit.symbol): unit for unit in reversed(readable_units(declaration.dimension_name))}
@@ -159,7 +160,7 @@ def _unit_of(text: str, declaration: Quantity, system: System) -> Unit:
         return units[wanted]
     known = ", ".join(dict.fromkeys(u.symbol for u in readable_units(declaration.dimension_name) if u.symbol))
     raise QuantityError(
-        f"{declaration.label}: the unit “{text.strip()[:20]}” is not known here. "
+        f"{declaration.label}: “{text.strip()[:40]}” has a unit that is not known here. "
         + (f"Known: {known}. " if known else "It is a bare number. ")
         + f"Allowed: {declaration.allowed(system)}."
     )
