@@ -7,6 +7,9 @@ LEFT_MARGIN, RIGHT_MARGIN = 76.0, 20.0
 
 CLOSEST_MM = 2.0
 
+TALLEST_SHARE = 0.42
+"""Share of the bench's height the largest diameter may take; the rest is for loads, words and marks."""
+
 
 class Ruler(QObject):
     """Where x lies on the screen. Bench and traces stand in one column, so one width serves both."""
@@ -44,7 +47,7 @@ class Ruler(QObject):
         """Show a whole shaft of that length and largest diameter (mm), true to scale."""
         self._length, self._tallest, self.fitted = length, tallest, True
         across = max(self.width - LEFT_MARGIN - RIGHT_MARGIN, 50.0)
-        self.scale = min(across / max(length, 1e-6), 0.52 * self._height / max(tallest, 1e-6))
+        self.scale = min(across / max(length, 1e-6), TALLEST_SHARE * self._height / max(tallest, 1e-6))
         self.begin = length / 2 - across / (2 * self.scale)
         self.moved.emit()
 

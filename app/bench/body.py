@@ -171,8 +171,8 @@ def _hatch(stage: Stage) -> QBrush:
     return brush
 
 
-def part_of_outline(stage: Stage, begin: float, end: float) -> list[QPolygonF]:
-    """The outline between two x (mm), above and below, as polylines in pixels."""
+def part_of_outline(stage: Stage, begin: float, end: float, top: float) -> list[QPolygonF]:
+    """The outline between two x up to a radius (mm), above and below, as polylines in pixels."""
     outline = stage.plan.outline
-    inside = (outline[:, 0] >= begin - 1e-9) & (outline[:, 0] <= end + 1e-9)
+    inside = (outline[:, 0] >= begin - 1e-9) & (outline[:, 0] <= end + 1e-9) & (outline[:, 1] <= top + 1e-9)
     return [polygon(stage.frame.points(outline[inside], mirrored=lower)) for lower in (False, True)]

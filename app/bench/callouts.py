@@ -1,11 +1,14 @@
 """Words beside supports, loads and the chosen raiser: what each says and where it stands."""
 
+import itertools
+from collections.abc import Callable
 from dataclasses import dataclass
+from typing import Any
 
-from PySide6.QtCore import QPointF, QRectF
+from PySide6.QtCore import QPointF, QRectF, QSizeF
 from PySide6.QtGui import QPainter
 
-from app.bench.dimensions import chosen_raiser, chosen_segment, length_room, raiser_label
+from app.bench.dimensions import chosen_raiser, chosen_segment, length_room, raiser_anchor, raiser_words
 from app.bench.labels import Board, Wanted
 from app.bench.polygons import hairline
 from app.bench.stage import Stage, Type
@@ -17,6 +20,8 @@ TOP_EDGE = 4.0
 SAME_PLACE = 4.0
 """Things nearer than this (px) on one side of the shaft share their words."""
 HINT_ROOM = 40.0
+LINES_WORTH_A_PLACE = 4
+"""That a thing is named at all counts as much as this many lines."""
 
 
 @dataclass(frozen=True)
@@ -30,23 +35,52 @@ class Callout:
     chosen: bool
 
 
-Offsets = dict[str, QPointF]
-"""Where each callout stood from its anchor, so that words keep their place during a gesture."""
+Offsets = dict[str, QPointF | None]
+"""Where each callout stood from its anchor (None: nowhere), so that words keep their place during a gesture."""
 
 
-def place_callouts(stage: Stage, letters: Type, glyphs: list[Glyph], kept: Offsets) -> list[Callout]:
-    """All callouts that find room; those in `kept` stay where they stood."""
+def place_callouts(
+    stage: Stage, letters: Type, glyphs: list[Glyph], wishes: list["Wish"], kept: Offsets
+) -> list[Callout]:
+    """All callouts that find room; those in `kept` stay where they stood.
+
+    Where not all find room for all their words, other orders are tried and the best is taken.
+    """
     board = _board(stage, glyphs)
+    best: list[Callout] = []
+    most = sum(LINES_WORTH_A_PLACE + len(wish.lines) for wish in wishes)
+    for order in _ORDERS:
+        found = _placed(stage, letters, board.copy(), sorted(wishes, key=order), kept)
+        best = max(best, found, key=_lines_said)
+        if kept or _lines_said(best) == most:
+            break
+    return best
+
+
+_ORDERS: tuple[Callable[["Wish"], Any], ...] = (
+    lambda wish: not wish.chosen,
+    lambda wish: (not wish.chosen, -wish.anchor.x()),
+    lambda wish: (not wish.chosen, wish.anchor.x()),
+    lambda wish: (not wish.chosen, -len(wish.lines)),
+)
+
+
+def _lines_said(callouts: list[Callout]) -> int:
+    return sum(LINES_WORTH_A_PLACE + len(callout.lines) for callout in callouts)
+
+
+def _placed(stage: Stage, letters: Type, board: Board, wishes: list["Wish"], kept: Offsets) -> list[Callout]:
     found = []
-    for key, lines, anchor, upward, chosen in _wishes(stage, letters, glyphs):
-        for words in (lines, lines[-1:]):
-            size = max(letters.width(line, chosen) for line in words), letters.line * len(words)
-            if key in kept:
-                room: QRectF | None = QRectF(anchor + kept[key], QPointF(*size) + anchor + kept[key])
+    for wish in wishes:
+        for words, anchor in itertools.product(_shorter(wish.lines), wish.anchors(stage)):
+            size = max(letters.width(line, wish.chosen) for line in words), letters.line * len(words)
+            if wish.key in kept:
+                stood = kept[wish.key]
+                room = None if stood is None else QRectF(anchor + stood, QSizeF(*size))
             else:
-                room = board.place(Wanted(key, *size, anchor, upward), letters.line)
+                room = board.place(Wanted(wish.key, *size, anchor, anchor.y() < stage.frame.axis), letters.line)
             if room is not None:
-                found.append(Callout(key, tuple(words), room, anchor, chosen))
+                found.append(Callout(wish.key, tuple(words), room, anchor, wish.chosen))
                 break
     return found
 
@@ -69,7 +103,7 @@ def draw_callout(painter: QPainter, stage: Stage, letters: Type, callout: Callou
 
 
 def _board(stage: Stage, glyphs: list[Glyph]) -> Board:
-    """What is taken already: the shaft, the glyphs, a hint at the top, the chosen segment's length."""
+    """What is taken already: shaft, glyphs, a hint at the top, what the chosen station and segment draw."""
     frame = stage.frame
     board = Board(frame.width, TOP_EDGE, stage.foot - 2)
     faces = stage.plan.profile.faces if stage.shaft.segments else ()
@@ -82,30 +116,53 @@ def _board(stage: Stage, glyphs: list[Glyph]) -> Board:
             board.take(room)
     if stage.scene.missing:
         board.take(QRectF(0, 0, frame.width, HINT_ROOM))
+    if stage.scene.results is not None and stage.scene.station is not None:
+        x = frame.x(stage.scene.results.stations[stage.scene.station].x)
+        board.take(QRectF(x - 1, frame.axis, 2, stage.foot - frame.axis))
     index = chosen_segment(stage)
     if index is not None:
         board.take(length_room(stage, index))
     return board
 
 
-Wish = tuple[str, list[str], QPointF, bool, bool]
+def _shorter(lines: list[str]) -> list[list[str]]:
+    """The lines, then the same in less and less room."""
+    tried = [lines, [" · ".join(lines)]]
+    if len(lines) > 2:
+        tried.insert(1, [lines[0], " · ".join(lines[1:])])
+    return [*tried, lines[-1:]]
 
 
-def _wishes(stage: Stage, letters: Type, glyphs: list[Glyph]) -> list[Wish]:
-    """Callouts wanted, the most important first: what is chosen, then supports, then loads."""
+@dataclass(frozen=True)
+class Wish:
+    """Words wanted at an anchor; those of a raiser may stand on either side of the shaft."""
+
+    key: str
+    lines: list[str]
+    anchor: QPointF
+    chosen: bool
+    either_side: bool = False
+
+    def anchors(self, stage: Stage) -> list[QPointF]:
+        mirrored = QPointF(self.anchor.x(), 2 * stage.frame.axis - self.anchor.y())
+        return [self.anchor, mirrored] if self.either_side else [self.anchor]
+
+
+def wishes_of(stage: Stage, glyphs: list[Glyph]) -> list[Wish]:
+    """Callouts wanted: the chosen raiser's, then supports', then loads'."""
     wishes: list[Wish] = []
     seating = chosen_raiser(stage)
     if seating is not None:
-        wanted, lines = raiser_label(stage, letters, seating)
-        wishes.append((wanted.key, lines, wanted.anchor, True, True))
+        wishes.append(
+            Wish(seating.place, raiser_words(stage, seating), raiser_anchor(stage, seating), True, either_side=True)
+        )
     things = {thing.id: thing for thing in (*stage.shaft.supports, *stage.shaft.loads)}
     for group in _groups([glyph for glyph in glyphs if -60 < glyph.anchor.x() < stage.frame.width + 60]):
         outer = min if group[0].upward else max
         anchor = outer((glyph.anchor for glyph in group), key=lambda point: point.y())
         chosen = any(stage.chosen(glyph.thing) for glyph in group)
-        members = [things[glyph.thing] for glyph in group]
-        wishes.append(("+".join(g.thing for g in group), _lines(stage, members), anchor, group[0].upward, chosen))
-    wishes.sort(key=lambda wish: not wish[4])
+        lines = _lines(stage, [things[glyph.thing] for glyph in group])
+        wishes.append(Wish("+".join(glyph.thing for glyph in group), lines, anchor, chosen))
     return wishes
 
 

@@ -5,7 +5,6 @@ from typing import Any
 from PySide6.QtCore import QLineF, QPointF, QRectF
 from PySide6.QtGui import QColor, QPainter, QPolygonF
 
-from app.bench.labels import Wanted
 from app.bench.polygons import hairline
 from app.bench.stage import Stage, Type
 from app.bench.words import quantity
@@ -41,9 +40,8 @@ def raiser_words(stage: Stage, seating: Seating) -> list[str]:
 
 
 def raiser_anchor(stage: Stage, seating: Seating) -> QPointF:
-    """Where the words of a raiser point: its first handle, on the upper outline."""
-    handle = seating.kind.handles(seating.record, seating.around)[0]
-    return stage.frame.to_screen(handle.x, handle.y)
+    """Where the words of a raiser point: the upper edge of the shaft above it."""
+    return stage.frame.to_screen(seating.around.x, stage.plan.radius_at(seating.around.x))
 
 
 def length_room(stage: Stage, index: int) -> QRectF:
@@ -110,10 +108,3 @@ def _draw_text(painter: QPainter, stage: Stage, letters: Type, at: QPointF, text
     painter.fillRect(room, QColor(ground))
     painter.setFont(letters.bold)
     painter.drawText(at, text)
-
-
-def raiser_label(stage: Stage, letters: Type, seating: Seating) -> tuple[Wanted, list[str]]:
-    lines = raiser_words(stage, seating)
-    width = max(letters.width(line, True) for line in lines)
-    anchor = raiser_anchor(stage, seating)
-    return Wanted(seating.place, width, letters.line * len(lines), anchor, True), lines

@@ -1,10 +1,11 @@
 """The whole drawing of the shaft, from back to front, as one routine a newcomer can read."""
 
+import numpy as np
 from PySide6.QtCore import QLineF, QPointF
 from PySide6.QtGui import QPainter
 
 from app.bench.body import draw_edges, draw_metal, part_of_outline
-from app.bench.callouts import Callout, Offsets, draw_callout, place_callouts
+from app.bench.callouts import Callout, Offsets, draw_callout, place_callouts, wishes_of
 from app.bench.dimensions import chosen_raiser, chosen_segment, draw_segment_dimensions
 from app.bench.foot import STATION_LINE, draw_foot
 from app.bench.polygons import draw_weighted, hairline
@@ -22,13 +23,16 @@ class Drawing:
     def __init__(self, stage: Stage, letters: Type, kept: Offsets | None = None) -> None:
         self.stage, self.letters = stage, letters
         self.glyphs: list[Glyph] = glyphs_of(stage) if stage.shaft.segments else []
-        self.callouts: list[Callout] = place_callouts(stage, letters, self.glyphs, kept or {})
+        wishes = wishes_of(stage, self.glyphs)
+        self.wanted = [wish.key for wish in wishes]
+        self.callouts: list[Callout] = place_callouts(stage, letters, self.glyphs, wishes, kept or {})
         self.columns = utilisation_columns(stage)
 
     @property
     def offsets(self) -> Offsets:
         """Where the words stand, to keep them there during a gesture."""
-        return {callout.key: callout.room.topLeft() - callout.anchor for callout in self.callouts}
+        stood = {callout.key: callout.room.topLeft() - callout.anchor for callout in self.callouts}
+        return {key: stood.get(key) for key in self.wanted}
 
     def paint(self, painter: QPainter) -> None:
         stage = self.stage
@@ -54,6 +58,9 @@ class Drawing:
             draw_glyph(painter, stage, glyph)
         for callout in self.callouts:
             draw_callout(painter, stage, self.letters, callout)
+        index = chosen_segment(stage)
+        if index is not None:
+            draw_segment_dimensions(painter, stage, self.letters, index)
 
     def _paint_station_line(self, painter: QPainter) -> None:
         """From the chosen station down to its number."""
@@ -71,16 +78,15 @@ class Drawing:
         stage = self.stage
         index, seating = chosen_segment(stage), chosen_raiser(stage)
         if index is not None:
-            faces = stage.plan.profile.faces
-            lines = part_of_outline(stage, float(faces[index]), float(faces[index + 1]))
+            faces, segment = stage.plan.profile.faces, stage.shaft.segments[index]
+            top = max(segment.diameter, segment.right_diameter) / 2
+            lines = part_of_outline(stage, float(faces[index]), float(faces[index + 1]), top)
         elif seating is not None:
-            lines = part_of_outline(stage, *seating.site.span)
+            lines = part_of_outline(stage, *seating.site.span, np.inf)
         else:
             return
         painter.setRenderHint(QPainter.RenderHint.Antialiasing, True)
         draw_weighted(painter, lines, stage.theme.accent, CHOSEN_WEIGHT)
-        if index is not None:
-            draw_segment_dimensions(painter, stage, self.letters, index)
 
     def _paint_empty_axis(self, painter: QPainter) -> None:
         stage = self.stage

@@ -88,17 +88,27 @@ def shown_stations(stage: Stage, letters: Type) -> list[int]:
 
 
 def _draw_stations(painter: QPainter, stage: Stage, letters: Type) -> None:
-    results, frame, y = stage.scene.results, stage.frame, stage.foot + STATION_LINE
-    assert results is not None
+    results, y = stage.scene.results, stage.foot + STATION_LINE
+    if results is None:
+        return
+    places = {i: stage.frame.x(results.stations[i].x) for i in shown_stations(stage, letters)}
     painter.setRenderHint(QPainter.RenderHint.Antialiasing, False)
-    for i in shown_stations(stage, letters):
-        station, chosen = results.stations[i], i == stage.scene.station
-        text, bold = str(station.number), chosen or i == results.governing
-        painter.setFont(letters.font(bold))
-        painter.setPen(hairline(stage.theme.accent if chosen else stage.theme.ink if bold else stage.theme.faint))
-        x = frame.x(station.x)
-        painter.drawText(QPointF(x - letters.width(text, bold) / 2, y), text)
-        painter.drawLine(QLineF(x, y + 3, x, y + 7))
+    painter.setPen(hairline(stage.theme.faint))
+    painter.setFont(letters.plain)
+    painter.drawLines([QLineF(x, y + 3, x, y + 7) for x in places.values()])
+    stressed = {results.governing: stage.theme.ink}
+    if stage.scene.station is not None:
+        stressed[stage.scene.station] = stage.theme.accent
+    for i, x in places.items():
+        if i not in stressed:
+            text = str(results.stations[i].number)
+            painter.drawText(QPointF(x - letters.width(text) / 2, y), text)
+    painter.setFont(letters.bold)
+    for i, colour in stressed.items():
+        if i in places:
+            text = str(results.stations[i].number)
+            painter.setPen(hairline(colour))
+            painter.drawText(QPointF(places[i] - letters.width(text, True) / 2, y), text)
     _draw_head(painter, stage, letters, "station", STATION_LINE)
 
 

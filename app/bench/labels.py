@@ -1,5 +1,6 @@
 """Placing labels so that none lies on another or on the drawing: beside their thing, else in rows beyond it."""
 
+import math
 from dataclasses import dataclass
 
 import numpy as np
@@ -9,9 +10,11 @@ from PySide6.QtCore import QPointF, QRectF
 from shaftcore.notches._contract import Array
 
 GAP = 4.0
+EDGE = 6.0
 BESIDE = 12.0
-SHIFTS = (0.0, 0.3, -0.3, 0.5, -0.5)
-"""How far a label may stand off the middle of its anchor, as a share of its width."""
+SHARES = np.array([0.5, 0.2, 0.8, 0.0, 1.0])
+"""Where along its width a label may stand over its anchor."""
+REACH = np.array([-GAP, 0.0, GAP, 0.0])
 
 
 @dataclass(frozen=True)
@@ -30,18 +33,27 @@ class Board:
 
     def __init__(self, width: float, top: float, bottom: float) -> None:
         self.width, self.top, self.bottom = width, top, bottom
-        self._taken: list[tuple[float, float, float, float]] = []
+        self._rooms = np.empty((256, 4))
+        self._count = 0
 
     def take(self, room: QRectF) -> None:
-        self._taken.append((room.left(), room.top(), room.right(), room.bottom()))
+        if self._count == len(self._rooms):
+            self._rooms = np.vstack([self._rooms, np.empty_like(self._rooms)])
+        self._rooms[self._count] = room.left(), room.top(), room.right(), room.bottom()
+        self._count += 1
+
+    def copy(self) -> "Board":
+        twin = Board(self.width, self.top, self.bottom)
+        twin._rooms, twin._count = self._rooms.copy(), self._count
+        return twin
 
     def place(self, wanted: Wanted, row: float) -> QRectF | None:
         """The nearest free place, taken at once with its leader; None where there is none."""
         choices = self._choices(wanted, row)
-        free = np.flatnonzero(self._free(choices, wanted.anchor))
+        free = np.flatnonzero(self._free(choices, wanted.anchor.x(), wanted.anchor.y()))
         if not len(free):
             return None
-        left, top, right, bottom = choices[free[0]]
+        left, top, right, bottom = choices[free[0]].tolist()
         found = QRectF(left, top, right - left, bottom - top)
         self.take(found)
         for leader in leader_rooms(found, wanted.anchor):
@@ -51,29 +63,26 @@ class Board:
     def _choices(self, wanted: Wanted, row: float) -> Array:
         """Rooms (n, 4) as left, top, right, bottom, nearest first: both sides, then row after row."""
         x, y, sense = wanted.anchor.x(), wanted.anchor.y(), -1.0 if wanted.upward else 1.0
-        room = self.bottom - self.top
-        offsets = np.arange(0.0, max(room, row), row / 2)
-        above = y + sense * (GAP + offsets) + (-wanted.height if wanted.upward else 0.0)
-        lefts = x - wanted.width * (0.5 - np.array(SHIFTS))
-        lefts = np.clip(lefts, 2.0, max(self.width - wanted.width - 2.0, 2.0))
-        rows = np.array([(left, top) for top in above for left in lefts])
-        beside_top = y if wanted.upward else y - wanted.height
-        sides = np.array([(x + BESIDE, beside_top), (x - BESIDE - wanted.width, beside_top)])
-        corners = np.vstack([sides, rows])
-        return np.column_stack([corners, corners + np.array([wanted.width, wanted.height])])
+        outwards = sense * np.arange(0.0, max(self.bottom - self.top, row), row / 2)
+        above = y + outwards + sense * GAP - (wanted.height if wanted.upward else 0.0)
+        beside = y + outwards[: math.ceil(2 * wanted.height / row) + 4] - (0.0 if wanted.upward else wanted.height)
+        lefts = np.clip(x - wanted.width * SHARES, EDGE, max(self.width - wanted.width - EDGE, EDGE))
+        sides = np.array([x + BESIDE, x - BESIDE - wanted.width])
+        left = np.concatenate([np.tile(sides, len(beside)), np.tile(lefts, len(above))])
+        top = np.concatenate([np.repeat(beside, len(sides)), np.repeat(above, len(lefts))])
+        return np.column_stack([left, top, left + wanted.width, top + wanted.height])
 
-    def _free(self, rooms: Array, anchor: QPointF) -> NDArray[np.bool_]:
+    def _free(self, rooms: Array, x: float, y: float) -> NDArray[np.bool_]:
         """Whether each room and its leader meet nothing and lie on the board."""
         left, top, right, bottom = rooms.T
-        inside = (left >= 2.0) & (right <= self.width - 2.0) & (top >= self.top) & (bottom <= self.bottom)
-        taken = np.array(self._taken).reshape(-1, 4)
-        reach = np.column_stack([left - GAP, top, right + GAP, bottom])
-        stem_x = np.clip(anchor.x(), left, right)
-        beyond = (bottom < anchor.y()) | (top > anchor.y())
-        begin = np.where(bottom < anchor.y(), bottom, anchor.y())
-        end = np.where(top > anchor.y(), top, anchor.y())
-        stem = np.column_stack([stem_x - 1, begin, stem_x + 1, end])
-        return inside & ~_meets(reach, taken) & ~(beyond & _meets(stem, taken))
+        inside = (left >= EDGE) & (right <= self.width - EDGE) & (top >= self.top) & (bottom <= self.bottom)
+        taken = self._rooms[: self._count]
+        near = (taken[:, 0] < right.max() + GAP) & (taken[:, 2] > left.min() - GAP)
+        taken = taken[near]
+        stem = np.clip(x, left, right)
+        leader = np.column_stack([stem - 1, np.minimum(bottom, y), stem + 1, np.maximum(top, y)])
+        beyond = (bottom < y) | (top > y)
+        return inside & ~_meets(rooms + REACH, taken) & ~(beyond & _meets(leader, taken))
 
 
 def leader_rooms(label: QRectF, anchor: QPointF) -> list[QRectF]:

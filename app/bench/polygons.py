@@ -1,7 +1,7 @@
 """Arrays of points to Qt's polygons, and lines of a weight drawn the quick way."""
 
 import numpy as np
-from PySide6.QtCore import QPointF
+from PySide6.QtCore import QPointF, Qt
 from PySide6.QtGui import QColor, QPainter, QPen, QPolygonF
 from shiboken6 import VoidPtr
 
@@ -26,17 +26,28 @@ def hairline(colour: str | QColor) -> QPen:
 
 
 def draw_weighted(painter: QPainter, lines: list[QPolygonF], colour: str | QColor, weight: float) -> None:
-    """Smooth lines about `weight` pixels wide, as hairlines side by side.
+    """Long smooth lines about `weight` pixels wide, as hairlines side by side.
 
-    The hairlines lie a device pixel apart, so a weight holds at every scale factor.
+    The hairlines lie a device pixel apart down one diagonal, so a weight holds at every scale
+    factor; one more beside them keeps strokes along that diagonal from being thin.
     """
     painter.setPen(hairline(colour))
     pixel = 1.0 / painter.device().devicePixelRatio()
     steps = max(round(weight / pixel), 1)
-    offsets = [(i - (steps - 1) / 2) * pixel for i in range(steps)]
-    for way in (QPointF(1, 0), QPointF(0, 1)) if steps > 1 else (QPointF(1, 0),):
-        for offset in offsets:
-            painter.translate(way * offset)
-            for line in lines:
-                painter.drawPolyline(line)
-            painter.translate(way * -offset)
+    reach = (steps - 1) / 2 * pixel
+    offsets = [QPointF(at, at) for at in np.linspace(-reach, reach, steps)]
+    if steps > 1:
+        offsets.append(QPointF(reach, -reach))
+    for offset in offsets:
+        painter.translate(offset)
+        for line in lines:
+            painter.drawPolyline(line)
+        painter.translate(-offset)
+
+
+def stroke(colour: str | QColor, weight: float) -> QPen:
+    """A pen of a true width, for short lines."""
+    pen = QPen(QColor(colour), weight)
+    pen.setCapStyle(Qt.PenCapStyle.FlatCap)
+    pen.setJoinStyle(Qt.PenJoinStyle.MiterJoin)
+    return pen

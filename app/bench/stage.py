@@ -1,15 +1,15 @@
 """What every part of the drawing is given: the scene, where it lies on the screen, colours and type."""
 
+from bisect import bisect_left, bisect_right
 from dataclasses import dataclass
 from functools import cached_property
 
-import numpy as np
 from PySide6.QtGui import QFont, QFontMetricsF
 
 from app.bench.frame import Frame
 from app.document import Scene
 from app.theme import Theme, text_font
-from shaftcore.geometry import Profile, profile_of
+from shaftcore.geometry import Profile, faces_of, profile_of
 from shaftcore.notch_sites import Seating, seatings
 from shaftcore.notches._contract import Array
 from shaftcore.outline import upper_outline
@@ -28,6 +28,10 @@ class Plan:
         self.outline: Array = upper_outline(shaft)
 
     @cached_property
+    def faces(self) -> tuple[float, ...]:
+        return faces_of(self.shaft)
+
+    @cached_property
     def profile(self) -> Profile:
         return profile_of(self.shaft)
 
@@ -39,8 +43,14 @@ class Plan:
         """The larger plain radius (mm) of both sides of x."""
         if not self.shaft.segments:
             return 0.0
-        place, sides = np.array([x, x]), np.array([-1.0, 1.0])
-        return float(self.profile.diameter_at(place, self.profile.segment_at(place, sides)).max()) / 2
+        last = len(self.shaft.segments) - 1
+        sides = bisect_left(self.faces, x) - 1, bisect_right(self.faces, x) - 1
+        return max(self._radius_within(min(max(i, 0), last), x) for i in sides)
+
+    def _radius_within(self, index: int, x: float) -> float:
+        segment = self.shaft.segments[index]
+        share = min(max((x - self.faces[index]) / segment.length, 0.0), 1.0)
+        return (segment.diameter + share * (segment.right_diameter - segment.diameter)) / 2
 
 
 @dataclass(frozen=True, eq=False)

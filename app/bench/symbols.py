@@ -11,17 +11,17 @@ from typing import Any
 
 import numpy as np
 from PySide6.QtCore import QLineF, QPointF, QRectF
-from PySide6.QtGui import QBrush, QPainter, QPolygonF
+from PySide6.QtGui import QColor, QPainter, QPolygonF
 
-from app.bench.polygons import draw_weighted, hairline, polygon
+from app.bench.polygons import hairline, polygon, stroke
 from app.bench.stage import Stage
-from shaftcore.shaft import AxialForce, Load, RadialForce, Support, Torque
+from shaftcore.shaft import AxialForce, RadialForce, Support, Torque
 
 HEAD_LENGTH, HEAD_HALF = 9.0, 3.6
 SHORTEST, LONGEST = 17.0, 29.0
 AXIAL_LENGTH = 36.0
-RING_WIDTH, RING_HEIGHT = 22.0, 17.0
-ARC_BULGE, ARC_BEYOND = 7.0, 9.0
+RING_WIDTH, RING_HEIGHT, LEAST_RING, HEAD_ROOM = 22.0, 17.0, 13.0, 8.0
+ARC_BULGE, ARC_BEYOND, ARC_SHIFT = 7.0, 9.0, 4.0
 SPOT = 5.0
 IN_PLANE = 0.05
 """Cosine below which a force counts as pointing straight at or away from the viewer."""
@@ -31,7 +31,8 @@ IN_PLANE = 0.05
 class Glyph:
     """One symbol: polylines, filled heads, circles (centre, radius, filled), its rooms and its anchor.
 
-    `upward` says on which side of the shaft the label belongs; `anchor` is where its leader ends.
+    `upward` says on which side of the shaft the label belongs; `anchor` is where its leader ends,
+    and `stem` carries the leader on to a glyph that lies within the outline.
     """
 
     thing: str
@@ -41,6 +42,7 @@ class Glyph:
     rooms: list[QRectF]
     anchor: QPointF
     upward: bool
+    stem: QLineF | None = None
 
 
 def glyphs_of(stage: Stage) -> list[Glyph]:
@@ -54,12 +56,18 @@ def glyphs_of(stage: Stage) -> list[Glyph]:
 def draw_glyph(painter: QPainter, stage: Stage, glyph: Glyph) -> None:
     chosen = stage.chosen(glyph.thing)
     colour = stage.theme.accent if chosen else stage.theme.ink
-    draw_weighted(painter, glyph.lines, colour, 2.0 if chosen else 1.0)
+    if glyph.stem is not None:
+        painter.setPen(hairline(stage.theme.faint))
+        painter.drawLine(glyph.stem)
     painter.setPen(hairline(colour))
     for centre, radius, filled in glyph.circles:
-        painter.setBrush(QBrush(colour if filled else stage.theme.paper))
+        painter.setBrush(QColor(colour if filled else stage.theme.paper))
         painter.drawEllipse(centre, radius, radius)
-    painter.setBrush(QBrush(colour))
+    painter.setPen(stroke(colour, 2.0 if chosen else 1.1))
+    for line in glyph.lines:
+        painter.drawPolyline(line)
+    painter.setPen(hairline(colour))
+    painter.setBrush(QColor(colour))
     for head in glyph.heads:
         painter.drawPolygon(head)
 
@@ -76,8 +84,8 @@ def _radial(stage: Stage, load: RadialForce, largest: float) -> Glyph:
     if abs(up) < IN_PLANE:
         lines, heads, circles = _spot(QPointF(x, frame.axis), towards)
         top = QPointF(x, min(frame.y(radius), frame.axis - SPOT))
-        stem = QPolygonF([top, QPointF(x, frame.axis - SPOT)])
-        return Glyph(load.id, [*lines, stem], heads, circles, [_around(x, frame.axis, SPOT)], top, True)
+        stem = QLineF(top, QPointF(x, frame.axis - SPOT))
+        return Glyph(load.id, lines, heads, circles, [_around(x, frame.axis, SPOT)], top, True, stem)
     downwards = up < 0
     sense = -1.0 if downwards else 1.0
     length = SHORTEST + (LONGEST - SHORTEST) * abs(load.force) / largest if largest else SHORTEST
@@ -109,7 +117,7 @@ def _torque(stage: Stage, load: Torque, largest: float) -> Glyph:
     reach = stage.plan.radius_at(load.x) * frame.scale + ARC_BEYOND
     x = frame.x(load.x)
     turn = np.linspace(-math.pi / 2, math.pi / 2, 33)
-    arc = np.column_stack([x + ARC_BULGE * np.cos(turn), frame.axis + reach * np.sin(turn)])
+    arc = np.column_stack([x + ARC_SHIFT + ARC_BULGE * np.cos(turn), frame.axis + reach * np.sin(turn)])
     size = load.torque or load.amplitude
     tip, sense = (arc[-1], 1.0) if size >= 0 else (arc[0], -1.0)
     head = _head(QPointF(tip[0] - 4.0, tip[1]), QPointF(-1.0, 0.45 * sense))
@@ -128,8 +136,8 @@ def _axial(stage: Stage, load: AxialForce, largest: float) -> Glyph:
     lines, heads = _arrow(tail, QPointF(x, frame.axis))
     room = QRectF(min(tail.x(), x), frame.axis - 5, AXIAL_LENGTH, 10)
     top = QPointF(x, frame.y(stage.plan.radius_at(load.x)))
-    stem = QPolygonF([top, QPointF(x, frame.axis)])
-    return Glyph(load.id, [*lines, stem], heads, [], [room], top, True)
+    stem = QLineF(top, QPointF(x, frame.axis))
+    return Glyph(load.id, lines, heads, [], [room], top, True, stem)
 
 
 _MAKERS: dict[type, Callable[[Stage, Any, float], Glyph]] = {
@@ -162,29 +170,39 @@ def _bearing(stage: Stage, support: Support) -> Glyph:
     """A ring above and below with the free-standing cross; the housing holds or lets slide.
 
     A locating bearing stands in a housing with a lip at either side; a floating one has none and
-    may move to both sides, as its little heads say.
+    may move to both sides, as its little heads say. Rings are not to scale: as wide as is usual
+    here, narrower on a short seat.
     """
     frame, x = stage.frame, stage.frame.x(support.x)
     reach = stage.plan.radius_at(support.x) * frame.scale
+    free = seat_room(stage, support.x) * frame.scale
+    half = min(RING_WIDTH / 2, max(free - 4.0, LEAST_RING / 2))
     lines: list[QPolygonF] = []
-    heads: list[QPolygonF] = []
     for side in (-1.0, 1.0):
-        lines += _ring(x, frame.axis + side * reach, side)
-        lines += _housing(x, frame.axis + side * (reach + RING_HEIGHT), side, support.locating)
-    if not support.locating:
+        lines += _ring(x, frame.axis + side * reach, side, half)
+        lines += _housing(x, frame.axis + side * (reach + RING_HEIGHT), side, half, support.locating)
+    heads = []
+    if not support.locating and free > half + HEAD_ROOM:
         y = frame.axis + reach + RING_HEIGHT / 2
-        heads = [_small_head(QPointF(x + way * (RING_WIDTH / 2 + 7), y), way) for way in (-1.0, 1.0)]
-    height = RING_HEIGHT + 7
-    half = RING_WIDTH / 2 + 8
+        heads = [_small_head(QPointF(x + way * (half + HEAD_ROOM - 1), y), way) for way in (-1.0, 1.0)]
+    height, wide = RING_HEIGHT + 7, half + (HEAD_ROOM if heads else 5.0)
     rooms = [
-        QRectF(x - half, frame.axis - reach - height, 2 * half, height),
-        QRectF(x - half, frame.axis + reach, 2 * half, height),
+        QRectF(x - wide, frame.axis - reach - height, 2 * wide, height),
+        QRectF(x - wide, frame.axis + reach, 2 * wide, height),
     ]
     return Glyph(support.id, lines, heads, [], rooms, QPointF(x, frame.axis + reach + height), False)
 
 
-def _ring(x: float, y: float, side: float) -> list[QPolygonF]:
-    w, h, arm = RING_WIDTH / 2, side * RING_HEIGHT, 4.5
+def seat_room(stage: Stage, x: float) -> float:
+    """mm from x to the nearer step up in diameter; inf where there is none."""
+    profile, radius = stage.plan.profile, stage.plan.radius_at(x)
+    rises = np.maximum(profile.left, profile.right) / 2 > radius * (1 + 1e-9)
+    gaps = np.maximum(np.maximum(profile.faces[:-1] - x, x - profile.faces[1:]), 0.0)
+    return float(np.min(gaps[rises & (profile.left == profile.right)], initial=math.inf))
+
+
+def _ring(x: float, y: float, side: float, half: float) -> list[QPolygonF]:
+    w, h, arm = half, side * RING_HEIGHT, 4.5
     middle = y + h / 2
     box = QPolygonF(
         [QPointF(x - w, y), QPointF(x - w, y + h), QPointF(x + w, y + h), QPointF(x + w, y), QPointF(x - w, y)]
@@ -196,9 +214,9 @@ def _ring(x: float, y: float, side: float) -> list[QPolygonF]:
     ]
 
 
-def _housing(x: float, y: float, side: float, holds: bool) -> list[QPolygonF]:
+def _housing(x: float, y: float, side: float, half: float, holds: bool) -> list[QPolygonF]:
     """A line with ground strokes beyond the ring, with lips over its sides where it holds."""
-    w = RING_WIDTH / 2 + (3.0 if holds else 5.0)
+    w = half + (3.0 if holds else 5.0)
     y += side * 2.0
     line = [QPointF(x - w, y), QPointF(x + w, y)]
     if holds:
@@ -212,8 +230,3 @@ def _housing(x: float, y: float, side: float, holds: bool) -> list[QPolygonF]:
 
 def _small_head(tip: QPointF, way: float) -> QPolygonF:
     return QPolygonF([tip, tip + QPointF(-4.5 * way, -2.8), tip + QPointF(-4.5 * way, 2.8)])
-
-
-def holder_of(load: Load | Support) -> str:
-    """The name a thing goes by in the drawing."""
-    return load.name or load.label

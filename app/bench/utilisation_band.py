@@ -14,7 +14,7 @@ DEPTH = 6.0
 """Pixels from the outline inwards."""
 LEAST_STRETCH = 6.0
 """Pixels a raiser takes at least, so that a small fillet's value is seen."""
-TICK_SPACING, TICK_OUT, TICK_IN = 6.0, 4.0, 8.0
+TICK_SPACING, TICK_OUT, TICK_IN, LEAST_TICKS = 6.0, 5.0, 9.0, 2
 
 
 def utilisation_columns(stage: Stage) -> Array:
@@ -51,7 +51,7 @@ def draw_band(painter: QPainter, stage: Stage, columns: Array) -> None:
     for lower in (False, True):
         edge = stage.frame.points(stage.plan.outline, mirrored=lower)
         away = edge[:, 1] - stage.frame.axis
-        depth = np.minimum(DEPTH, 0.45 * np.abs(away))
+        depth = np.minimum(DEPTH, 0.35 * np.abs(away))
         inner = np.column_stack([edge[:, 0], edge[:, 1] - np.sign(away) * depth])
         painter.drawPolygon(polygon(np.vstack([edge, inner[::-1]])))
 
@@ -78,13 +78,13 @@ def draw_ticks(painter: QPainter, stage: Stage, columns: Array) -> None:
 
 
 def failing_places(stage: Stage, columns: Array) -> list[tuple[float, float]]:
-    """(x px, radius mm) of the ticks: evenly spaced in each failing stretch, at least one a stretch."""
+    """(x px, radius mm) of the ticks: evenly spaced in each failing stretch, at least two a stretch."""
     failing = np.concatenate([[False], np.nan_to_num(columns) > 1.0, [False]])
     turns = np.flatnonzero(np.diff(failing.astype(np.int8))).reshape(-1, 2) / stage.pixel_ratio
     outline, frame = stage.plan.outline, stage.frame
     found = []
     for begin, end in turns:
-        count = max(round((end - begin) / TICK_SPACING), 1)
+        count = max(round((end - begin) / TICK_SPACING), LEAST_TICKS)
         for x in begin + (np.arange(count) + 0.5) * (end - begin) / count:
             mm = (x - frame.origin) / frame.scale
             found.append((float(x), float(np.interp(mm, outline[:, 0], outline[:, 1]))))

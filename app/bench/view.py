@@ -187,9 +187,8 @@ class BenchView(QWidget):
             self._drawing = None
             still = QPixmap(self.size() * ratio)
             still.setDevicePixelRatio(ratio)
-            painter = QPainter(still)
-            self._paint_picture(painter)
-            painter.end()
+            with QPainter(still) as painter:
+                self._paint_picture(painter)
             self._still = still
         return self._still
 
@@ -197,18 +196,18 @@ class BenchView(QWidget):
 
     @guarded
     def paintEvent(self, event: QPaintEvent) -> None:  # noqa: N802 (Qt's name)
-        painter = QPainter(self)
-        if self.document.scene.live:
-            self._paint_picture(painter)
-        else:
-            painter.drawPixmap(0, 0, self._picture())
-        if self._hovered is not None:
-            x = self.ruler.to_px(self._hovered)
-            painter.setPen(hairline(self.theme.faint))
-            painter.drawLine(QLineF(x, 0, x, self.height()))
-        if self.hand is not None:
-            self.hand.overlay(painter)
-        painter.end()
+        # nothing may be left painting when something goes wrong: Qt would end the process
+        with QPainter(self) as painter:
+            if self.document.scene.live:
+                self._paint_picture(painter)
+            else:
+                painter.drawPixmap(0, 0, self._picture())
+            if self._hovered is not None:
+                x = self.ruler.to_px(self._hovered)
+                painter.setPen(hairline(self.theme.faint))
+                painter.drawLine(QLineF(x, 0, x, self.height()))
+            if self.hand is not None:
+                self.hand.overlay(painter)
 
     @guarded
     def resizeEvent(self, event: QResizeEvent) -> None:  # noqa: N802
