@@ -1,0 +1,11 @@
+"""The few colours of the sheet; the light palette of the window on white paper."""
+
+INK = "#23282d"
+TEAL = "#1c6d7d"
+RUST = "#9a4a2c"
+VIOLET = "#5c5190"
+FAINT = "#666c72"
+RULE = "#d4d1c9"
+TINT = "#f3f1ec"
+METAL = "#eceeed"
+LEAD = "#b9bdbf"
