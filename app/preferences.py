@@ -1,5 +1,7 @@
 """What the program remembers between sittings: window state, recent files, choices of view."""
 
+from __future__ import annotations
+
 from pathlib import Path
 from typing import Any
 
