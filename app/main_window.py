@@ -1,13 +1,10 @@
 """The one window: bench and traces share an x axis at the left, ledger and workings stand at the right."""
 
-from datetime import date
 from pathlib import Path
 
 from PySide6.QtCore import Qt
 from PySide6.QtGui import QCloseEvent, QDragEnterEvent, QDropEvent
 from PySide6.QtWidgets import QApplication, QLabel, QMainWindow, QSplitter, QVBoxLayout, QWidget
-from shaftcore.ledger_table import write_ledger_csv
-from shaftcore.shaft_file import read_shaft, write_shaft
 
 from app.actions import build_actions
 from app.bench.hand import make_hand
@@ -19,6 +16,7 @@ from app.fold import Fold
 from app.kit import Kit
 from app.manual.view import ManualWindow
 from app.menus import Menus
+from app.outputs import write_ledger, write_picture, write_sheet
 from app.panels.givens import Givens
 from app.panels.ledger import Ledger
 from app.panels.notices import Notices
@@ -26,12 +24,13 @@ from app.panels.thing import ThingPanel
 from app.panels.workings import Workings
 from app.preferences import Preferences
 from app.ruler import Ruler
-from app.sheet_export import export_sheet
 from app.status_line import status_words
 from app.theme import DARK, LIGHT, Theme, apply_theme
 from app.traces.view import TraceView
+from app.window_state import remember, restore
 from shaftcore.errors import FilletwrightError
 from shaftcore.shaft import Shaft
+from shaftcore.shaft_file import read_shaft, write_shaft
 
 SMALLEST = (1000, 620)
 
@@ -68,7 +67,7 @@ class MainWindow(QMainWindow):
         self.setAcceptDrops(True)
         self.setMinimumSize(*SMALLEST)
         self.set_theme(self.theme)
-        self._restore()
+        restore(self)
         self._renamed()
         self._shown(self.document.scene)
 
@@ -81,11 +80,11 @@ class MainWindow(QMainWindow):
         stack.setSpacing(0)
         stack.addWidget(self.kit)
         stack.addWidget(self.traces, 1)
-        self._left = QSplitter(Qt.Orientation.Vertical)
-        self._left.addWidget(self.bench)
-        self._left.addWidget(below)
-        self._left.setStretchFactor(0, 4)
-        self._left.setStretchFactor(1, 5)
+        self.left = QSplitter(Qt.Orientation.Vertical)
+        self.left.addWidget(self.bench)
+        self.left.addWidget(below)
+        self.left.setStretchFactor(0, 4)
+        self.left.setStretchFactor(1, 5)
         self.folds = {
             "ledger": Fold("Ledger", self.ledger),
             "chosen": Fold("Chosen on the bench", self.thing, opened=False),
@@ -93,20 +92,20 @@ class MainWindow(QMainWindow):
             "workings": Fold("Workings", self.workings),
             "notices": Fold("Notices", self.notices, opened=False),
         }
-        self._right = QSplitter(Qt.Orientation.Vertical)
+        self.right = QSplitter(Qt.Orientation.Vertical)
         for fold, share in zip(self.folds.values(), (5, 3, 5, 5, 2), strict=True):
-            self._right.addWidget(fold)
-            self._right.setStretchFactor(self._right.count() - 1, share)
-        self._across = QSplitter(Qt.Orientation.Horizontal)
-        self._across.addWidget(self._left)
-        self._across.addWidget(self._right)
-        self._across.setStretchFactor(0, 5)
-        self._across.setStretchFactor(1, 3)
-        for splitter in (self._left, self._right, self._across):
+            self.right.addWidget(fold)
+            self.right.setStretchFactor(self.right.count() - 1, share)
+        self.across = QSplitter(Qt.Orientation.Horizontal)
+        self.across.addWidget(self.left)
+        self.across.addWidget(self.right)
+        self.across.setStretchFactor(0, 5)
+        self.across.setStretchFactor(1, 3)
+        for splitter in (self.left, self.right, self.across):
             splitter.setChildrenCollapsible(False)
-        self.setCentralWidget(self._across)
+        self.setCentralWidget(self.across)
         self.resize(1366, 768)
-        self._across.setSizes([860, 506])
+        self.across.setSizes([860, 506])
 
     def set_theme(self, theme: Theme) -> None:
         self.theme = theme
@@ -132,29 +131,6 @@ class MainWindow(QMainWindow):
 
     def _theme_by_choice(self) -> Theme:
         return {"light": LIGHT, "dark": DARK}.get(self.preferences.words("theme", ""), self._desktop)
-
-    def _restore(self) -> None:
-        for key, splitter in (("left", self._left), ("right", self._right), ("across", self._across)):
-            state = self.preferences.state(f"split/{key}")
-            if state is not None:
-                splitter.restoreState(state)
-        geometry = self.preferences.state("geometry")
-        if geometry is not None:
-            self.restoreGeometry(geometry)
-        if self.preferences.words("units", "SI") == "US":
-            self.document.set_system("US")
-        self.traces.show_tracks(self.preferences.list("tracks", list(self.traces.shown_tracks)))
-        for key in self.preferences.list("opened folds", [k for k, fold in self.folds.items() if fold.opened]):
-            if key in self.folds:
-                self.folds[key].set_opened(True)
-
-    def _remember(self) -> None:
-        for key, splitter in (("left", self._left), ("right", self._right), ("across", self._across)):
-            self.preferences.keep(f"split/{key}", splitter.saveState())
-        self.preferences.keep("geometry", self.saveGeometry())
-        self.preferences.keep("units", self.document.scene.system)
-        self.preferences.keep("tracks", list(self.traces.shown_tracks))
-        self.preferences.keep("opened folds", [key for key, fold in self.folds.items() if fold.opened])
 
     # what is shown --------------------------------------------------------------------------------
 
@@ -186,9 +162,9 @@ class MainWindow(QMainWindow):
             "open": self.ask_open,
             "save": self.save,
             "save_as": self.save_as,
-            "sheet": self.write_sheet,
-            "ledger_csv": self.write_ledger,
-            "likeness": self.write_picture,
+            "sheet": lambda: write_sheet(self),
+            "ledger_csv": lambda: write_ledger(self),
+            "likeness": lambda: write_picture(self),
             "quit": self.close,
             "fit": self.fit,
             "closer": lambda: self.ruler.zoom(1.25, self.bench.width() / 2),
@@ -248,36 +224,6 @@ class MainWindow(QMainWindow):
         self.preferences.note_file(path)
         self.preferences.keep("folder", str(path.resolve().parent))
 
-    def write_sheet(self) -> None:
-        results = self.document.scene.results
-        if results is None:
-            return
-        path = ask_save(self, "Write the margin sheet", self._beside(".pdf"), "PDF (*.pdf)", ".pdf")
-        if path is not None:
-            export_sheet(self, results, path, date.today(), self.document.scene.system)
-
-    def write_ledger(self) -> None:
-        results = self.document.scene.results
-        path = ask_save(self, "Write the ledger", self._beside(".csv"), "CSV (*.csv)", ".csv")
-        if results is not None and path is not None:
-            write_ledger_csv(results, path)
-            self.statusBar().showMessage(f"Ledger written to {path}", 8000)
-
-    def write_picture(self) -> None:
-        path = ask_save(self, "Write a picture of the window", self._beside(".png"), "PNG (*.png)", ".png")
-        if path is None:
-            return
-        if self.grab().save(str(path), "PNG"):
-            self.statusBar().showMessage(f"Picture written to {path}", 8000)
-        else:
-            tell("The picture could not be written", f"{path}: choose a folder you may write to.", self)
-
-    def _beside(self, suffix: str) -> Path:
-        path = self.document.path
-        if path is None:
-            return Path(self.preferences.folder()) / f"shaft{suffix}"
-        return path.with_name(path.name.removesuffix(".json").removesuffix(".shaft") + suffix)
-
     def fit(self) -> None:
         self.bench.fit()
 
@@ -320,7 +266,7 @@ class MainWindow(QMainWindow):
     @guarded
     def closeEvent(self, event: QCloseEvent) -> None:  # noqa: N802 (Qt's name)
         if self._may_leave():
-            self._remember()
+            remember(self)
             event.accept()
         else:
             event.ignore()

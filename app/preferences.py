@@ -3,7 +3,6 @@
 from __future__ import annotations
 
 from pathlib import Path
-from typing import Any
 
 from PySide6.QtCore import QByteArray, QSettings
 
@@ -21,17 +20,16 @@ class Preferences:
         return value if isinstance(value, str) else default
 
     def list(self, key: str, default: list[str]) -> list[str]:
-        value: Any = self._settings.value(key)
-        if isinstance(value, str):
-            return [value]
-        return [v for v in value if isinstance(v, str)] if isinstance(value, list) else default
+        """A list of lines; an empty one stays empty."""
+        value = self._settings.value(key)
+        return [line for line in value.split("\n") if line] if isinstance(value, str) else default
 
     def state(self, key: str) -> QByteArray | None:
         value = self._settings.value(key)
         return value if isinstance(value, QByteArray) else None
 
     def keep(self, key: str, value: str | list[str] | QByteArray) -> None:
-        self._settings.setValue(key, value)
+        self._settings.setValue(key, "\n".join(value) if isinstance(value, list) else value)
 
     def recent_files(self) -> list[Path]:
         """Newest first; files that are gone are left out."""

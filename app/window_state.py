@@ -1,0 +1,45 @@
+"""What the window looked like last time, kept in the preferences and brought back."""
+
+from typing import TYPE_CHECKING
+
+from PySide6.QtWidgets import QSplitter
+
+if TYPE_CHECKING:
+    from app.main_window import MainWindow
+
+
+def _splitters(window: "MainWindow") -> dict[str, QSplitter]:
+    return {"left": window.left, "right": window.right, "across": window.across}
+
+
+def restore(window: "MainWindow") -> None:
+    """Bring back sizes, units, traces, ledger columns and open parts."""
+    kept = window.preferences
+    for key, splitter in _splitters(window).items():
+        state = kept.state(f"split/{key}")
+        if state is not None:
+            splitter.restoreState(state)
+    geometry = kept.state("geometry")
+    if geometry is not None:
+        window.restoreGeometry(geometry)
+    if kept.words("units", "SI") == "US":
+        window.document.set_system("US")
+    window.traces.show_tracks(kept.list("tracks", list(window.traces.shown_tracks)))
+    window.ledger.columns = kept.list("ledger columns", list(window.ledger.columns))
+    window.ledger.order = kept.words("ledger order", window.ledger.order)
+    opened = kept.list("opened parts", [key for key, fold in window.folds.items() if fold.opened])
+    for key, fold in window.folds.items():
+        fold.set_opened(key in opened)
+
+
+def remember(window: "MainWindow") -> None:
+    """Keep what `restore` brings back."""
+    kept = window.preferences
+    for key, splitter in _splitters(window).items():
+        kept.keep(f"split/{key}", splitter.saveState())
+    kept.keep("geometry", window.saveGeometry())
+    kept.keep("units", window.document.scene.system)
+    kept.keep("tracks", list(window.traces.shown_tracks))
+    kept.keep("ledger columns", list(window.ledger.columns))
+    kept.keep("ledger order", window.ledger.order)
+    kept.keep("opened parts", [key for key, fold in window.folds.items() if fold.opened])
