@@ -8,7 +8,7 @@ last previewed.
 from dataclasses import dataclass, replace
 from pathlib import Path
 
-from PySide6.QtCore import QObject, Signal
+from PySide6.QtCore import QObject, Signal, Slot
 from PySide6.QtGui import QUndoCommand, QUndoStack
 
 from app.error_messages import guarded
@@ -61,6 +61,8 @@ class ChangeShaft(QUndoCommand):
         if not isinstance(other, ChangeShaft) or other.merge != self.merge:
             return False
         self.after = other.after
+        self.setText(other.text())
+        self.setObsolete(self.after == self.before)
         return True
 
 
@@ -81,7 +83,7 @@ class Document(QObject):
         self.scene = Scene()
         self.path: Path | None = None
         self.undo_stack = QUndoStack(self)
-        self.undo_stack.cleanChanged.connect(lambda _: self.renamed.emit())
+        self.undo_stack.cleanChanged.connect(self._clean_changed)
         self._settled, self._settled_scene = Shaft(), self.scene
         self._previewed: Shaft | None = None
         self._settle(Shaft())
@@ -166,6 +168,10 @@ class Document(QObject):
     def saved_as(self, path: Path) -> None:
         self.path = path
         self.undo_stack.setClean()
+        self.renamed.emit()
+
+    @Slot(bool)
+    def _clean_changed(self, _: bool) -> None:
         self.renamed.emit()
 
     # inside ---------------------------------------------------------------------------------------

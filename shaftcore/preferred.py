@@ -29,6 +29,12 @@ FIRST_RADII: tuple[float, ...] = (0.2, 0.4, 0.6, 1, 1.6, 2.5, 4, 6, 10, 16, 25, 
 SECOND_RADII: tuple[float, ...] = (0.3, 0.5, 0.8, 1.2, 2, 3, 5, 8, 12, 20, 32, 50, 80, 125, 200)
 RADII: tuple[float, ...] = tuple(sorted(float(r) for r in (*FIRST_RADII, *SECOND_RADII)))
 
+INCHES: tuple[float, ...] = (
+    *(count / 64 for count in range(1, 8)),
+    *(2.0**octave * (1 + eighth / 8) for octave in range(-3, 12) for eighth in range(8)),
+)
+"""Sixty-fourths up to an eighth of an inch, then eight sizes from each power of two to the next."""
+
 WIDE = 8
 """Preferred sizes further apart than this many resolutions get round sizes between them."""
 
@@ -64,7 +70,8 @@ def snapped(
             break
         low, high = _neighbours(row, shown)
         if high - low >= fine:
-            filled = [_round_to(shown, round_step(fine, system, dimension_name))] if high - low > WIDE * fine else []
+            wide = high - low > WIDE * fine and sort not in ("radius", "corner")
+            filled = [_round_to(shown, round_step(fine, system, dimension_name))] if wide else []
             rest = min((low, high, *filled), key=lambda size: abs(size - shown))
             break
     return math.copysign(rest * unit.factor, value)
@@ -125,7 +132,7 @@ def _rows(sort: SizeSort, shown: float, system: System, factor: float) -> list[t
     if sort == "corner":
         return [tuple(corner / factor for corner, _, _ in CORNERS)]
     if system == "US" and sort in ("radius", "diameter", "length"):
-        return [_inches(shown)]
+        return [INCHES]
     if sort == "radius":
         return [RADII, tuple(float(r) for r in FIRST_RADII)]
     series = [_decades(decade, shown) for decade in (R40, R20, R10, R5)]
@@ -138,12 +145,6 @@ def _rows(sort: SizeSort, shown: float, system: System, factor: float) -> list[t
 def _decades(decade: tuple[float, ...], near: float) -> tuple[float, ...]:
     middle = math.floor(math.log10(max(near, _LEAST)))
     return tuple(float(f"{lead * 10.0**power:.6g}") for power in range(middle - 1, middle + 3) for lead in decade)
-
-
-def _inches(near: float) -> tuple[float, ...]:
-    step = min(max(2.0 ** math.floor(math.log2(max(near, _LEAST) / 8)), 1 / 64), 1.0)
-    first = max(math.floor(near / step) - 2, 1)
-    return tuple((first + count) * step for count in range(6))
 
 
 def _neighbours(row: tuple[float, ...], value: float) -> tuple[float, float]:
