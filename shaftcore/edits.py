@@ -41,7 +41,7 @@ def new_support_id(shaft: Shaft) -> str:
     return next(letters, None) or new_id(shaft, "A")
 
 
-def replace_thing(shaft: Shaft, id: str, **fields: Any) -> Shaft:
+def replace_thing(shaft: Shaft, id: str, /, **fields: Any) -> Shaft:
     """The thing with this id with some of its fields replaced; an unknown id changes nothing."""
     for group in GROUPS:
         entries = getattr(shaft, group)
