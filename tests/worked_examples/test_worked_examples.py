@@ -61,7 +61,8 @@ def shoulder_under_bending_and_torque(given: Inputs) -> Found:
     amplitude, mean = equivalent_amplitude(nominal, k), equivalent_mean(nominal, k)
     endurance = results.judged.strength.endurance[i]
     tensile, yielding = shaft.material.tensile_strength, shaft.material.yield_strength
-    n = {rule.label: rule.factor(amplitude, mean, endurance, tensile, yielding)[0] for rule in RULES.values()}
+    stated = np.array([KSI.internal(given["endurance_ksi"])])
+    n = {rule.label: rule.factor(amplitude, mean, stated, tensile, yielding)[0] for rule in RULES.values()}
     return {
         "S_e, ksi": KSI.shown(endurance),
         "σ_a', psi": 1e3 * KSI.shown(amplitude[0]),
