@@ -73,7 +73,7 @@ class SwitchField(QCheckBox):
         super().__init__(declaration.label)
         self.words_label = _named(self, declaration.label, declaration.words)
         self._value = False
-        self.clicked.connect(self.committed.emit)
+        self.clicked.connect(self._clicked)
 
     def set_value(self, value: bool) -> None:
         self._value = value
@@ -83,6 +83,10 @@ class SwitchField(QCheckBox):
     def refuse(self, words: str) -> None:
         self.set_value(self._value)
         self.words_label.say(words)
+
+    @guarded
+    def _clicked(self) -> None:
+        self.committed.emit(self.isChecked())
 
 
 class LineField(QLineEdit):
@@ -102,6 +106,7 @@ class LineField(QLineEdit):
             self._value = value
             self.words_label.say("")
             self.setText(value)
+            self.setCursorPosition(0)
 
     def refuse(self, words: str) -> None:
         self.words_label.say(words)

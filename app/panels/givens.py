@@ -11,6 +11,7 @@ from app.error_messages import guarded
 from app.panels.dress import EDGE, GAP, heading, panel_style
 from app.panels.editors import ChoiceField
 from app.panels.record_form import Home, RecordForm
+from app.panels.steel_picker import SteelPicker
 from app.theme import Theme
 from shaftcore.declared import Choice, Part, declared
 from shaftcore.shaft import Shaft
@@ -49,6 +50,7 @@ class Givens(QWidget):
         self.setAccessibleName("Givens")
         self.units = ChoiceField(UNITS)
         self.units.committed.connect(document.set_system)
+        self.steel = SteelPicker(document)
         self.forms: dict[str, RecordForm] = {}
         inside = QWidget()
         column = QVBoxLayout(inside)
@@ -77,6 +79,8 @@ class Givens(QWidget):
         self.forms[name] = form
         column.addSpacing(EDGE)
         column.addWidget(heading(declared(Shaft)[name].label))
+        if self.steel.fills is record:
+            column.addWidget(self.steel)
         column.addWidget(form)
 
     def set_theme(self, theme: Theme) -> None:
@@ -89,5 +93,6 @@ class Givens(QWidget):
         if scene.live:
             return  # no gesture changes a given
         self.units.set_value(scene.system)
+        self.steel.show_scene(scene)
         for name, form in self.forms.items():
             form.show_record(getattr(scene.shaft, name), scene.system)

@@ -14,13 +14,15 @@ from app.panels.editors import Editor, SwitchField, editor_of
 from app.quantity_field import QuantityField
 from app.symbol_text import rich
 from app.theme import Theme
-from shaftcore.declared import Choice, Declaration, Part, Quantity, declared
+from shaftcore.declared import Choice, Declaration, Part, Quantity, Text, declared
 from shaftcore.shaft import Shaft
 from shaftcore.units import System
 
 NUMBER_WIDTH = 150
 LONG_OPTION = 24
 """Options with more letters than this get a row of their own under the label."""
+LONG_LINE = 150
+"""And so do texts that may be longer than this."""
 LABEL_DROP = 4
 """Pixels from an editor's top edge to the top of the line in it."""
 
@@ -103,7 +105,7 @@ class RecordForm(QWidget):
         words = getattr(declaration, "words", "")
         if isinstance(editor, SwitchField):
             self._grid.addWidget(editor, row, 0, 1, 2)
-        elif isinstance(declaration, Choice) and max(len(shown) for _, shown in declaration.options) > LONG_OPTION:
+        elif _wants_a_row(declaration):
             self._grid.addWidget(_label(declaration, editor), row, 0, 1, 2)
             row += 1
             self._grid.addWidget(editor, row, 0, 1, 2)
@@ -148,6 +150,13 @@ class RecordForm(QWidget):
             self.renamed.emit(value)
         elif not taken:
             editor.refuse(refusals[0] if refusals else "This could not be taken.")
+
+
+def _wants_a_row(declaration: Declaration) -> bool:
+    """True where the words to be shown do not fit beside their label."""
+    if isinstance(declaration, Choice):
+        return max(len(shown) for _, shown in declaration.options) > LONG_OPTION
+    return isinstance(declaration, Text) and declaration.longest > LONG_LINE
 
 
 def _label(declaration: Declaration, editor: Editor) -> QLabel:

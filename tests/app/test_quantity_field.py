@@ -78,7 +78,24 @@ def test_a_bare_number_is_in_the_unit_of_the_system() -> None:
 
 @pytest.mark.parametrize(
     "text",
-    ["", "abc", "nan", "inf", "-inf", "1.2.3", "1,2,3", "12 00", "5 5", "--5", "1_000", "12 N", "1e999", "0", "-3", "1e6"],
+    [
+        "",
+        "abc",
+        "nan",
+        "inf",
+        "-inf",
+        "1.2.3",
+        "1,2,3",
+        "12 00",
+        "5 5",
+        "--5",
+        "1_000",
+        "12 N",
+        "1e999",
+        "0",
+        "-3",
+        "1e6",
+    ],
 )
 def test_nonsense_and_what_is_out_of_range_is_refused_with_place_and_range(text: str) -> None:
     with pytest.raises(QuantityError) as caught:
