@@ -21,7 +21,7 @@ from app.theme import FAMILY
 from app.traces.bands import Band
 from app.traces.limits import Scale
 from app.traces.plots import MARK_SIZE, Frame, Mapping, Plot, View
-from app.traces.ticks import inner_ticks, labels, value_ticks
+from app.traces.ticks import LEAST_APART, inner_ticks, labels, value_ticks
 from app.traces.tracks import Curve
 from shaftcore.notches._contract import Array
 from shaftcore.units import dimension
@@ -166,6 +166,6 @@ def _second_numbers(plot: Plot, mappings: Sequence[Mapping]) -> tuple[tuple[floa
     """Height and words of every number of the second scale; its zero is the first one's."""
     if len(mappings) < 2:
         return ()
-    ticks = value_ticks(plot.scales[1], plot.band.height)
+    ticks = value_ticks(plot.scales[1], plot.band.height, 2 * LEAST_APART)
     heights = mappings[1].y0 + ticks * mappings[1].ky
     return tuple((y, text) for y, tick, text in zip(heights.tolist(), ticks, labels(ticks), strict=True) if tick)

@@ -7,8 +7,10 @@ from app.number_text import shown
 from app.traces.limits import Scale
 from shaftcore.notches._contract import Array
 
-LEAST_APART = 17
+LEAST_APART = 17.0
 """Pixels between two numbers of a vertical axis."""
+UNDER_HEAD = 5.0
+"""Pixels below the upper end that stay free of numbers, since the track's head stands above."""
 
 
 def inner_ticks(limits: tuple[float, float], most: int) -> Array:
@@ -18,13 +20,14 @@ def inner_ticks(limits: tuple[float, float], most: int) -> Array:
     return np.where(np.abs(inside) < 1e-9 * max(map(abs, limits)), 0.0, inside)
 
 
-def value_ticks(scale: Scale, height: float) -> Array:
+def value_ticks(scale: Scale, height: float, apart: float = LEAST_APART) -> Array:
     """Round numbers of a vertical axis of that many pixels; a capped one is numbered at its end too."""
-    ticks = inner_ticks(scale.limits, max(1, int(height / LEAST_APART)))
-    if scale.cap is None:
-        return ticks
-    step = ticks[1] - ticks[0] if len(ticks) > 1 else scale.cap
-    return np.append(ticks[ticks < scale.cap - 0.4 * step], scale.cap)
+    ticks = inner_ticks(scale.limits, max(1, int(height / apart)))
+    if scale.cap is not None:
+        step = ticks[1] - ticks[0] if len(ticks) > 1 else scale.cap
+        return np.append(ticks[ticks < scale.cap - 0.4 * step], scale.cap)
+    low, high = scale.limits
+    return ticks[ticks <= high - (high - low) * UNDER_HEAD / height]
 
 
 def labels(ticks: Array, cap: float | None = None) -> list[str]:
@@ -34,4 +37,6 @@ def labels(ticks: Array, cap: float | None = None) -> list[str]:
     if step > 0 and abs(step * 10**decimals - round(step * 10**decimals)) > 1e-6:
         decimals += 1
     words = [shown(float(tick), "ratio", "SI", decimals) for tick in ticks]
-    return [f"≥ {text}" if cap is not None and tick == cap else text for tick, text in zip(ticks, words, strict=True)]
+    return [
+        f"over {text}" if cap is not None and tick == cap else text for tick, text in zip(ticks, words, strict=True)
+    ]

@@ -128,7 +128,7 @@ TRACKS: tuple[Track, ...] = (
             Line("torque", "torque", _carried("torque", 0), 0, weight=STRONG),
             Line("pulsation", "torque", _carried("torque", 1), 1, LONG, optional=True),
             Line("axial", "force", _carried("normal", 0), 2, SHORT, optional=True),
-            Line("pulsation", "force", _carried("normal", 1), 3, DOTTED, optional=True),
+            Line("axial pulsation", "force", _carried("normal", 1), 3, DOTTED, optional=True),
         ),
     ),
     Track(

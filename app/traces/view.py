@@ -160,7 +160,7 @@ class TraceView(QWidget):
 
     def _missing_words(self) -> str:
         first = next(iter(self._scene.missing), None)
-        return "The traces appear here" + (f" once this is settled: {first.remedy}." if first else ".")
+        return "The traces appear here." + (f" Next: {first.remedy}." if first else "")
 
     # painting ---------------------------------------------------------------------------------------------
 
