@@ -56,12 +56,8 @@ def _set(
     """Number of pages, the pages without charts, and where the charts belong."""
     title = edition.results.shaft.title
     above = " · ".join(filter(None, ("Margin sheet", title.part, title.revision and f"revision {title.revision}")))
-    below = " · ".join(
-        filter(
-            None,
-            (title.project, edition.date.isoformat(), edition.file_hash and f"shaft file {edition.file_hash[:12]}"),
-        )
-    )
+    hashed = edition.file_hash and f"shaft file {edition.file_hash[:12]}"
+    below = " · ".join(filter(None, (edition.date.isoformat(), hashed, title.project)))
     file = io.BytesIO()
     template = SheetTemplate(file, edition.system, Furniture(above, below, pages), pause)
     template.build(_story(edition, rooms))

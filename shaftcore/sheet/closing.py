@@ -12,7 +12,7 @@ from shaftcore.records import Notice
 from shaftcore.sheet.edition import Edition
 from shaftcore.sheet.lettering import para, safe
 from shaftcore.sheet.numbers import with_unit
-from shaftcore.sheet.pages import UPRIGHT, Heading, papers, section
+from shaftcore.sheet.pages import UPRIGHT, Heading, chapter, papers, section
 from shaftcore.sheet.palette import FAINT, RULE
 from shaftcore.sheet.tables import PAD, Field, plain_table, ruled_table
 from shaftcore.sheet.worked import cited
@@ -46,7 +46,7 @@ NOTE = "blend without step, no grinding burn"
 def notices(edition: Edition) -> list[Flowable]:
     """Chapter of notices and range flags, each with its station."""
     found = edition.results.notices
-    story: list[Flowable] = [Heading("7 Notices and range flags")]
+    story: list[Flowable] = [*chapter("7 Notices and range flags")]
     if not found:
         return [*story, para("None: every fit is used inside its range and nothing else calls for attention.")]
     fields = [
@@ -67,7 +67,7 @@ def _where(edition: Edition, notice: Notice) -> str:
 def limits_and_release(edition: Edition) -> list[Flowable]:
     """What was not checked, cautions, call-outs for the drawing, sources, signatures."""
     return [
-        Heading("8 Limits, call-outs and release"),
+        *chapter("8 Limits, call-outs and release"),
         *section("Not checked", *_items(NOT_CHECKED)),
         *section("Cautions", *_items(CAUTIONS)),
         *_call_outs(edition),

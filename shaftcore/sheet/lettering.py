@@ -21,7 +21,7 @@ MISSING = "□"
 """Stands for a character the type family does not have."""
 
 _PIECE = re.compile(
-    r"(?P<base>[^\W\d_]+)_(?P<under>[^\W²³]+(?:,[^\W²³]+)*)"  # σ_b,a
+    r"(?P<base>[^\W\d_]+)_(?P<under>[^\W²³⁰-⁹]+(?:,[^\W²³⁰-⁹]+)*)"  # σ_b,a
     r"|(?<![^\W\d_])(?P<kay>K)(?P<kind>[tf]s?)(?P<sort>(?:,[a-z]+)*)(?![^\W\d_])"  # Kt,b and Kfs
     r"|\^(?P<power>[−-]?\w+(?:\.\d+)?|\([^()]*\))"  # d^4
 )

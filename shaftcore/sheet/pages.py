@@ -23,7 +23,7 @@ from shaftcore.sheet.palette import FAINT, RULE
 from shaftcore.units import System
 
 SIDE, TOP, FOOT = 18 * mm, 20 * mm, 18 * mm
-LEAST_BEGUN = 27 * mm
+LEAST_BEGUN, LEAST_CHAPTER = 27 * mm, 50 * mm
 UPRIGHT, ACROSS = "upright", "across"
 
 
@@ -126,6 +126,11 @@ def _cut(text: str, room: float) -> str:
     while text and stringWidth(text + "…", REGULAR, 6.8) > room:
         text = text[:-1]
     return text + "…"
+
+
+def chapter(head: str) -> list[Flowable]:
+    """The heading of a chapter, on the next page where too little room is left."""
+    return [CondPageBreak(LEAST_CHAPTER), Heading(head)]
 
 
 def section(head: str, *body: Flowable) -> list[Flowable]:

@@ -140,10 +140,10 @@ def _remarks(edition: Edition) -> list[str]:
     ]
     if results.notices:
         found.append(f"Notices and range flags: {len(results.notices)}, all in chapter 7.")
-    if results.shaft.title.remarks:
-        found.append(f"Remarks: {safe(results.shaft.title.remarks)}")
     found.append(
         "A design aid: the codes in force and a licensed engineer's judgement decide. What was not checked, "
         "and the cautions, stand in chapter 8."
     )
+    if results.shaft.title.remarks:
+        found.append(f"Remarks: {safe(results.shaft.title.remarks)}")
     return found

@@ -19,7 +19,7 @@ from shaftcore.sheet.palette import FAINT, INK, RULE, TINT
 from shaftcore.units import System
 
 PAD = 1.5 * mm
-LEAST_WORDS = 16 * mm
+LEAST_WORDS = 11 * mm
 LEAST_TYPE = 4.6
 HEAD = 6.6
 _TAG = re.compile(r"<[^>]*>")
@@ -70,23 +70,36 @@ def _cells(column: Field, style: ParagraphStyle) -> list[Any]:
 
 
 def _widths(fields: Sequence[Field], width: float, size: float) -> list[float]:
-    """Needs first, then words in full, then the rest evenly; words give way where room is short."""
+    """Needs first, then words in full, then short heads, then the rest evenly."""
     needs = np.array([_least(f, size) for f in fields])
-    wants = np.array([_want(f, size) for f in fields]) - needs
-    spare = width - needs.sum()
-    if spare > 0 and wants.sum() > 0:
-        needs += wants * min(spare / wants.sum(), 1.0)
+    for wanted in (_words_whole, _head_in_two_lines):
+        wants = np.maximum(np.array([wanted(f, size) for f in fields]) - needs, 0.0)
+        spare = max(width - needs.sum(), 0.0)
+        if wants.sum() > 0:
+            needs += wants * min(spare / wants.sum(), 1.0)
     return list(needs + max(width - needs.sum(), 0.0) / len(fields))
 
 
 def _least(column: Field, size: float) -> float:
-    return _want(column, size) if column.number else max(LEAST_WORDS, column.least)
+    if not column.number:
+        return max(LEAST_WORDS, column.least)
+    return max(_cell_width(column, size), _longest_word(column.head), column.least) + 2 * PAD + 1.0
 
 
-def _want(column: Field, size: float) -> float:
-    widest = max((stringWidth(plain(cell), REGULAR, size) for cell in column.cells), default=0.0)
-    head = max((stringWidth(word, REGULAR, HEAD) for word in _TAG.sub(" ", column.head).split()), default=0.0)
-    return max(widest, head, column.least) + 2 * PAD + 1.0
+def _words_whole(column: Field, size: float) -> float:
+    return _cell_width(column, size) + 2 * PAD + 1.0
+
+
+def _head_in_two_lines(column: Field, size: float) -> float:
+    return 0.55 * stringWidth(_TAG.sub(" ", column.head), REGULAR, HEAD) + 2 * PAD
+
+
+def _cell_width(column: Field, size: float) -> float:
+    return max((stringWidth(plain(cell), REGULAR, size) for cell in column.cells), default=0.0)
+
+
+def _longest_word(head: str) -> float:
+    return max((stringWidth(word, REGULAR, HEAD) for word in _TAG.sub(" ", head).split()), default=0.0)
 
 
 def _style(fields: Sequence[Field], size: float, marked: Sequence[int]) -> TableStyle:

@@ -190,7 +190,7 @@ def _margin(axes: Any, board: Board) -> None:
         100 * np.minimum(judged.margin, judged.yield_margin) for judged in (results.judged_along, results.judged)
     )
     high = min(MOST_MARGIN, max(1.15 * float(np.max(at[np.isfinite(at)], initial=20.0)), 40.0))
-    low = min(1.25 * float(at.min(initial=0.0)), -0.12 * high)
+    low = min(1.6 * float(at.min(initial=0.0)), -0.16 * high)
     lines = [
         _line(axes, board.x, np.minimum(along, 2 * high), "plain section", INK, LONG, 0.8),
         _marks(axes, board.station_x, np.where(at <= high, at, np.nan), "stations", TEAL, "o"),
@@ -221,7 +221,8 @@ def _name_governing(axes: Any, board: Board, at: Array) -> None:
     if np.isfinite(at[i]):
         axes.annotate(
             f"No. {board.results.stations[i].number}", (board.station_x[i], min(at[i], axes.get_ylim()[1])),
-            xytext=(4, 4), textcoords="offset points", fontproperties=letters(6.2, True), color=TEAL, zorder=6,
+            xytext=(5, 0), va="center", textcoords="offset points",
+            fontproperties=letters(6.2, True), color=TEAL, zorder=6,
         )  # fmt: skip
 
 
