@@ -9,7 +9,7 @@ from app.bench.stage import Stage
 from shaftcore.abutment import largest_fillet
 from shaftcore.notches._contract import Array
 
-OUTLINE_WEIGHT = 1.5
+OUTLINE_WEIGHT = 1.2
 CENTRE_OVERHANG = 14.0
 HATCH_SPACING = 7
 SEAT_GAP = 3.0
@@ -17,7 +17,7 @@ SEAT_GAP = 3.0
 
 def draw_metal(painter: QPainter, stage: Stage) -> None:
     """The filled side view, and the bores laid open in the lower half."""
-    both = np.vstack([_edge(stage, False), _edge(stage, True)[::-1]])
+    both = np.vstack([stage.upper_edge, stage.lower_edge[::-1]])
     painter.setRenderHint(QPainter.RenderHint.Antialiasing, False)
     painter.setPen(Qt.PenStyle.NoPen)
     painter.setBrush(QColor(stage.theme.metal))
@@ -40,16 +40,8 @@ def draw_edges(painter: QPainter, stage: Stage) -> None:
     begin, end = (frame.x(x) for x in (0.0, stage.shaft.length))
     painter.drawLine(QLineF(begin - CENTRE_OVERHANG, frame.axis, end + CENTRE_OVERHANG, frame.axis))
     painter.setRenderHint(QPainter.RenderHint.Antialiasing, True)
-    draw_weighted(painter, [polygon(closed) for closed in _closed_outline(stage)], theme.metal_edge, OUTLINE_WEIGHT)
-
-
-def _edge(stage: Stage, lower: bool) -> Array:
-    return stage.frame.points(stage.plan.outline, mirrored=lower)
-
-
-def _closed_outline(stage: Stage) -> list[Array]:
-    upper, lower = _edge(stage, False), _edge(stage, True)
-    return [np.vstack([upper, lower[::-1], upper[:1]])]
+    closed = np.vstack([stage.upper_edge, stage.lower_edge[::-1], stage.upper_edge[:1]])
+    draw_weighted(painter, [polygon(closed)], theme.metal_edge, OUTLINE_WEIGHT)
 
 
 def _centre_pen(colour: str) -> QPen:
@@ -68,8 +60,7 @@ def _visible_edges(stage: Stage) -> list[QLineF]:
     ]
     for seating in stage.plan.seated:
         if seating.kind.goes == "on a diameter":
-            points = seating.kind.outline(seating.record, seating.around)
-            at += [(float(points[i, 0]), float(points[i, 1])) for i in (0, -1)]
+            at += [(x, stage.plan.radius_at(x)) for x in seating.site.span]
     hollow = [(profile.faces[first], profile.faces[last + 1]) for first, last in _hollow_runs(stage)]
     return [
         QLineF(
@@ -115,7 +106,7 @@ def _draw_broken_out(painter: QPainter, stage: Stage, first: int, last: int, hat
     begin, end = float(profile.faces[first]), float(profile.faces[last + 1])
     left = _break(stage, begin, -1.0) if first > 0 else np.empty((0, 2))
     right = _break(stage, end, 1.0) if last + 1 < len(profile.bore) else np.empty((0, 2))
-    lower = _edge(stage, True)
+    lower = stage.lower_edge
     x0, x1 = (
         left[-1, 0] if len(left) else frame.x(begin),
         right[-1, 0] if len(right) else frame.x(end),

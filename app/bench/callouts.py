@@ -5,20 +5,17 @@ from collections.abc import Callable
 from dataclasses import dataclass
 from typing import Any
 
-from PySide6.QtCore import QPointF, QRectF, QSizeF
+from PySide6.QtCore import QLineF, QPointF, QRectF, QSizeF
 from PySide6.QtGui import QPainter
 
-from app.bench.dimensions import chosen_raiser, chosen_segment, length_room, raiser_anchor, raiser_words
+from app.bench.dimensions import chosen_segment, segment_rooms
 from app.bench.labels import Board, Wanted
 from app.bench.polygons import hairline
 from app.bench.stage import Stage, Type
 from app.bench.symbols import Glyph
-from app.bench.words import load_words, quantity, support_words
-from shaftcore.shaft import Load, Support
+from app.bench.wishes import Wish
 
 TOP_EDGE = 4.0
-SAME_PLACE = 4.0
-"""Things nearer than this (px) on one side of the shaft share their words."""
 HINT_ROOM = 40.0
 LINES_WORTH_A_PLACE = 4
 """That a thing is named at all counts as much as this many lines."""
@@ -26,7 +23,7 @@ LINES_WORTH_A_PLACE = 4
 
 @dataclass(frozen=True)
 class Callout:
-    """Lines of text in a room, and where their leader ends; None where the words stand beside it."""
+    """Lines of text in a room, and where their leader ends."""
 
     key: str
     lines: tuple[str, ...]
@@ -34,13 +31,22 @@ class Callout:
     anchor: QPointF
     chosen: bool
 
+    @property
+    def leader(self) -> QLineF | None:
+        """From the words to their thing; None where they stand beside it."""
+        room, anchor = self.room, self.anchor
+        x = min(max(anchor.x(), room.left()), room.right())
+        if room.bottom() < anchor.y():
+            return QLineF(x, room.bottom(), anchor.x(), anchor.y())
+        return QLineF(x, room.top(), anchor.x(), anchor.y()) if room.top() > anchor.y() else None
+
 
 Offsets = dict[str, QPointF | None]
 """Where each callout stood from its anchor (None: nowhere), so that words keep their place during a gesture."""
 
 
 def place_callouts(
-    stage: Stage, letters: Type, glyphs: list[Glyph], wishes: list["Wish"], kept: Offsets
+    stage: Stage, letters: Type, glyphs: list[Glyph], wishes: list[Wish], kept: Offsets
 ) -> list[Callout]:
     """All callouts that find room; those in `kept` stay where they stood.
 
@@ -57,11 +63,11 @@ def place_callouts(
     return best
 
 
-_ORDERS: tuple[Callable[["Wish"], Any], ...] = (
-    lambda wish: not wish.chosen,
-    lambda wish: (not wish.chosen, -wish.anchor.x()),
-    lambda wish: (not wish.chosen, wish.anchor.x()),
-    lambda wish: (not wish.chosen, -len(wish.lines)),
+_ORDERS: tuple[Callable[[Wish], Any], ...] = (
+    lambda wish: wish.rank,
+    lambda wish: (wish.rank, -wish.anchor.x()),
+    lambda wish: (wish.rank, wish.anchor.x()),
+    lambda wish: (wish.rank, -len(wish.lines)),
 )
 
 
@@ -69,7 +75,7 @@ def _lines_said(callouts: list[Callout]) -> int:
     return sum(LINES_WORTH_A_PLACE + len(callout.lines) for callout in callouts)
 
 
-def _placed(stage: Stage, letters: Type, board: Board, wishes: list["Wish"], kept: Offsets) -> list[Callout]:
+def _placed(stage: Stage, letters: Type, board: Board, wishes: list[Wish], kept: Offsets) -> list[Callout]:
     found = []
     for wish in wishes:
         for words, anchor in itertools.product(_shorter(wish.lines), wish.anchors(stage)):
@@ -85,21 +91,25 @@ def _placed(stage: Stage, letters: Type, board: Board, wishes: list["Wish"], kep
     return found
 
 
-def draw_callout(painter: QPainter, stage: Stage, letters: Type, callout: Callout) -> None:
-    colour = stage.theme.accent if callout.chosen else stage.theme.ink
-    room, anchor = callout.room, callout.anchor
-    x = min(max(anchor.x(), room.left()), room.right())
-    painter.setPen(hairline(stage.theme.accent if callout.chosen else stage.theme.faint))
-    edge = room.bottom() if room.bottom() < anchor.y() else room.top() if room.top() > anchor.y() else None
-    if edge is not None:
-        painter.drawLine(QPointF(x, edge), anchor)
-    painter.setFont(letters.font(callout.chosen))
-    painter.setPen(hairline(colour))
+def draw_callouts(painter: QPainter, stage: Stage, letters: Type, callouts: list[Callout]) -> None:
+    """Leaders and words, the chosen thing's in the accent colour and bold."""
+    for chosen in (False, True):
+        these = [callout for callout in callouts if callout.chosen is chosen]
+        colour = stage.theme.accent if chosen else stage.theme.ink
+        painter.setPen(hairline(stage.theme.accent if chosen else stage.theme.faint))
+        painter.drawLines([leader for callout in these if (leader := callout.leader) is not None])
+        painter.setPen(hairline(colour))
+        painter.setFont(letters.font(chosen))
+        for callout in these:
+            _draw_lines(painter, letters, callout)
+
+
+def _draw_lines(painter: QPainter, letters: Type, callout: Callout) -> None:
+    """The words, centred over their leader, flush where they stand beside their thing."""
+    room, centred = callout.room, callout.leader is not None
     for i, line in enumerate(callout.lines):
-        left = room.left()
-        if edge is not None:
-            left += (room.width() - letters.width(line, callout.chosen)) / 2
-        painter.drawText(QPointF(left, room.top() + i * letters.line + letters.ascent), line)
+        spare = room.width() - letters.width(line, callout.chosen) if centred else 0.0
+        painter.drawText(QPointF(room.left() + spare / 2, room.top() + i * letters.line + letters.ascent), line)
 
 
 def _board(stage: Stage, glyphs: list[Glyph]) -> Board:
@@ -121,7 +131,8 @@ def _board(stage: Stage, glyphs: list[Glyph]) -> Board:
         board.take(QRectF(x - 1, frame.axis, 2, stage.foot - frame.axis))
     index = chosen_segment(stage)
     if index is not None:
-        board.take(length_room(stage, index))
+        for room in segment_rooms(stage, index):
+            board.take(room)
     return board
 
 
@@ -131,65 +142,3 @@ def _shorter(lines: list[str]) -> list[list[str]]:
     if len(lines) > 2:
         tried.insert(1, [lines[0], " · ".join(lines[1:])])
     return [*tried, lines[-1:]]
-
-
-@dataclass(frozen=True)
-class Wish:
-    """Words wanted at an anchor; those of a raiser may stand on either side of the shaft."""
-
-    key: str
-    lines: list[str]
-    anchor: QPointF
-    chosen: bool
-    either_side: bool = False
-
-    def anchors(self, stage: Stage) -> list[QPointF]:
-        mirrored = QPointF(self.anchor.x(), 2 * stage.frame.axis - self.anchor.y())
-        return [self.anchor, mirrored] if self.either_side else [self.anchor]
-
-
-def wishes_of(stage: Stage, glyphs: list[Glyph]) -> list[Wish]:
-    """Callouts wanted: the chosen raiser's, then supports', then loads'."""
-    wishes: list[Wish] = []
-    seating = chosen_raiser(stage)
-    if seating is not None:
-        wishes.append(
-            Wish(seating.place, raiser_words(stage, seating), raiser_anchor(stage, seating), True, either_side=True)
-        )
-    things = {thing.id: thing for thing in (*stage.shaft.supports, *stage.shaft.loads)}
-    for group in _groups([glyph for glyph in glyphs if -60 < glyph.anchor.x() < stage.frame.width + 60]):
-        outer = min if group[0].upward else max
-        anchor = outer((glyph.anchor for glyph in group), key=lambda point: point.y())
-        chosen = any(stage.chosen(glyph.thing) for glyph in group)
-        lines = _lines(stage, [things[glyph.thing] for glyph in group])
-        wishes.append(Wish("+".join(glyph.thing for glyph in group), lines, anchor, chosen))
-    return wishes
-
-
-def _groups(glyphs: list[Glyph]) -> list[list[Glyph]]:
-    groups: list[list[Glyph]] = []
-    for glyph in glyphs:
-        near = (
-            g for g in groups if g[0].upward == glyph.upward and abs(g[0].anchor.x() - glyph.anchor.x()) < SAME_PLACE
-        )
-        home = next(near, None)
-        if home is None:
-            groups.append([glyph])
-        else:
-            home.append(glyph)
-    return groups
-
-
-def _lines(stage: Stage, members: list[Load | Support]) -> list[str]:
-    """Names once each, the words of every member, and the place of a chosen one."""
-    lines: list[str] = []
-    for thing in members:
-        if isinstance(thing, Support):
-            lines.append(f"{thing.name or thing.label}, {support_words(thing)}")
-        else:
-            if thing.name and thing.name not in lines:
-                lines.append(thing.name)
-            lines.append(load_words(thing, stage.scene.system))
-        if stage.chosen(thing.id):
-            lines.append(f"x {quantity(thing.x, 'length', stage.scene.system)}")
-    return lines

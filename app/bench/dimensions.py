@@ -44,10 +44,12 @@ def raiser_anchor(stage: Stage, seating: Seating) -> QPointF:
     return stage.frame.to_screen(seating.around.x, stage.plan.radius_at(seating.around.x))
 
 
-def length_room(stage: Stage, index: int) -> QRectF:
-    """The strip the length dimension takes just above the foot."""
-    begin, end = (stage.frame.x(x) for x in stage.plan.profile.faces[index : index + 2])
-    return QRectF(begin - 4, stage.foot - ABOVE_FOOT - 14, end - begin + 8, 14 + ABOVE_FOOT)
+def segment_rooms(stage: Stage, index: int) -> list[QRectF]:
+    """What the length dimension takes: its strip just above the foot and both extension lines."""
+    begin, end = (stage.frame.x(x) for x in stage.plan.faces[index : index + 2])
+    axis, top = stage.frame.axis, stage.foot - ABOVE_FOOT - 14
+    strip = QRectF(begin - 4, top, end - begin + 8, 14 + ABOVE_FOOT)
+    return [strip, *(QRectF(x - 1, axis, 2, top - axis) for x in (begin, end))]
 
 
 def draw_segment_dimensions(painter: QPainter, stage: Stage, letters: Type, index: int) -> None:

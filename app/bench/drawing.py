@@ -5,13 +5,14 @@ from PySide6.QtCore import QLineF, QPointF
 from PySide6.QtGui import QPainter
 
 from app.bench.body import draw_edges, draw_metal, part_of_outline
-from app.bench.callouts import Callout, Offsets, draw_callout, place_callouts, wishes_of
+from app.bench.callouts import Callout, Offsets, draw_callouts, place_callouts
 from app.bench.dimensions import chosen_raiser, chosen_segment, draw_segment_dimensions
 from app.bench.foot import STATION_LINE, draw_foot
 from app.bench.polygons import draw_weighted, hairline
 from app.bench.stage import Stage, Type
-from app.bench.symbols import Glyph, draw_glyph, glyphs_of
+from app.bench.symbols import Glyph, draw_glyphs, glyphs_of
 from app.bench.utilisation_band import draw_band, draw_ticks, utilisation_columns
+from app.bench.wishes import wishes_of
 from app.bench.words import next_step
 
 CHOSEN_WEIGHT = 3.0
@@ -54,10 +55,8 @@ class Drawing:
         if stage.scene.results is not None:
             draw_ticks(painter, stage, self.columns)
         self._paint_chosen(painter)
-        for glyph in self.glyphs:
-            draw_glyph(painter, stage, glyph)
-        for callout in self.callouts:
-            draw_callout(painter, stage, self.letters, callout)
+        draw_glyphs(painter, stage, self.glyphs)
+        draw_callouts(painter, stage, self.letters, self.callouts)
         index = chosen_segment(stage)
         if index is not None:
             draw_segment_dimensions(painter, stage, self.letters, index)

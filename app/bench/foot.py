@@ -75,14 +75,15 @@ def shown_stations(stage: Stage, letters: Type) -> list[int]:
     order = [results.governing, *np.argsort(-results.judged.utilisation, kind="stable").tolist()]
     if stage.scene.station is not None:
         order.insert(0, stage.scene.station)
-    taken: list[tuple[float, float]] = []
+    taken = bytearray(max(math.ceil(frame.width), 1))
     kept = []
     for i in dict.fromkeys(order):
         x, half = frame.x(results.stations[i].x), letters.width(str(i + 1), True) / 2 + 2.5
         if x < LEFT_MARGIN - 16 or x > frame.width - half:
             continue
-        if all(x + half <= begin or x - half >= end for begin, end in taken):
-            taken.append((x - half, x + half))
+        begin, end = int(x - half), math.ceil(x + half)
+        if not any(taken[begin:end]):
+            taken[begin:end] = b"\1" * (end - begin)
             kept.append(i)
     return kept
 

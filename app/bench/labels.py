@@ -61,15 +61,18 @@ class Board:
         return found
 
     def _choices(self, wanted: Wanted, row: float) -> Array:
-        """Rooms (n, 4) as left, top, right, bottom, nearest first: both sides, then row after row."""
+        """Rooms (n, 4) as left, top, right, bottom, best first: both sides, row after row, then off to both sides."""
         x, y, sense = wanted.anchor.x(), wanted.anchor.y(), -1.0 if wanted.upward else 1.0
-        outwards = sense * np.arange(0.0, max(self.bottom - self.top, row), row / 2)
-        above = y + outwards + sense * GAP - (wanted.height if wanted.upward else 0.0)
-        beside = y + outwards[: math.ceil(2 * wanted.height / row) + 4] - (0.0 if wanted.upward else wanted.height)
+        above = y + sense * (GAP + np.arange(0.0, max(self.bottom - self.top, row), row))
+        above -= wanted.height if wanted.upward else 0.0
+        beside = y + sense * np.arange(0.0, wanted.height + 2 * row, row / 2)
+        beside -= 0.0 if wanted.upward else wanted.height
+        level = beside[: math.ceil(2 * wanted.height / row)]
+        beyond = beside[len(level) :]
         lefts = np.clip(x - wanted.width * SHARES, EDGE, max(self.width - wanted.width - EDGE, EDGE))
         sides = np.array([x + BESIDE, x - BESIDE - wanted.width])
-        left = np.concatenate([np.tile(sides, len(beside)), np.tile(lefts, len(above))])
-        top = np.concatenate([np.repeat(beside, len(sides)), np.repeat(above, len(lefts))])
+        left = np.concatenate([np.tile(sides, len(level)), np.tile(lefts, len(above)), np.tile(sides, len(beyond))])
+        top = np.concatenate([np.repeat(level, 2), np.repeat(above, len(lefts)), np.repeat(beyond, 2)])
         return np.column_stack([left, top, left + wanted.width, top + wanted.height])
 
     def _free(self, rooms: Array, x: float, y: float) -> NDArray[np.bool_]:

@@ -29,14 +29,14 @@ def draw_weighted(painter: QPainter, lines: list[QPolygonF], colour: str | QColo
     """Long smooth lines about `weight` pixels wide, as hairlines side by side.
 
     The hairlines lie a device pixel apart down one diagonal, so a weight holds at every scale
-    factor; one more beside them keeps strokes along that diagonal from being thin.
+    factor; where there are several, one more keeps strokes along that diagonal from being thin.
     """
     painter.setPen(hairline(colour))
     pixel = 1.0 / painter.device().devicePixelRatio()
     steps = max(round(weight / pixel), 1)
     reach = (steps - 1) / 2 * pixel
     offsets = [QPointF(at, at) for at in np.linspace(-reach, reach, steps)]
-    if steps > 1:
+    if steps > 2:
         offsets.append(QPointF(reach, -reach))
     for offset in offsets:
         painter.translate(offset)

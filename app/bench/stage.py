@@ -4,6 +4,7 @@ from bisect import bisect_left, bisect_right
 from dataclasses import dataclass
 from functools import cached_property
 
+import numpy as np
 from PySide6.QtGui import QFont, QFontMetricsF
 
 from app.bench.frame import Frame
@@ -71,6 +72,17 @@ class Stage:
     def foot(self) -> float:
         """y where the strip at the bottom begins."""
         return self.frame.height - FOOT
+
+    @cached_property
+    def upper_edge(self) -> Array:
+        """The outline in pixels without points nearer than half a device pixel to the one before."""
+        points = self.frame.points(self.plan.outline)
+        moved = np.any(np.diff(np.rint(points * (2 * self.pixel_ratio)), axis=0) != 0, axis=1)
+        return points[np.concatenate([[True], moved])]
+
+    @cached_property
+    def lower_edge(self) -> Array:
+        return self.upper_edge * np.array([1.0, -1.0]) + np.array([0.0, 2 * self.frame.axis])
 
     def chosen(self, thing: str, sorts: tuple[str, ...] = ()) -> bool:
         """Whether the thing with this id is chosen, as one of `sorts` where given."""

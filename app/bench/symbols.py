@@ -53,23 +53,29 @@ def glyphs_of(stage: Stage) -> list[Glyph]:
     return [*(_bearing(stage, support) for support in stage.shaft.supports), *loads]
 
 
-def draw_glyph(painter: QPainter, stage: Stage, glyph: Glyph) -> None:
-    chosen = stage.chosen(glyph.thing)
-    colour = stage.theme.accent if chosen else stage.theme.ink
-    if glyph.stem is not None:
-        painter.setPen(hairline(stage.theme.faint))
-        painter.drawLine(glyph.stem)
+def draw_glyphs(painter: QPainter, stage: Stage, glyphs: list[Glyph]) -> None:
+    """All glyphs, the chosen one last, in the accent colour and heavier."""
+    painter.setPen(hairline(stage.theme.faint))
+    painter.drawLines([glyph.stem for glyph in glyphs if glyph.stem is not None])
+    chosen = [glyph for glyph in glyphs if stage.chosen(glyph.thing)]
+    _draw_in(painter, stage, [glyph for glyph in glyphs if glyph not in chosen], stage.theme.ink, 1.1)
+    _draw_in(painter, stage, chosen, stage.theme.accent, 2.0)
+
+
+def _draw_in(painter: QPainter, stage: Stage, glyphs: list[Glyph], colour: str, weight: float) -> None:
     painter.setPen(hairline(colour))
-    for centre, radius, filled in glyph.circles:
+    for filled in (False, True):
         painter.setBrush(QColor(colour if filled else stage.theme.paper))
-        painter.drawEllipse(centre, radius, radius)
-    painter.setPen(stroke(colour, 2.0 if chosen else 1.1))
-    for line in glyph.lines:
-        painter.drawPolyline(line)
-    painter.setPen(hairline(colour))
+        for centre, radius in (circle[:2] for glyph in glyphs for circle in glyph.circles if circle[2] is filled):
+            painter.drawEllipse(centre, radius, radius)
     painter.setBrush(QColor(colour))
-    for head in glyph.heads:
-        painter.drawPolygon(head)
+    for glyph in glyphs:
+        for head in glyph.heads:
+            painter.drawPolygon(head)
+    painter.setPen(stroke(colour, weight))
+    for glyph in glyphs:
+        for line in glyph.lines:
+            painter.drawPolyline(line)
 
 
 # loads ----------------------------------------------------------------------------------------
@@ -116,7 +122,7 @@ def _torque(stage: Stage, load: Torque, largest: float) -> Glyph:
     frame = stage.frame
     reach = stage.plan.radius_at(load.x) * frame.scale + ARC_BEYOND
     x = frame.x(load.x)
-    turn = np.linspace(-math.pi / 2, math.pi / 2, 33)
+    turn = np.linspace(-math.pi / 2, math.pi / 2, 21)
     arc = np.column_stack([x + ARC_SHIFT + ARC_BULGE * np.cos(turn), frame.axis + reach * np.sin(turn)])
     size = load.torque or load.amplitude
     tip, sense = (arc[-1], 1.0) if size >= 0 else (arc[0], -1.0)

@@ -48,8 +48,7 @@ def draw_band(painter: QPainter, stage: Stage, columns: Array) -> None:
     painter.setRenderHint(QPainter.RenderHint.Antialiasing, False)
     painter.setPen(Qt.PenStyle.NoPen)
     painter.setBrush(brush)
-    for lower in (False, True):
-        edge = stage.frame.points(stage.plan.outline, mirrored=lower)
+    for edge in (stage.upper_edge, stage.lower_edge):
         away = edge[:, 1] - stage.frame.axis
         depth = np.minimum(DEPTH, 0.35 * np.abs(away))
         inner = np.column_stack([edge[:, 0], edge[:, 1] - np.sign(away) * depth])
