@@ -52,9 +52,18 @@ def equivalent_amplitude(s: Nominal, k: Fatigue) -> Array:
     return np.sqrt(normal**2 + 3 * (k.torsion * s.torsion_amplitude) ** 2)
 
 
+def mean_axial_factor(s: Nominal, k: Fatigue) -> Array:
+    """Kf,ax on a tensile axial mean, 1 on a compressive one."""
+    return np.where(s.axial_mean < 0, 1.0, k.axial)
+
+
 def equivalent_mean(s: Nominal, k: Fatigue, notch_on_steady_torque: bool = True) -> Array:
-    """σm' = √((Kf,b σb,m + Kf,ax σax,m)² + 3 (Kfs τm)²); a compressive normal mean counts as none."""
-    normal = np.maximum(k.bending * s.bending_mean + k.axial * s.axial_mean, 0.0)
+    """σm' = √((Kf,b σb,m + Kf,ax σax,m)² + 3 (Kfs τm)²).
+
+    A compressive normal mean counts as none, and compression beside tensile bending relieves it by
+    its nominal size only: the peaks of the two lie at different places (common practice, no source).
+    """
+    normal = np.maximum(k.bending * s.bending_mean + mean_axial_factor(s, k) * s.axial_mean, 0.0)
     kfs = k.torsion if notch_on_steady_torque else 1.0
     return np.sqrt(normal**2 + 3 * (kfs * s.torsion_mean) ** 2)
 

@@ -126,14 +126,18 @@ def joined_lines(results: Results, i: int) -> Iterator[Line]:
         t=s.torsion_amplitude[i],
     )  # fmt: skip
     steady = results.shaft.judgement.notch_on_steady_torque
-    compressed = kf[0] * s.bending_mean[i] + kf[1] * s.axial_mean[i] < 0
-    normal = ("0", "0") if compressed else ("(Kf,b σ_b,m + Kf,ax σ_ax,m)", "({kb} × {b} + {kx} × {x})")
+    relieved = s.axial_mean[i] < 0
+    kx = 1.0 if relieved else kf[1]
+    compressed = kf[0] * s.bending_mean[i] + kx * s.axial_mean[i] < 0
+    axial = "σ_ax,m" if relieved else "Kf,ax σ_ax,m"
+    normal = ("0", "0") if compressed else (f"(Kf,b σ_b,m + {axial})", "({kb} × {b} + {kx} × {x})")
     torsion = ("Kfs τ_m", "{ks} × {t}") if steady else ("τ_m", "{t}")
     flags = ["compressive normal mean counts as none"] * bool(compressed)
+    flags += ["compression relieves by its nominal size only"] * bool(relieved and not compressed)
     flags += ["Kfs left off the steady torque, as chosen"] * (not steady and bool(s.torsion_mean[i]))
     yield line(
         "σ_m'", "Equivalent mean", f"√({normal[0]}² + 3 ({torsion[0]})²)", f"√({normal[1]}^2 + 3 × ({torsion[1]})^2)",
-        float(judged.mean[i]), "stress", "shigley", "; ".join(flags), kb=kf[0], b=s.bending_mean[i], kx=kf[1],
+        float(judged.mean[i]), "stress", "shigley", "; ".join(flags), kb=kf[0], b=s.bending_mean[i], kx=kx,
         x=s.axial_mean[i], ks=kf[2], t=s.torsion_mean[i],
     )  # fmt: skip
 

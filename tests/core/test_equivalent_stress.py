@@ -69,6 +69,12 @@ def test_compressive_mean_counts_as_none() -> None:
     assert equivalent_mean(stresses(axial_mean=-40.0, bending_mean=60.0), ONE) == pytest.approx(20.0)
 
 
+def test_compression_relieves_by_its_nominal_size_only() -> None:
+    k = Fatigue(np.array(2.0), np.array(3.0), np.array(1.5))
+    assert equivalent_mean(stresses(axial_mean=-40.0, bending_mean=60.0), k) == pytest.approx(2 * 60 - 40)
+    assert equivalent_mean(stresses(axial_mean=40.0, bending_mean=60.0), k) == pytest.approx(2 * 60 + 3 * 40)
+
+
 def test_yield_looks_at_the_side_that_is_worse() -> None:
     """Under compression the greatest stress is on the pressed side of the bend: sizes add."""
     assert greatest_stress(stresses(axial_mean=-40.0, bending_mean=60.0), ONE) == pytest.approx(100.0)

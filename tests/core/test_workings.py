@@ -125,6 +125,7 @@ def test_every_condition_is_met_somewhere() -> None:
         "stands still",
         "the whole moment alternates",
         "compressive normal mean",
+        "relieves by its nominal size",
         "left off the steady torque",
         "without Kf",
         "axial load alone",

@@ -111,6 +111,8 @@ BIG_AXIAL_ALONE = replace(
 
 BIG_BENT = replace(BIG_AXIAL_ALONE, loads=(RadialForce("weight", 300.0, 4e5),))
 
+STANDING_PUSHED = replace(STANDING_TWISTED, judgement=Judgement(notch_on_steady_torque=False))
+
 TINY = replace(
     TURNING,
     segments=(Segment("left", 250.0, 6.0, shoulder=Shoulder(0.3)), Segment("right", 250.0, 8.0, finish="ground")),
@@ -125,6 +127,7 @@ VARIED: dict[str, Shaft] = {
     "hollow taper": HOLLOW_TAPER,
     "standing": STANDING,
     "standing twisted": STANDING_TWISTED,
+    "standing pushed": STANDING_PUSHED,
     "sharp": SHARP,
     "partial fillet": PARTIAL,
     "big, axial alone": BIG_AXIAL_ALONE,
