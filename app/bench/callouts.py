@@ -1,15 +1,17 @@
 """Words beside supports, loads and the chosen raiser: what each says and where it stands."""
 
 import itertools
+import math
 from collections.abc import Callable
 from dataclasses import dataclass
 from typing import Any
 
+import numpy as np
 from PySide6.QtCore import QLineF, QPointF, QRectF, QSizeF
 from PySide6.QtGui import QPainter
 
 from app.bench.dimensions import chosen_segment, segment_rooms
-from app.bench.labels import Board, Wanted
+from app.bench.labels import GAP, Board, Wanted
 from app.bench.polygons import hairline
 from app.bench.stage import Stage, Type
 from app.bench.symbols import Glyph
@@ -116,11 +118,8 @@ def _board(stage: Stage, glyphs: list[Glyph]) -> Board:
     """What is taken already: shaft, glyphs, a hint at the top, what the chosen station and segment draw."""
     frame = stage.frame
     board = Board(frame.width, TOP_EDGE, stage.foot - 2)
-    faces = stage.plan.profile.faces if stage.shaft.segments else ()
-    for i, segment in enumerate(stage.shaft.segments):
-        radius = max(segment.diameter, segment.right_diameter) / 2 * frame.scale
-        begin, end = frame.x(faces[i]), frame.x(faces[i + 1])
-        board.take(QRectF(begin, frame.axis - radius, end - begin, 2 * radius))
+    for room in _body_rooms(stage):
+        board.take(room)
     for glyph in glyphs:
         for room in glyph.rooms:
             board.take(room)
@@ -134,6 +133,19 @@ def _board(stage: Stage, glyphs: list[Glyph]) -> Board:
         for room in segment_rooms(stage, index):
             board.take(room)
     return board
+
+
+def _body_rooms(stage: Stage) -> list[QRectF]:
+    """The shaft as boxes; a taper in slices whose height differs by less than the gap round words."""
+    frame, rooms = stage.frame, []
+    for segment, x0, x1 in zip(stage.shaft.segments, stage.plan.faces, stage.plan.faces[1:], strict=False):
+        one, other = (d / 2 * frame.scale for d in (segment.diameter, segment.right_diameter))
+        count = 1 + math.ceil(abs(other - one) / (GAP / 2))
+        edges, radii = np.linspace(frame.x(x0), frame.x(x1), count + 1), np.linspace(one, other, count + 1)
+        for i in range(count):
+            radius = min(radii[i], radii[i + 1])
+            rooms.append(QRectF(edges[i], frame.axis - radius, edges[i + 1] - edges[i], 2 * radius))
+    return rooms
 
 
 def _shorter(lines: list[str]) -> list[list[str]]:

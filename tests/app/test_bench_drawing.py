@@ -1,0 +1,309 @@
+"""The drawing on the bench: where things lie, what is shown, that nothing lies on anything else."""
+
+import itertools
+
+import matplotlib
+import numpy as np
+import pytest
+from PySide6.QtCore import QPointF, QRectF
+from PySide6.QtGui import QImage, QPainter
+from pytestqt.qtbot import QtBot
+
+from app.bench.colour_scale import TABLE, TOP, colours_of
+from app.bench.drawing import Drawing
+from app.bench.foot import mark_step, shown_stations
+from app.bench.labels import Board, Wanted
+from app.bench.stage import Plan, Stage, Type
+from app.bench.symbols import glyphs_of
+from app.bench.utilisation_band import LEAST_STRETCH, failing_places, utilisation_columns
+from app.bench.view import BenchView
+from app.bench.words import description, load_words
+from app.document import Document
+from app.ruler import Ruler
+from app.theme import DARK, LIGHT
+from shaftcore.notches.groove import Groove
+from shaftcore.notches.shoulder import Shoulder
+from shaftcore.shaft import AxialForce, RadialForce, Segment, Shaft, Support, Torque
+
+
+def stepped(force: float = 4000.0) -> Shaft:
+    """A stepped, partly bored shaft with a groove, both bearings and every sort of load."""
+    return Shaft(
+        segments=(
+            Segment("a", 60, 40, shoulder=Shoulder(1.5, bearing_corner=2.0)),
+            Segment("b", 140, 60, bore=20),
+            Segment("c", 80, 60, end_diameter=50, shoulder=Shoulder(2.0)),
+            Segment("d", 60, 36),
+        ),
+        raisers=(Groove("g", 120, 1.0, 1.0),),
+        supports=(Support("A", 25, "Pump end", True), Support("B", 315, "Drive end")),
+        loads=(
+            RadialForce("down", 150, force, 180, name="Wheel"),
+            RadialForce("up", 90, force / 4, 0),
+            RadialForce("near", 230, force / 4, 90, name="Chain"),
+            RadialForce("far", 270, force / 4, 270),
+            Torque("in", 150, 2e5, name="Wheel"),
+            Torque("out", 335, -2e5, name="Coupling"),
+            AxialForce("along", 150, -500, name="Wheel"),
+        ),
+    )
+
+
+@pytest.fixture
+def bench(qtbot: QtBot) -> BenchView:
+    view = BenchView(Document(), Ruler(), LIGHT)
+    qtbot.addWidget(view)
+    view.resize(860, 330)
+    view.show()
+    return view
+
+
+def stage_of(view: BenchView, ratio: float = 1.0) -> Stage:
+    scene = view.document.scene
+    return Stage(scene, Plan(scene.shaft), view.frame, view.theme, ratio)
+
+
+# where things lie -----------------------------------------------------------------------------
+
+
+def test_places_go_to_the_screen_and_back(bench: BenchView) -> None:
+    bench.document.load(stepped(), None)
+    for place in ((0.0, 0.0), (150.0, 30.0), (340.0, -18.0)):
+        assert bench.to_shaft(bench.to_screen(*place)) == pytest.approx(place, abs=1e-9)
+    assert bench.to_screen(0.0, 10.0).y() < bench.axis_px(), "above the axis is up"
+    one, other = bench.to_screen(0, 0), bench.to_screen(100, 100)
+    assert other.x() - one.x() == pytest.approx(one.y() - other.y()), "one scale along and across"
+
+
+def test_zoom_keeps_the_place_under_the_pointer(bench: BenchView) -> None:
+    bench.document.load(stepped(), None)
+    pos = QPointF(300.0, 90.0)
+    before = bench.to_shaft(pos)
+    bench.zoom_about(3.0, pos)
+    assert bench.to_shaft(pos) == pytest.approx(before)
+    bench.fit()
+    assert bench.ruler.fitted
+    assert bench.axis_px() < bench.height() / 2
+
+
+def test_a_shaft_is_fitted_when_loaded_and_left_alone_during_a_gesture(bench: BenchView) -> None:
+    shaft = stepped()
+    bench.document.load(shaft, None)
+    assert bench.to_screen(0, 0).x() > 0
+    assert bench.to_screen(shaft.length, 0).x() < bench.width()
+    scale = bench.ruler.scale
+    longer = Shaft(segments=(*shaft.segments, Segment("e", 300, 36)), supports=shaft.supports, loads=shaft.loads)
+    assert bench.document.preview(longer)
+    assert bench.ruler.scale == scale, "the picture must not jump under the hand"
+    bench.document.commit("lengthen")
+    assert bench.ruler.scale < scale
+
+
+def test_the_users_own_zoom_stays_after_a_change(bench: BenchView) -> None:
+    shaft = stepped()
+    bench.document.load(shaft, None)
+    bench.zoom_about(2.0, QPointF(400, 120))
+    scale = bench.ruler.scale
+    longer = Shaft(segments=(*shaft.segments, Segment("e", 300, 36)), supports=shaft.supports)
+    assert bench.document.change(longer, "lengthen")
+    assert bench.ruler.scale == scale
+
+
+# colour and band ------------------------------------------------------------------------------
+
+
+def test_colour_scale_is_cividis() -> None:
+    """Reference: matplotlib's own table, of which ours keeps every fourth colour (3/255 off at most)."""
+    reference = np.rint(np.array(matplotlib.colormaps["cividis"].colors) * 255).astype(int)
+    ours = np.stack([(TABLE >> shift) & 255 for shift in (16, 8, 0)], axis=1).astype(int)
+    assert np.abs(ours - reference).max() <= 3
+
+
+def test_colours_brighten_with_utilisation_and_hold_at_the_ends() -> None:
+    colours = colours_of(np.linspace(0.0, TOP, 64))
+    light = sum(weight * ((colours >> shift) & 255) for weight, shift in ((0.3, 16), (0.59, 8), (0.11, 0)))
+    assert np.all(np.diff(light) > 0)
+    assert colours_of(np.array([np.inf, 99.0])).tolist() == [TABLE[-1]] * 2
+    assert colours_of(np.array([-1.0]))[0] == TABLE[0]
+
+
+@pytest.mark.parametrize("ratio", [1.0, 2.0])
+def test_band_shows_each_raisers_utilisation_wide_enough_to_see(bench: BenchView, ratio: float) -> None:
+    bench.document.load(stepped(), None)
+    results, stage = bench.document.scene.results, stage_of(bench, ratio)
+    assert results is not None
+    columns = utilisation_columns(stage)
+    assert len(columns) == round(bench.width() * ratio)
+    raisers = [i for i, station in enumerate(results.stations) if station.site is not None]
+    assert len(raisers) == 3
+    for i in raisers:
+        shown = np.flatnonzero(columns == results.judged.utilisation[i]) / ratio
+        assert shown.max() - shown.min() + 1 / ratio >= LEAST_STRETCH - 1
+    assert np.isnan(columns[0])
+
+
+def test_ticks_stand_only_where_an_asked_factor_is_missed(bench: BenchView) -> None:
+    bench.document.load(stepped(100.0), None)
+    sound = stage_of(bench)
+    assert sound.scene.results is not None
+    assert sound.scene.results.sound
+    assert failing_places(sound, utilisation_columns(sound)) == []
+    bench.document.load(stepped(20_000.0), None)
+    failing = stage_of(bench)
+    columns = utilisation_columns(failing)
+    places = failing_places(failing, columns)
+    assert places
+    assert all(columns[int(x)] > 1 for x, _ in places)
+
+
+# words ----------------------------------------------------------------------------------------
+
+
+def callout_rooms(bench: BenchView) -> list[tuple[str, QRectF]]:
+    drawing = Drawing(stage_of(bench), Type())
+    return [(callout.key, callout.room) for callout in drawing.callouts]
+
+
+@pytest.mark.parametrize("size", [(860, 330), (1400, 420), (700, 220)])
+@pytest.mark.parametrize("system", ["SI", "US"])
+def test_words_lie_on_nothing_and_inside_the_widget(bench: BenchView, size: tuple[int, int], system: str) -> None:
+    bench.resize(*size)
+    bench.document.load(stepped(), None)
+    bench.document.set_system(system)  # type: ignore[arg-type]
+    stage, rooms = stage_of(bench), callout_rooms(bench)
+    assert rooms
+    glyph_rooms = [room for glyph in glyphs_of(stage) for room in glyph.rooms]
+    for key, room in rooms:
+        assert bench.rect().contains(room.toRect()), key
+        assert not any(room.intersects(other) for other in glyph_rooms), key
+    for (one, a), (other, b) in itertools.combinations(rooms, 2):
+        assert not a.intersects(b), (one, other)
+
+
+def test_every_support_and_load_is_named_where_there_is_room(bench: BenchView) -> None:
+    bench.resize(1400, 420)
+    bench.document.load(stepped(), None)
+    named = {thing for key, _ in callout_rooms(bench) for thing in key.split("+")}
+    shaft = bench.document.shaft
+    assert named == {thing.id for thing in (*shaft.supports, *shaft.loads)}
+
+
+def test_a_board_refuses_what_has_no_room() -> None:
+    board = Board(300, 0, 40)
+    first = board.place(Wanted("a", 80, 14, QPointF(150, 40), True), 14)
+    assert first is not None
+    board.take(QRectF(0, 0, 300, 40))
+    assert board.place(Wanted("b", 80, 14, QPointF(150, 40), True), 14) is None
+
+
+def test_words_keep_their_place_during_a_gesture(bench: BenchView) -> None:
+    bench.document.load(stepped(), None)
+    still = Drawing(stage_of(bench), Type())
+    live = Drawing(stage_of(bench), Type(), still.offsets)
+    assert [callout.room for callout in live.callouts] == [callout.room for callout in still.callouts]
+
+
+@pytest.mark.parametrize(
+    ("load", "words"),
+    [
+        (RadialForce("f", 0, 1200, 180), "↓ 1200 N"),
+        (RadialForce("f", 0, -1200, 180), "↑ 1200 N"),
+        (RadialForce("f", 0, 1200, 90), "1200 N at 90°, towards you"),
+        (RadialForce("f", 0, 1200, -90), "1200 N at 270°, away from you"),
+        (RadialForce("f", 0, 1200, 30, amplitude=100), "1200 N ± 100 at 30°"),
+        (Torque("t", 0, -85_000), "torque out 85 N·m"),
+        (AxialForce("a", 0, -700), "← 700 N"),
+    ],
+)
+def test_loads_say_size_and_direction(load: RadialForce | Torque | AxialForce, words: str) -> None:
+    assert load_words(load, "SI").replace("\u00a0", " ") == words
+
+
+def test_a_screen_reader_is_told_what_is_drawn(bench: BenchView) -> None:
+    assert "Draw the first segment" in bench.accessibleDescription()
+    bench.document.load(stepped(), None)
+    assert "4 segments, 2 supports, 7 loads" in bench.accessibleDescription()
+    bench.document.choose(("groove", "g"))
+    assert "Chosen: station" in bench.accessibleDescription()
+    assert "Groove g" in bench.accessibleDescription()
+
+
+def test_an_unfinished_shaft_says_what_is_missing(bench: BenchView) -> None:
+    segments = stepped().segments
+    bench.document.load(Shaft(segments=segments), None)
+    assert "Set two supports" in description(bench.document.scene)
+    both = (Support("A", 25), Support("B", 315))
+    bench.document.load(Shaft(segments=segments, supports=both), None)
+    assert "locating" in description(bench.document.scene)
+
+
+# foot -----------------------------------------------------------------------------------------
+
+
+def test_marks_of_x_stand_on_round_numbers() -> None:
+    for px_per_unit in np.geomspace(1e-3, 1e4, 57):
+        step = mark_step(float(px_per_unit), 90.0)
+        assert step * px_per_unit * (1 + 1e-9) >= 90.0
+        assert step * px_per_unit <= 2.5 * 90.0 * (1 + 1e-9)
+        assert f"{step:e}"[0] in "125"
+
+
+def test_crowded_station_numbers_are_thinned_but_never_the_chosen_or_governing(bench: BenchView) -> None:
+    shaft = stepped()
+    crowd = tuple(RadialForce(f"f{i}", 61.0 + 2 * i, 10, 180) for i in range(50))
+    bench.document.load(Shaft(segments=shaft.segments, supports=shaft.supports, loads=crowd), None)
+    results = bench.document.scene.results
+    assert results is not None
+    bench.document.choose(None, 7)
+    stage, letters = stage_of(bench), Type()
+    shown = shown_stations(stage, letters)
+    assert {7, results.governing} <= set(shown)
+    assert len(shown) < len(results.stations)
+    spans = sorted((stage.frame.x(results.stations[i].x), letters.width(str(i + 1)) / 2) for i in shown)
+    assert all(a + half < b - other for (a, half), (b, other) in itertools.pairwise(spans))
+
+
+# pixels ---------------------------------------------------------------------------------------
+
+
+def picture(bench: BenchView, ratio: float = 1.0) -> QImage:
+    stage = stage_of(bench, ratio)
+    image = QImage(round(bench.width() * ratio), round(bench.height() * ratio), QImage.Format.Format_RGB32)
+    image.setDevicePixelRatio(ratio)
+    image.fill(stage.theme.paper)
+    with QPainter(image) as painter:
+        Drawing(stage, Type()).paint(painter)
+    return image
+
+
+@pytest.mark.parametrize("theme", [LIGHT, DARK])
+@pytest.mark.parametrize("ratio", [1.0, 2.0, 3.0])
+def test_metal_bore_and_band_are_where_the_shaft_is(bench: BenchView, theme, ratio: float) -> None:  # type: ignore[no-untyped-def]
+    bench.set_theme(theme)
+    bench.document.load(stepped(), None)
+    image = picture(bench, ratio)
+
+    def colour(x: float, y: float) -> str:
+        at = bench.to_screen(x, y)
+        return image.pixelColor(round(at.x() * ratio), round(at.y() * ratio)).name()
+
+    assert colour(75, 5) == theme.metal
+    assert colour(75, -5) == theme.paper, "the bore is laid open in the lower half"
+    assert colour(75, 45) == theme.paper
+    stage = stage_of(bench, ratio)
+    row = colours_of(utilisation_columns(stage))
+    at = bench.to_screen(105, 30)
+    below = image.pixel(round(at.x() * ratio), round((at.y() + 3) * ratio))
+    assert below == row[round(at.x() * ratio)]
+
+
+def test_choosing_shows_and_hover_costs_no_new_layout(bench: BenchView) -> None:
+    bench.document.load(stepped(), None)
+    before = bench.grab().toImage()
+    for thing in (("segment", "b"), ("shoulder", "a"), ("groove", "g"), ("support", "A"), ("torque", "in")):
+        bench.document.choose(thing)
+        assert bench.grab().toImage() != before, thing
+    laid_out = bench._drawing
+    bench.document.point_at(100.0)
+    bench.grab()
+    assert bench._drawing is laid_out
