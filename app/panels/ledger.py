@@ -14,6 +14,7 @@ from app.panels.ledger_model import ORDERS, LedgerModel, Order
 from app.panels.ledger_table import LedgerTable
 from app.theme import Theme
 from shaftcore.nomenclature import BY_KEY
+from shaftcore.results import Results
 
 NOT_YET = "The ledger fills once the shaft can be analysed."
 
@@ -34,6 +35,7 @@ class Ledger(QWidget):
         self._arrange()
         self._add_actions()
         self._following = False
+        self._fitted: Results | None = None
         self.search.textChanged.connect(self._searched)
         self.order_box.activated.connect(self._ordered)
         self.picker.picked.connect(self._picked)
@@ -139,10 +141,10 @@ class Ledger(QWidget):
             self._follow(scene)
         finally:
             self._following = False
-        if not scene.live:
+        if not scene.live and scene.results is not self._fitted:
+            self._fitted = scene.results
             self.table.fit_columns(only_wider=True)
-            if not self.model.rows:
-                self.table.viewport().update()
+            self.table.viewport().update()
 
     def _follow(self, scene: Scene) -> None:
         """Make the chosen station's row the current one."""

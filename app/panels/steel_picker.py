@@ -32,6 +32,7 @@ class SteelPicker(QWidget):
         self.steel = ChoiceField(STEEL)
         self.band = QComboBox()
         self.band.setAccessibleName(BAND.label)
+        self.band.setPlaceholderText("no steel chosen")
         grid = QGridLayout(self)
         grid.setContentsMargins(0, 0, 0, 0)
         grid.setHorizontalSpacing(2 * GAP)

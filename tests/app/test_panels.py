@@ -1,6 +1,5 @@
 """The panels beside the drawing: each follows the document and asks it for changes."""
 
-from collections.abc import Iterator
 from dataclasses import replace
 from typing import Any
 
@@ -495,11 +494,11 @@ def test_what_is_missing_stands_among_the_notices(document: Document, qtbot: QtB
 
 
 @pytest.fixture(params=[Ledger, Workings, Givens, ThingPanel, Notices])
-def panel(request: pytest.FixtureRequest, document: Document, qtbot: QtBot) -> Iterator[QWidget]:
+def panel(request: pytest.FixtureRequest, document: Document, qtbot: QtBot) -> QWidget:
     made = request.param(document, LIGHT)
     document.choose(("segment", "s2"))
     _shown(qtbot, made)
-    yield made
+    return made
 
 
 def test_every_control_has_an_accessible_name(panel: QWidget) -> None:
@@ -508,6 +507,22 @@ def test_every_control_has_an_accessible_name(panel: QWidget) -> None:
     unnamed = [c for c in controls if not c.accessibleName() and not c.parent().accessibleName() and c.text() == ""]
     assert panel.accessibleName()
     assert not unnamed
+
+
+@pytest.mark.parametrize("sort", [Ledger, Givens, ThingPanel])
+def test_tab_walks_from_top_to_bottom_and_left_to_right(sort: Any, document: Document, qtbot: QtBot) -> None:
+    panel = sort(document, LIGHT)
+    document.choose(("segment", "s2"))
+    _shown(qtbot, panel)
+    places, widget = [], panel.nextInFocusChain()
+    while widget is not panel:
+        wants_tab = bool(widget.focusPolicy() & Qt.FocusPolicy.TabFocus) and widget.focusProxy() is None
+        if panel.isAncestorOf(widget) and widget.isVisible() and widget.isEnabled() and wants_tab:
+            at = widget.mapTo(panel, widget.rect().center())
+            places.append((at.y(), at.x()))
+        widget = widget.nextInFocusChain()
+    assert len(places) >= 4
+    assert places == sorted(places)
 
 
 def test_a_panel_is_drawn_in_both_themes_and_for_an_empty_shaft(panel: Any, document: Document) -> None:
