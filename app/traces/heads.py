@@ -30,12 +30,12 @@ def key_font(bold: bool = False) -> QFont:
 
 @dataclass(frozen=True)
 class Entry:
-    """One line's place in the key: where its sample begins, its words, and where its number stands."""
+    """One line's place in the key: where its sample begins, its words, and where its number stands, if it has one."""
 
     line: Line
     sample: float
     words: float
-    number: float
+    number: float | None
     end: float
 
 
@@ -59,22 +59,33 @@ def heads_of(plots: Sequence[Plot], view: View) -> tuple[Head, ...]:
     column = LEFT + max(map(bold.horizontalAdvance, words), default=0.0) + 2 * APART
     found = []
     for plot, name in zip(plots, words, strict=True):
-        entries, at = [], column
-        for curve in plot.curves:
-            entry = _entry(plot, curve.line, at, plain, view)
-            if entry.end > view.width - RIGHT_MARGIN:
-                break
-            entries.append(entry)
-            at = entry.end + APART
-        found.append(Head(plot, name, tuple(entries), at))
+        own = LEFT + bold.horizontalAdvance(name) + APART
+        entries = _fitting(plot, (column, own), plain, view)
+        found.append(Head(plot, name, entries, entries[-1].end + APART if entries else own))
     return tuple(found)
 
 
-def _entry(plot: Plot, line: Line, at: float, metrics: QFontMetricsF, view: View) -> Entry:
+def _fitting(plot: Plot, columns: tuple[float, float], metrics: QFontMetricsF, view: View) -> tuple[Entry, ...]:
+    """The key in the common column; in a narrow window from where the name ends, and last without numbers."""
+    common, own = columns
+    for at, numbered in ((common, True), (own, True), (own, False)):
+        entries = []
+        for curve in plot.curves:
+            entries.append(_entry(plot, curve.line, at, metrics, view, numbered))
+            at = entries[-1].end + APART
+        if not entries or entries[-1].end <= view.width - RIGHT_MARGIN:
+            break
+    return tuple(entries)
+
+
+def _entry(plot: Plot, line: Line, at: float, metrics: QFontMetricsF, view: View, numbered: bool) -> Entry:
     scale = next(scale for scale in plot.scales if scale.dimension == line.dimension)
     reach = dimension(line.dimension).unit(view.system).internal(float(np.abs(scale.limits).max()))
     words = at + SAMPLE + NEAR
-    number = words + metrics.horizontalAdvance(line.label) + NEAR
+    words_end = words + metrics.horizontalAdvance(line.label)
+    if not numbered:
+        return Entry(line, at, words, None, words_end)
+    number = words_end + NEAR
     widest = metrics.horizontalAdvance(widest_text(plot.track, line, reach, view.system))
     return Entry(line, at, words, number, number + widest)
 
@@ -125,7 +136,8 @@ def paint_numbers(painter: QPainter, head: Head, view: View, results: Results, p
     right = view.width - RIGHT_MARGIN
     if place is not None:
         for entry in head.entries:
-            text = line_text(head.plot.track, entry.line, results, place, view.system)
-            painter.drawText(head.rect(entry.number, entry.end + APART), _ALIGN, text)
+            if entry.number is not None:
+                text = line_text(head.plot.track, entry.line, results, place, view.system)
+                painter.drawText(head.rect(entry.number, entry.end + APART), _ALIGN, text)
     if note and head.free + QFontMetricsF(key_font()).horizontalAdvance(note) <= right:
         painter.drawText(head.rect(head.free, right), _ALIGN_RIGHT, note)

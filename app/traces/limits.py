@@ -86,7 +86,7 @@ def _with_room(needed: Limits, room: float) -> Limits:
     low, high = needed
     span = high - low
     if span <= 0.0:
-        return -1.0, 1.0
+        return -EDGE_ROOM, 1.0
     return low - (room if low < 0 else EDGE_ROOM) * span, high + (room if high > 0 else EDGE_ROOM) * span
 
 
