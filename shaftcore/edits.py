@@ -143,11 +143,12 @@ def split_segment(shaft: Shaft, id: str, x: float) -> Shaft:
     if index is None:
         return shaft
     segment, begin = shaft.segments[index], faces_of(shaft)[index]
-    share = min(max((x - begin) / segment.length, SHORTEST_PIECE), 1 - SHORTEST_PIECE)
-    middle = segment.diameter + share * (segment.right_diameter - segment.diameter)
+    least = SHORTEST_PIECE * segment.length
+    length = min(max(x - begin, least), segment.length - least)
+    middle = segment.diameter + length / segment.length * (segment.right_diameter - segment.diameter)
     tapered = segment.end_diameter is not None
-    left = replace(segment, length=share * segment.length, end_diameter=middle if tapered else None, shoulder=None)
-    right = replace(segment, id=new_id(shaft, "s"), length=(1 - share) * segment.length, diameter=middle)
+    left = replace(segment, length=length, end_diameter=middle if tapered else None, shoulder=None)
+    right = replace(segment, id=new_id(shaft, "s"), length=segment.length - length, diameter=middle)
     return replace(shaft, segments=(*shaft.segments[:index], left, right, *shaft.segments[index + 1 :]))
 
 

@@ -154,7 +154,7 @@ def _neighbours(row: tuple[float, ...], value: float) -> tuple[float, float]:
 
 
 def _beside(row: tuple[float, ...], value: float) -> tuple[float, float]:
-    """The sizes next below and next above, neither of them the value itself."""
+    """The sizes next below and next above, neither of them the value itself; at an end the value."""
     slack = 1e-6 * value
     below, above = bisect_left(row, value - slack) - 1, bisect_right(row, value + slack)
-    return row[max(below, 0)], row[min(above, len(row) - 1)]
+    return row[below] if below >= 0 else value, row[above] if above < len(row) else value

@@ -78,7 +78,7 @@ def test_pulled_sizes_rest_on_preferred_ones() -> None:
     assert snapped(2.41, "radius", 0.05) == 2.5
     assert snapped(34.6, "diameter", 0.5) == 35.0
     assert snapped(107.0, "length", 3.0) == 106.0
-    assert snapped(-1130.0, "number", 10.0, "SI", "force") == -1120.0
+    assert snapped(-1130.0, "number", 30.0, "SI", "force") == -1120.0
 
 
 def test_far_out_only_coarse_sizes_are_offered() -> None:
@@ -99,7 +99,7 @@ def test_us_lengths_rest_on_halves_of_halves() -> None:
 
 @given(
     st.sampled_from(["radius", "diameter", "length", "number"]),
-    st.floats(0.25, 150.0),
+    st.floats(0.5, 150.0),
     st.sampled_from(["SI", "US"]),
 )
 def test_steps_up_and_down_again_pass_the_same_sizes(sort: str, value: float, system: str) -> None:
@@ -116,6 +116,12 @@ def test_steps_of_negative_and_of_no_size() -> None:
     assert stepped(0.0, "number", True, "SI", "force") > 0
     assert stepped(0.0, "number", False, "SI", "force") < 0
     assert stepped(172.0, "turn", True, "SI", "angle") == 180.0
+
+
+def test_at_the_end_of_a_row_a_size_stays() -> None:
+    assert stepped(0.2, "radius", False) == 0.2
+    assert stepped(0.1, "radius", False) == 0.1
+    assert stepped(RADII[-1], "radius", True) == RADII[-1]
 
 
 def test_fine_steps_are_about_a_fiftieth_and_round() -> None:

@@ -1,0 +1,116 @@
+"""Pulling one size with the pointer, from taking hold to letting go."""
+
+import math
+from dataclasses import replace
+from typing import TYPE_CHECKING
+
+from PySide6.QtCore import QPointF
+from PySide6.QtGui import QDropEvent, QMouseEvent, QPainter
+
+from app.bench.gesture import Gesture, is_free
+from app.bench.hits import Grip
+from app.bench.overlay import draw_window
+from app.bench.readout import drag_lines
+from app.bench.sizes import Size, at_step, size_of
+from app.number_text import parse
+from shaftcore import edits
+from shaftcore.geometry import faces_of
+from shaftcore.shaft import Shaft
+
+if TYPE_CHECKING:
+    from shaftcore.radius_window import RadiusWindow
+
+    from app.bench.hand import BenchHand
+
+E_FOLD = 120.0
+"""Pixels of pull that make a size e times as large."""
+TELLABLE = 4.0
+"""Pixels that the hand can tell apart; preferred sizes closer than this are passed over."""
+
+
+class Drag(Gesture):
+    """One size being pulled by its grip: previews while the pointer moves, then one step or none.
+
+    A refused size is not shown: the shaft stays at the last one that could be, and the hand says
+    why. A typed number stands whatever the pointer does.
+    """
+
+    def __init__(self, hand: "BenchHand", grip: Grip, press: QPointF, size: Size, whole: bool = False) -> None:
+        super().__init__(hand)
+        self.grip, self.size = grip, _pulled_size(self.document.shaft, grip, size, whole)
+        self.base: Shaft = self.document.shaft
+        self.value = size.value
+        self._press, self._scale = press, self.view.ruler.scale
+        self.window = self._window()
+
+    def move(self, event: QMouseEvent | QDropEvent) -> None:
+        if self.hand.typed or self.size.value is None:
+            return
+        value = self.size.held(self._at(event.position()))
+        if not is_free(event):
+            value = self.size.rested(value, self._resolution(value), self.document.scene.system)
+        self.hand.attempt(lambda: self.set(value))
+
+    def set(self, value: float) -> None:
+        """Show the shaft with this number unless it stands there already."""
+        shown = value == self.value and self.document.in_gesture
+        if not shown and self.document.preview(self.size.apply(self.base, value)):
+            self.value = value
+
+    def read(self, text: str) -> None:
+        if text:
+            value = parse(text, self.size.declaration, self.document.scene.system)
+            self.hand.attempt(lambda: self.set(value))
+
+    def release(self, event: QMouseEvent) -> None:
+        self.enter()
+
+    def enter(self) -> None:
+        """Let go: what is on the screen becomes one named step."""
+        if self.document.in_gesture:
+            words = self.size.step_words(self.value, self.document.scene.system)
+            self.hand.attempt(lambda: self.document.commit(words))
+        self.hand.end()
+
+    def paint(self, painter: QPainter) -> None:
+        scene, window = self.document.scene, self.window
+        if window is not None:
+            draw_window(painter, scene.shaft, self.view.frame, self.size, window, self.view.theme)
+        self.hand.read_out(painter, drag_lines(scene, self.size, self.value, self.hand.typed, window))
+
+    def _at(self, pos: QPointF) -> float:
+        """The size for a pointer at `pos`."""
+        pull, start = pos - self._press, self.size.value or 0.0
+        along = pull.x() * self.grip.direction[0] + pull.y() * self.grip.direction[1]
+        if self.grip.law == "ratio":
+            return start * math.exp(min(max(along / E_FOLD, -12.0), 12.0))
+        return start + self.grip.gain * along / self._scale
+
+    def _resolution(self, value: float) -> float:
+        if self.grip.law == "ratio":
+            return abs(value) * TELLABLE / E_FOLD
+        return self.grip.gain * TELLABLE / self._scale
+
+    def _window(self) -> "RadiusWindow | None":
+        """The radius window of a fillet; it does not hang on the radius, so once for a drag will do."""
+        results = self.document.scene.results
+        if results is None or not at_step(self.size.chosen) or self.size.sort != "radius":
+            return None
+        from shaftcore.radius_window import radius_window
+
+        return radius_window(results, self.size.chosen[1])
+
+
+def size_under(shaft: Shaft, grip: Grip) -> Size | None:
+    """The size a grip pulls; None where its thing has gone or the size is not set."""
+    size = size_of(shaft, grip.chosen, grip.name)
+    return None if size is None or size.value is None else size
+
+
+def _pulled_size(shaft: Shaft, grip: Grip, size: Size, whole: bool) -> Size:
+    """At a face the neighbour gives way, or with `whole` all to the right moves along."""
+    if not grip.face or whole:
+        return size
+    index = [segment.id for segment in shaft.segments].index(grip.chosen[1])
+    begin = faces_of(shaft)[index]
+    return replace(size, apply=lambda base, value: edits.move_face(base, grip.chosen[1], begin + (value or 0.0)))

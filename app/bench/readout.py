@@ -1,0 +1,131 @@
+"""What stands beside the pointer while something is pulled: the size, what it does, and why not further."""
+
+from typing import TYPE_CHECKING
+
+from PySide6.QtCore import QPointF, QRectF, Qt
+from PySide6.QtGui import QColor, QFontMetricsF, QPainter, QPen
+
+from app import symbol_text
+from app.bench.sizes import Size
+from app.bench.sketch import FIELDS, Sketch
+from app.document import Scene, Selection
+from app.number_text import shown
+from app.theme import Theme, text_font
+from shaftcore.nomenclature import BY_KEY
+from shaftcore.results import Results
+
+if TYPE_CHECKING:
+    from shaftcore.radius_window import RadiusWindow
+
+Lines = list[tuple[str, str]]
+"""(role, text): role is "size", "plain" or "refusal"."""
+
+AT_STATION = (("kt_bending", "kt_torsion"), ("n", "margin"))
+"""Station quantities by row of the readout."""
+PADDING, BESIDE, WIDEST = 8.0, 18.0, 380.0
+
+
+def station_for(results: Results | None, chosen: Selection | None) -> int | None:
+    """Index of the station of a thing: one of its own kind, else any that belongs to it."""
+    if results is None or chosen is None:
+        return None
+    own = (i for i, station in enumerate(results.stations) if (station.kind, station.place) == chosen)
+    index = next(own, None)
+    return results.station_of(chosen[1]) if index is None else index
+
+
+def drag_lines(scene: Scene, size: Size, value: float | None, typed: str, window: "RadiusWindow | None") -> Lines:
+    """Size, Kt, n and margin there, the worst station, and the radius window."""
+    symbol = f"{size.declaration.symbol} = " if size.declaration.symbol else ""
+    text = f"{typed}▏ {size.unit(scene.system)}" if typed else size.shown(value, scene.system)
+    lines: Lines = [("size", f"{size.declaration.label} {size.place}   {symbol}{text}")]
+    if scene.results is None:
+        return lines
+    index = station_for(scene.results, size.chosen)
+    if index is not None:
+        lines += [("plain", row) for row in _station_rows(scene, scene.results, index)]
+    worst = scene.results.governing
+    margin = shown(scene.results.least_margin, "share", scene.system, 1, signed=True)
+    lines.append(("plain", f"worst: {scene.results.stations[worst].label}   margin {margin} %"))
+    if window is not None:
+        lines.append(("plain", _window_words(scene, size, window)))
+    return lines
+
+
+def sketch_lines(scene: Scene, sketch: Sketch, typed: str) -> Lines:
+    """Length and diameter of the step being pulled; the one typed numbers go to is marked."""
+    lines: Lines = []
+    for name in FIELDS:
+        declaration = sketch.declaration(name)
+        unit = declaration.dimension.unit(scene.system)
+        here = name == sketch.name
+        value = sketch.sizes().get(name)
+        text = f"{unit.shown(value):.6g}" if value is not None else "–"
+        text = f"{typed}▏" if here and typed else text
+        fixed = "  typed" if name in sketch.fixed else ""
+        lines.append(("size" if here else "plain", f"{declaration.label}  {text} {unit.symbol}{fixed}"))
+    return [*lines, ("plain", "Tab: the other   click or Enter: next step   Esc: done")]
+
+
+def draw_readout(painter: QPainter, lines: Lines, pointer: QPointF, room: QRectF, theme: Theme) -> QRectF:
+    """Draw the lines in a quiet box beside the pointer and inside `room`; returns the box."""
+    plain, strong = text_font(9.0), text_font(9.0, bold=True)
+    height = QFontMetricsF(plain).height() + 2
+    lines = [(role, part) for role, text in lines for part in _wrapped(text, plain)]
+    wide = max(symbol_text.width(text, strong if role == "size" else plain) for role, text in lines)
+    box = QRectF(0, 0, wide + 2 * PADDING, len(lines) * height + 2 * PADDING)
+    box.moveTopLeft(pointer + QPointF(BESIDE, BESIDE))
+    if box.right() > room.right() - 2:
+        box.moveRight(max(pointer.x() - BESIDE, room.left() + box.width() + 2))
+    if box.bottom() > room.bottom() - 2:
+        box.moveBottom(max(min(pointer.y() - BESIDE, room.bottom() - 2), room.top() + box.height() + 2))
+    painter.setPen(QPen(QColor(theme.rule)))
+    painter.setBrush(QColor(theme.raised))
+    painter.drawRect(box)
+    y = box.top() + PADDING + QFontMetricsF(plain).ascent()
+    for role, text in lines:
+        painter.setPen(QColor(theme.caution if role == "refusal" else theme.ink))
+        symbol_text.draw(painter, QPointF(box.left() + PADDING, y), text, strong if role == "size" else plain)
+        y += height
+    painter.setBrush(Qt.BrushStyle.NoBrush)
+    return box
+
+
+def _station_rows(scene: Scene, results: Results, index: int) -> list[str]:
+    rows = []
+    for keys in AT_STATION:
+        entries = []
+        for key in keys:
+            column = BY_KEY[key]
+            value = column.values(results)[index]
+            if value is None or (key.startswith("kt") and results.stations[index].site is None):
+                continue
+            signed = column.dimension == "share"
+            text = shown(value, column.dimension, scene.system, 1 if signed else 2, signed=signed)
+            unit = " %" if signed and text[-1].isdigit() else ""
+            entries.append(f"{column.symbol} {text}{unit}")
+        if entries:
+            rows.append("   ".join(entries))
+    return rows
+
+
+def _window_words(scene: Scene, size: Size, window: "RadiusWindow") -> str:
+    allowed = "" if window.allowed is None else size.shown(window.allowed, scene.system)
+    if window.needed is None:
+        return f"no radius reaches the asked factor; allowed {allowed}"
+    needed = size.shown(window.needed, scene.system)
+    if window.empty:
+        return f"radius window empty: needs {needed}, allowed {allowed} ({window.limited_by})"
+    return f"radius window {needed} to {allowed} ({window.limited_by})"
+
+
+def _wrapped(text: str, font: object) -> list[str]:
+    """The text in lines no wider than the readout may be."""
+    words, lines = text.split(" "), [""]
+    for word in words:
+        longer = f"{lines[-1]} {word}" if lines[-1] else word
+        if lines[-1] and symbol_text.width(longer, font) > WIDEST:  # type: ignore[arg-type]
+            lines.append(word)
+        else:
+            lines[-1] = longer
+    return lines
