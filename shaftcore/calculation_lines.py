@@ -11,7 +11,7 @@ from decimal import Decimal
 DIGITS = 6
 """Significant digits of every printed number."""
 
-_PLUS_NEGATIVE = re.compile(r"\+ \(−([\d.]+)\)(?!\^)")
+_PLUS_NEGATIVE = re.compile(r"\+ \(−([\d.]+|\([^()]+\))\)(?!\^)")
 _WHOLLY_NEGATIVE = re.compile(r"^\(−([\d.]+)\)$")
 """Signs that read better without parentheses: "a + (−2)" as "a − 2", "(−3)" alone as "−3"."""
 
@@ -54,6 +54,7 @@ def line(
     dimension: str,
     source: str,
     flag: str = "",
+    /,
     **put_in: float,
 ) -> Line:
     """A line whose `numbers` is a template with the names of `put_in` in braces."""

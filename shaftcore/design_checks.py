@@ -180,7 +180,7 @@ def _station_flags(
         if factors.held[:, i].any():
             yield Notice(
                 "Kf held",
-                "At so small a root radius the sensitivity rule would let Kf fall again; it is held at its peak.",
+                "For a root this sharp the formulas would let Kf fall again; it is held at its peak.",
                 station.place,
                 i,
             )

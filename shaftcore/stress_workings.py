@@ -16,9 +16,13 @@ def section_lines(results: Results, i: int) -> Iterator[Line]:
     """The section the nominal stress is taken on."""
     site = results.stations[i].site
     if site is not None:
-        for name, symbol in KINDS[site.kind].size_symbols.items():
-            words = {"d": "Net diameter", "D": "Large diameter", "h": "Height or depth", "r": "Root radius"}
-            yield given(symbol, words.get(name, "Size"), site.sizes[name], "length")
+        kind = KINDS[site.kind]
+        for name, symbol in kind.size_symbols.items():
+            if name not in kind.derived:
+                yield given(symbol, kind.size_labels[name], site.sizes[name], "length")
+        for name, (formula, numbers) in kind.derived.items():
+            symbol, label = kind.size_symbols[name], kind.size_labels[name]
+            yield line(symbol, label, formula, numbers, site.sizes[name], "length", "given", **site.sizes)
     else:
         yield given("d", "Diameter", float(results.judged.d[i]), "length")
     if results.judged.bore[i]:
@@ -42,7 +46,8 @@ def load_lines(results: Results, i: int) -> Iterator[Line]:
         if torque:
             yield given(f"T{mark}", f"Torque, {words}", torque, "torque", "statics")
         if normal:
-            yield given(f"N{mark}", f"Axial force, {words}, positive in tension", normal, "force", "statics")
+            sign = "" if mark else ", positive in tension"
+            yield given(f"N{mark}", f"Axial force, {words}{sign}", normal, "force", "statics")
 
 
 def _without_rounding(y: float, z: float) -> tuple[float, float]:
@@ -130,13 +135,13 @@ def joined_lines(results: Results, i: int) -> Iterator[Line]:
     kx = 1.0 if relieved else kf[1]
     compressed = kf[0] * s.bending_mean[i] + kx * s.axial_mean[i] < 0
     axial = "σ_ax,m" if relieved else "Kf,ax σ_ax,m"
-    normal = ("0", "0") if compressed else (f"(Kf,b σ_b,m + {axial})", "({kb} × {b} + {kx} × {x})")
-    torsion = ("Kfs τ_m", "{ks} × {t}") if steady else ("τ_m", "{t}")
+    normal = ("", "") if compressed else (f"(Kf,b σ_b,m + {axial})² + ", "({kb} × {b} + {kx} × {x})^2 + ")
+    torsion = ("3 (Kfs τ_m)²", "3 × ({ks} × {t})^2") if steady else ("3 τ_m²", "3 × {t}^2")
     flags = ["compressive normal mean counts as none"] * bool(compressed)
     flags += ["compression relieves by its nominal size only"] * bool(relieved and not compressed)
     flags += ["Kfs left off the steady torque, as chosen"] * (not steady and bool(s.torsion_mean[i]))
     yield line(
-        "σ_m'", "Equivalent mean", f"√({normal[0]}² + 3 ({torsion[0]})²)", f"√({normal[1]}^2 + 3 × ({torsion[1]})^2)",
+        "σ_m'", "Equivalent mean", f"√({normal[0]}{torsion[0]})", f"√({normal[1]}{torsion[1]})",
         float(judged.mean[i]), "stress", "shigley", "; ".join(flags), kb=kf[0], b=s.bending_mean[i], kx=kx,
         x=s.axial_mean[i], ks=kf[2], t=s.torsion_mean[i],
     )  # fmt: skip

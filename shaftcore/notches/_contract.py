@@ -88,7 +88,11 @@ class Fit:
 
 @dataclass(frozen=True)
 class RaiserKind:
-    """Everything the program knows about one kind of raiser."""
+    """Everything the program knows about one kind of raiser.
+
+    `size_symbols` and `size_labels` name the sizes of its sites; `derived` holds, for each size that
+    follows from others, its formula in words and as a template of a calculation line.
+    """
 
     key: str
     label: str
@@ -96,6 +100,8 @@ class RaiserKind:
     goes: Literal["at a step", "on a diameter"]
     words: str
     size_symbols: Mapping[str, str]
+    size_labels: Mapping[str, str]
+    derived: Mapping[str, tuple[str, str]]
     site: Callable[[Any, str, Around], Site]
     parameters: Callable[[Sizes], Sizes]
     fits: Mapping[str, Mapping[LoadSort, Fit]]

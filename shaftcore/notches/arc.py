@@ -6,6 +6,7 @@ from shaftcore.notches._contract import Sizes
 from shaftcore.records import ValidRange
 
 SIZE_SYMBOLS = {"d": "d", "D": "D", "h": "h", "r": "r"}
+SIZE_LABELS = {"d": "Net diameter", "D": "Large diameter", "h": "Step height or depth", "r": "Root radius"}
 DIN_RANGES = (ValidRange("r/h", 0.03, math.inf), ValidRange("d/D", 0.0, 0.98))
 
 

@@ -43,21 +43,7 @@ def din_steps(k: FormConstants, sizes: Mapping[str, float], symbol: str) -> tupl
     formula = f"1 + 1/√({k.under_root('r/t', 'r/d', 'd/D')})"
     numbers = f"1 + 1/√({k.under_root('{r}/{h}', '{r}/{d}', '{d}/{D}', ' × ')})"
     value = float(din_alpha(k, {name: np.array(size) for name, size in sizes.items()}))
-    return (
-        line(
-            symbol,
-            "Form number",
-            formula,
-            numbers,
-            value,
-            "ratio",
-            SOURCE,
-            d=sizes["d"],
-            D=sizes["D"],
-            h=sizes["h"],
-            r=sizes["r"],
-        ),
-    )
+    return (line(symbol, "Form number", formula, numbers, value, "ratio", SOURCE, **sizes),)
 
 
 def din_fit(

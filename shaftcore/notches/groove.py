@@ -8,7 +8,7 @@ import numpy as np
 
 from shaftcore.declared import choice, quantity, text
 from shaftcore.notches._contract import Around, Array, Fit, Handle, LoadSort, RaiserKind, Site
-from shaftcore.notches.arc import DIN_RANGES, SIZE_SYMBOLS, arc_along, parameters
+from shaftcore.notches.arc import DIN_RANGES, SIZE_LABELS, SIZE_SYMBOLS, arc_along, parameters
 from shaftcore.notches.chart_polynomial import Piece, chart_fit
 from shaftcore.notches.din_form import FormConstants, din_fit
 from shaftcore.surface import FINISHES
@@ -106,6 +106,8 @@ KIND = RaiserKind(
     goes="on a diameter",
     words="A round-bottomed groove turned into one diameter.",
     size_symbols=SIZE_SYMBOLS,
+    size_labels=SIZE_LABELS,
+    derived={"d": ("D − 2 h", "{D} − 2 × {h}")},
     site=_site,
     parameters=parameters,
     fits=FITS,

@@ -12,7 +12,7 @@ import numpy as np
 
 from shaftcore.declared import choice, quantity
 from shaftcore.notches._contract import Around, Array, Fit, Handle, LoadSort, RaiserKind, Site
-from shaftcore.notches.arc import DIN_RANGES, SIZE_SYMBOLS, arc_along, arc_turn, parameters
+from shaftcore.notches.arc import DIN_RANGES, SIZE_LABELS, SIZE_SYMBOLS, arc_along, arc_turn, parameters
 from shaftcore.notches.chart_polynomial import CORNER_IN_SHEAR, Piece, chart_fit
 from shaftcore.notches.din_form import FormConstants, din_fit
 from shaftcore.surface import FINISHES
@@ -141,6 +141,8 @@ KIND = RaiserKind(
     goes="at a step",
     words="A step in diameter; the fillet is its radius.",
     size_symbols=SIZE_SYMBOLS,
+    size_labels=SIZE_LABELS,
+    derived={"h": ("(D − d)/2", "({D} − {d})/2")},
     site=_site,
     parameters=parameters,
     fits=FITS,
