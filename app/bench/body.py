@@ -1,10 +1,12 @@
 """The shaft itself: metal, outline, edges of steps and raisers, broken-out bores, centre line."""
 
+from functools import lru_cache
+
 import numpy as np
 from PySide6.QtCore import QLineF, QPointF, Qt
-from PySide6.QtGui import QBrush, QColor, QPainter, QPen, QPixmap, QPolygonF, QTransform
+from PySide6.QtGui import QBrush, QColor, QImage, QPainter, QPen, QPolygonF, QTransform
 
-from app.bench.polygons import draw_weighted, hairline, polygon
+from app.bench.polygons import chain_line, draw_weighted, hairline, polygon
 from app.bench.stage import Stage
 from shaftcore.abutment import largest_fillet
 from shaftcore.notches._contract import Array
@@ -22,9 +24,8 @@ def draw_metal(painter: QPainter, stage: Stage) -> None:
     painter.setPen(Qt.PenStyle.NoPen)
     painter.setBrush(QColor(stage.theme.metal))
     painter.drawPolygon(polygon(both))
-    hatch = _hatch(stage)
     for first, last in _hollow_runs(stage):
-        _draw_broken_out(painter, stage, first, last, hatch)
+        _draw_broken_out(painter, stage, first, last)
 
 
 def draw_edges(painter: QPainter, stage: Stage) -> None:
@@ -36,18 +37,12 @@ def draw_edges(painter: QPainter, stage: Stage) -> None:
     painter.setPen(hairline(theme.metal_edge))
     painter.drawLines(lines)
     painter.drawLines(_seating_faces(stage))
-    painter.setPen(_centre_pen(theme.faint))
+    painter.setPen(chain_line(theme.faint))
     begin, end = (frame.x(x) for x in (0.0, stage.shaft.length))
     painter.drawLine(QLineF(begin - CENTRE_OVERHANG, frame.axis, end + CENTRE_OVERHANG, frame.axis))
     painter.setRenderHint(QPainter.RenderHint.Antialiasing, True)
     closed = np.vstack([stage.upper_edge, stage.lower_edge[::-1], stage.upper_edge[:1]])
     draw_weighted(painter, [polygon(closed)], theme.metal_edge, OUTLINE_WEIGHT)
-
-
-def _centre_pen(colour: str) -> QPen:
-    pen = hairline(colour)
-    pen.setDashPattern([14.0, 4.0, 3.0, 4.0])
-    return pen
 
 
 def _visible_edges(stage: Stage) -> list[QLineF]:
@@ -100,7 +95,7 @@ def _hollow_runs(stage: Stage) -> list[tuple[int, int]]:
     return list(zip(begins, ends, strict=True))
 
 
-def _draw_broken_out(painter: QPainter, stage: Stage, first: int, last: int, hatch: QBrush) -> None:
+def _draw_broken_out(painter: QPainter, stage: Stage, first: int, last: int) -> None:
     """The lower half of a bored run cut open: hatched wall, empty bore, a break line where it ends inside."""
     frame, profile = stage.frame, stage.plan.profile
     begin, end = float(profile.faces[first]), float(profile.faces[last + 1])
@@ -114,7 +109,7 @@ def _draw_broken_out(painter: QPainter, stage: Stage, first: int, last: int, hat
     wall = np.vstack([left, lower[(lower[:, 0] >= x0) & (lower[:, 0] <= x1)], right[::-1], [[x1, frame.axis]]])
     wall = np.vstack([wall, [[x0, frame.axis]]])
     painter.setPen(Qt.PenStyle.NoPen)
-    painter.setBrush(hatch)
+    painter.setBrush(_hatch(stage.theme.metal, stage.theme.faint, stage.pixel_ratio))
     painter.drawPolygon(polygon(wall))
     bore = frame.points(_bore_points(stage, first, last), mirrored=True)
     painter.setBrush(QColor(stage.theme.paper))
@@ -145,18 +140,17 @@ def _break(stage: Stage, x: float, sense: float) -> Array:
     return np.column_stack([beyond + 2.2 * np.sin(depth / 5.0), frame.axis + depth])
 
 
-def _hatch(stage: Stage) -> QBrush:
+@lru_cache(maxsize=8)
+def _hatch(metal: str, ink: str, ratio: float) -> QBrush:
     """Fine 45 degree lines on the metal's colour, as a tile of device pixels."""
-    ratio = stage.pixel_ratio
     size = max(round(HATCH_SPACING * ratio), 4)
-    tile = QPixmap(size, size)
-    tile.fill(QColor(stage.theme.metal))
-    painter = QPainter(tile)
-    painter.setRenderHint(QPainter.RenderHint.Antialiasing)
-    painter.setPen(QPen(QColor(stage.theme.faint), 0.8 * ratio))
-    for shift in (-size, 0, size):
-        painter.drawLine(QPointF(shift, size), QPointF(shift + size, 0))
-    painter.end()
+    tile = QImage(size, size, QImage.Format.Format_RGB32)
+    tile.fill(QColor(metal))
+    with QPainter(tile) as painter:
+        painter.setRenderHint(QPainter.RenderHint.Antialiasing)
+        painter.setPen(QPen(QColor(ink), 0.8 * ratio))
+        for shift in (-size, 0, size):
+            painter.drawLine(QPointF(shift, size), QPointF(shift + size, 0))
     brush = QBrush(tile)
     brush.setTransform(QTransform.fromScale(1 / ratio, 1 / ratio))
     return brush

@@ -8,7 +8,7 @@ from app.bench.body import draw_edges, draw_metal, part_of_outline
 from app.bench.callouts import Callout, Offsets, draw_callouts, place_callouts
 from app.bench.dimensions import chosen_raiser, chosen_segment, draw_segment_dimensions
 from app.bench.foot import STATION_LINE, draw_foot
-from app.bench.polygons import draw_weighted, hairline
+from app.bench.polygons import chain_line, draw_weighted, hairline
 from app.bench.stage import Stage, Type
 from app.bench.symbols import Glyph, draw_glyphs, glyphs_of
 from app.bench.utilisation_band import draw_band, draw_ticks, utilisation_columns
@@ -89,9 +89,7 @@ class Drawing:
 
     def _paint_empty_axis(self, painter: QPainter) -> None:
         stage = self.stage
-        pen = hairline(stage.theme.faint)
-        pen.setDashPattern([14.0, 4.0, 3.0, 4.0])
-        painter.setPen(pen)
+        painter.setPen(chain_line(stage.theme.faint))
         painter.drawLine(QLineF(40.0, stage.frame.axis, stage.frame.width - 20.0, stage.frame.axis))
 
     def _paint_hint(self, painter: QPainter) -> None:

@@ -1,10 +1,11 @@
 """The strip under the shaft: station numbers, marks of x in the user's unit, legend of the band."""
 
 import math
+from functools import lru_cache
 
 import numpy as np
 from PySide6.QtCore import QLineF, QPointF, QRectF
-from PySide6.QtGui import QPainter
+from PySide6.QtGui import QBrush, QPainter
 
 from app.bench.colour_scale import TOP, colours_of
 from app.bench.polygons import hairline
@@ -17,7 +18,6 @@ STATION_LINE, RULER_LINE, LEGEND_LINE = 12.0, 19.0, 52.0
 """Below the strip's top: baseline of the numbers, the ruler's line, baseline of the legend."""
 MARK_SPACING = 90.0
 LEGEND_LENGTH, LEGEND_HEIGHT = 180.0, 6.0
-LEGEND_MARKS = (0.0, 0.5, 1.0)
 
 
 def draw_foot(painter: QPainter, stage: Stage, letters: Type) -> None:
@@ -120,11 +120,10 @@ def _draw_legend(painter: QPainter, stage: Stage, letters: Type) -> None:
     """The colour scale lying along x, its marks and what the ticks mean."""
     left, baseline = LEFT_MARGIN, stage.foot + LEGEND_LINE
     middle = baseline - letters.ascent / 2 + 1
-    columns = np.linspace(0.0, TOP, round(LEGEND_LENGTH * stage.pixel_ratio))
     bar = QRectF(left, middle - LEGEND_HEIGHT / 2, LEGEND_LENGTH, LEGEND_HEIGHT)
     painter.setRenderHint(QPainter.RenderHint.Antialiasing, False)
     painter.setBrushOrigin(bar.topLeft())
-    painter.fillRect(bar, row_brush(colours_of(columns), stage.pixel_ratio))
+    painter.fillRect(bar, _legend_brush(stage.pixel_ratio))
     painter.setBrushOrigin(0, 0)
     painter.setPen(hairline(stage.theme.ink))
     over = left + LEGEND_LENGTH / TOP
@@ -133,3 +132,8 @@ def _draw_legend(painter: QPainter, stage: Stage, letters: Type) -> None:
     painter.setPen(hairline(stage.theme.faint))
     words = f"0 to {TOP:g} (n asked / n); ticks: above 1, asked factor missed"
     painter.drawText(QPointF(left + LEGEND_LENGTH + 10, baseline), words)
+
+
+@lru_cache(maxsize=8)
+def _legend_brush(ratio: float) -> QBrush:
+    return row_brush(colours_of(np.linspace(0.0, TOP, round(LEGEND_LENGTH * ratio))), ratio)

@@ -1,5 +1,7 @@
 """Arrays of points to Qt's polygons, and lines of a weight drawn the quick way."""
 
+from functools import lru_cache
+
 import numpy as np
 from PySide6.QtCore import QPointF, Qt
 from PySide6.QtGui import QColor, QPainter, QPen, QPolygonF
@@ -18,14 +20,32 @@ def polygon(points: Array) -> QPolygonF:
     return made
 
 
-def hairline(colour: str | QColor) -> QPen:
+def hairline(colour: str) -> QPen:
     """The thinnest line there is; Qt draws it some twenty times as fast as a wide smooth one."""
-    pen = QPen(QColor(colour))
-    pen.setWidth(0)
+    return QPen(_pen(colour, 0.0))
+
+
+def stroke(colour: str, weight: float) -> QPen:
+    """A pen of a true width, for short lines."""
+    return QPen(_pen(colour, weight))
+
+
+@lru_cache(maxsize=64)
+def _pen(colour: str, weight: float) -> QPen:
+    pen = QPen(QColor(colour), weight)
+    pen.setCapStyle(Qt.PenCapStyle.FlatCap)
+    pen.setJoinStyle(Qt.PenJoinStyle.MiterJoin)
     return pen
 
 
-def draw_weighted(painter: QPainter, lines: list[QPolygonF], colour: str | QColor, weight: float) -> None:
+def chain_line(colour: str) -> QPen:
+    """The fine dash-dot line of an axis."""
+    pen = hairline(colour)
+    pen.setDashPattern([14.0, 4.0, 3.0, 4.0])
+    return pen
+
+
+def draw_weighted(painter: QPainter, lines: list[QPolygonF], colour: str, weight: float) -> None:
     """Long smooth lines about `weight` pixels wide, as hairlines side by side.
 
     The hairlines lie a device pixel apart down one diagonal, so a weight holds at every scale
@@ -43,11 +63,3 @@ def draw_weighted(painter: QPainter, lines: list[QPolygonF], colour: str | QColo
         for line in lines:
             painter.drawPolyline(line)
         painter.translate(-offset)
-
-
-def stroke(colour: str | QColor, weight: float) -> QPen:
-    """A pen of a true width, for short lines."""
-    pen = QPen(QColor(colour), weight)
-    pen.setCapStyle(Qt.PenCapStyle.FlatCap)
-    pen.setJoinStyle(Qt.PenJoinStyle.MiterJoin)
-    return pen

@@ -5,8 +5,9 @@ import itertools
 import matplotlib
 import numpy as np
 import pytest
-from PySide6.QtCore import QPointF, QRectF
-from PySide6.QtGui import QImage, QPainter
+from PySide6.QtCore import QEvent, QPoint, QPointF, QRectF, Qt
+from PySide6.QtGui import QImage, QPainter, QWheelEvent
+from PySide6.QtWidgets import QApplication
 from pytestqt.qtbot import QtBot
 
 from app.bench.colour_scale import TABLE, TOP, colours_of
@@ -307,3 +308,63 @@ def test_choosing_shows_and_hover_costs_no_new_layout(bench: BenchView) -> None:
     bench.document.point_at(100.0)
     bench.grab()
     assert bench._drawing is laid_out
+
+
+# events ---------------------------------------------------------------------------------------
+
+
+class Recorder:
+    """A hand that takes nothing and remembers what it was told."""
+
+    def __init__(self) -> None:
+        self.told: list[str] = []
+
+    def __getattr__(self, name: str):  # type: ignore[no-untyped-def]
+        return lambda *given: self.told.append(name)
+
+
+def test_pointer_and_keys_reach_the_hand_and_what_it_leaves_fits_again(bench: BenchView, qtbot: QtBot) -> None:
+    bench.document.load(stepped(), None)
+    hand = Recorder()
+    bench.hand = hand  # type: ignore[assignment]
+    bench.zoom_about(2.0, QPointF(400, 120))
+    qtbot.keyClick(bench, Qt.Key.Key_0)
+    assert bench.ruler.fitted
+    bench.zoom_about(2.0, QPointF(400, 120))
+    qtbot.mouseClick(bench, Qt.MouseButton.LeftButton, pos=QPoint(10, 10))
+    assert not bench.ruler.fitted
+    qtbot.mouseDClick(bench, Qt.MouseButton.LeftButton, pos=QPoint(10, 10))
+    assert bench.ruler.fitted
+    bench.grab()
+    assert {"key", "press", "release", "double_click", "overlay"} <= set(hand.told)
+
+
+def test_wheel_pans_and_with_ctrl_zooms_about_the_pointer(bench: BenchView) -> None:
+    bench.document.load(stepped(), None)
+    pos = QPointF(300.0, 100.0)
+
+    def turn(modifier: Qt.KeyboardModifier) -> None:
+        event = QWheelEvent(
+            pos, pos, QPoint(), QPoint(0, 120), Qt.MouseButton.NoButton, modifier, Qt.ScrollPhase.NoScrollPhase, False
+        )
+        QApplication.sendEvent(bench, event)
+
+    place, scale = bench.to_shaft(pos), bench.ruler.scale
+    turn(Qt.KeyboardModifier.ControlModifier)
+    assert bench.ruler.scale > scale
+    assert bench.to_shaft(pos) == pytest.approx(place)
+    scale = bench.ruler.scale
+    turn(Qt.KeyboardModifier.NoModifier)
+    assert bench.ruler.scale == scale
+    assert bench.to_shaft(pos)[0] < place[0]
+
+
+def test_the_pointer_is_told_to_everyone(bench: BenchView, qtbot: QtBot) -> None:
+    bench.document.load(stepped(), None)
+    heard: list[float | None] = []
+    bench.document.hovered.connect(heard.append)
+    at = bench.to_screen(100.0, 0.0).toPoint()
+    qtbot.mouseMove(bench, at)
+    QApplication.sendEvent(bench, QEvent(QEvent.Type.Leave))
+    assert heard[0] == pytest.approx(100.0, abs=1.0 / bench.ruler.scale)
+    assert heard[-1] is None
