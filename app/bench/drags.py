@@ -76,7 +76,8 @@ class Drag(Gesture):
         scene, window = self.document.scene, self.window
         if window is not None:
             draw_window(painter, scene.shaft, self.view.frame, self.size, window, self.view.theme)
-        self.hand.read_out(painter, drag_lines(scene, self.size, self.value, self.hand.typed, window))
+        lines = drag_lines(scene, self.size, self.value, self.hand.typed, window)
+        self.hand.read_out(painter, lines, clear=None if self.grip.is_line else QPointF(self.grip.x, self.grip.y))
 
     def _at(self, pos: QPointF) -> float:
         """The size for a pointer at `pos`."""

@@ -305,10 +305,12 @@ class BenchHand(QObject):
             self._stamps.draw(painter, self.grips, self._hovered, self.view.theme)
             self.keys.paint(painter)
 
-    def read_out(self, painter: QPainter, lines: Lines, at: QPointF | None = None) -> None:
-        """Lines beside the pointer or a place, and why a size was refused."""
+    def read_out(
+        self, painter: QPainter, lines: Lines, at: QPointF | None = None, clear: QPointF | None = None
+    ) -> None:
+        """Lines beside the pointer or a place, and why a size was refused; `clear` is left open to sight."""
         lines = [*lines, *([("refusal", self.refusal)] if self.refusal else [])]
-        draw_readout(painter, lines, at or self._pointer, QRectF(self.view.rect()), self.view.theme)
+        draw_readout(painter, lines, at or self._pointer, QRectF(self.view.rect()), self.view.theme, clear)
 
 
 def make_hand(view: BenchView, document: Document) -> BenchHand:

@@ -2,8 +2,8 @@
 
 from typing import TYPE_CHECKING
 
-from PySide6.QtCore import QPointF, QRectF, Qt
-from PySide6.QtGui import QColor, QFontMetricsF, QPainter, QPen
+from PySide6.QtCore import QPointF, QRectF, QSizeF, Qt
+from PySide6.QtGui import QColor, QFont, QFontMetricsF, QPainter, QPen
 
 from app import symbol_text
 from app.bench.sizes import Size
@@ -18,11 +18,11 @@ if TYPE_CHECKING:
     from shaftcore.radius_window import RadiusWindow
 
 Lines = list[tuple[str, str]]
-"""(role, text): role is "size", "plain" or "refusal"."""
+"""(role, text): role is "size", "plain", "symbols" (set as in print) or "refusal"."""
 
 AT_STATION = (("kt_bending", "kt_torsion"), ("n", "margin"))
 """Station quantities by row of the readout."""
-PADDING, BESIDE, WIDEST = 8.0, 18.0, 380.0
+PADDING, BESIDE, WIDEST, CLEAR = 8.0, 16.0, 380.0, 15.0
 
 
 def station_for(results: Results | None, chosen: Selection | None) -> int | None:
@@ -43,7 +43,7 @@ def drag_lines(scene: Scene, size: Size, value: float | None, typed: str, window
         return lines
     index = station_for(scene.results, size.chosen)
     if index is not None:
-        lines += [("plain", row) for row in _station_rows(scene, scene.results, index)]
+        lines += [("symbols", row) for row in _station_rows(scene, scene.results, index)]
     worst = scene.results.governing
     margin = shown(scene.results.least_margin, "share", scene.system, 1, signed=True)
     lines.append(("plain", f"worst: {scene.results.stations[worst].label}   margin {margin} %"))
@@ -67,27 +67,46 @@ def sketch_lines(scene: Scene, sketch: Sketch, typed: str) -> Lines:
     return [*lines, ("plain", "Tab: the other   click or Enter: next step   Esc: done")]
 
 
-def draw_readout(painter: QPainter, lines: Lines, pointer: QPointF, room: QRectF, theme: Theme) -> QRectF:
-    """Draw the lines in a quiet box beside the pointer and inside `room`; returns the box."""
+def draw_readout(
+    painter: QPainter, lines: Lines, pointer: QPointF, room: QRectF, theme: Theme, clear: QPointF | None = None
+) -> QRectF:
+    """Draw the lines in a quiet box beside the pointer and inside `room`, off `clear` where it can be."""
     plain, strong = text_font(9.0), text_font(9.0, bold=True)
     height = QFontMetricsF(plain).height() + 2
-    lines = [(role, part) for role, text in lines for part in _wrapped(text, plain)]
-    wide = max(symbol_text.width(text, strong if role == "size" else plain) for role, text in lines)
-    box = QRectF(0, 0, wide + 2 * PADDING, len(lines) * height + 2 * PADDING)
-    box.moveTopLeft(pointer + QPointF(BESIDE, BESIDE))
-    if box.right() > room.right() - 2:
-        box.moveRight(max(pointer.x() - BESIDE, room.left() + box.width() + 2))
-    if box.bottom() > room.bottom() - 2:
-        box.moveBottom(max(min(pointer.y() - BESIDE, room.bottom() - 2), room.top() + box.height() + 2))
+    lines = [(role, part) for role, text in lines for part in _wrapped(role, text, plain)]
+    wide = max(_width(role, text, strong if role == "size" else plain) for role, text in lines)
+    size = QSizeF(wide + 2 * PADDING, len(lines) * height + 2 * PADDING)
+    box = _beside(pointer, size, room, clear)
     painter.setPen(QPen(QColor(theme.rule)))
     painter.setBrush(QColor(theme.raised))
     painter.drawRect(box)
+    painter.setBrush(Qt.BrushStyle.NoBrush)
     y = box.top() + PADDING + QFontMetricsF(plain).ascent()
     for role, text in lines:
         painter.setPen(QColor(theme.caution if role == "refusal" else theme.ink))
-        symbol_text.draw(painter, QPointF(box.left() + PADDING, y), text, strong if role == "size" else plain)
+        at = QPointF(box.left() + PADDING, y)
+        if role == "symbols":
+            symbol_text.draw(painter, at, text, plain)
+        else:
+            painter.setFont(strong if role == "size" else plain)
+            painter.drawText(at, text)
         y += height
-    painter.setBrush(Qt.BrushStyle.NoBrush)
+    return box
+
+
+def _beside(pointer: QPointF, size: QSizeF, room: QRectF, clear: QPointF | None) -> QRectF:
+    """A box below, above, right or left of the pointer that leaves `clear` open; below right if none does."""
+    right, below = pointer.x() + BESIDE, pointer.y() + BESIDE
+    left, above = pointer.x() - BESIDE - size.width(), pointer.y() - BESIDE - size.height()
+    corners = [QPointF(x, y) for x in (right, left) for y in (below, above)]
+    boxes = [_kept_in(QRectF(corner, size), room) for corner in corners]
+    taken = [QRectF(point - QPointF(CLEAR, CLEAR), QSizeF(2 * CLEAR, 2 * CLEAR)) for point in (clear, pointer) if point]
+    return min(boxes, key=lambda box: sum(box.intersects(rect) for rect in taken))
+
+
+def _kept_in(box: QRectF, room: QRectF) -> QRectF:
+    box.moveLeft(max(min(box.left(), room.right() - box.width() - 2), room.left() + 2))
+    box.moveTop(max(min(box.top(), room.bottom() - box.height() - 2), room.top() + 2))
     return box
 
 
@@ -119,12 +138,16 @@ def _window_words(scene: Scene, size: Size, window: "RadiusWindow") -> str:
     return f"radius window {needed} to {allowed} ({window.limited_by})"
 
 
-def _wrapped(text: str, font: object) -> list[str]:
+def _width(role: str, text: str, font: QFont) -> float:
+    return symbol_text.width(text, font) if role == "symbols" else QFontMetricsF(font).horizontalAdvance(text)
+
+
+def _wrapped(role: str, text: str, font: QFont) -> list[str]:
     """The text in lines no wider than the readout may be."""
-    words, lines = text.split(" "), [""]
-    for word in words:
+    lines = [""]
+    for word in text.split(" "):
         longer = f"{lines[-1]} {word}" if lines[-1] else word
-        if lines[-1] and symbol_text.width(longer, font) > WIDEST:  # type: ignore[arg-type]
+        if lines[-1] and _width(role, longer, font) > WIDEST:
             lines.append(word)
         else:
             lines[-1] = longer
