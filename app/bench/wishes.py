@@ -64,15 +64,16 @@ def _groups(glyphs: list[Glyph]) -> list[list[Glyph]]:
 
 
 def _lines(stage: Stage, members: list[Load | Support]) -> list[str]:
-    """Names once each, the words of every member, and the place of a chosen one."""
-    lines: list[str] = []
+    """One shared name over the words of all members, else each one's name before its words."""
+    names = {thing.name for thing in members if thing.name}
+    shared = len(names) == 1 and not any(isinstance(thing, Support) for thing in members)
+    lines = list(names) if shared else []
     for thing in members:
         if isinstance(thing, Support):
             lines.append(f"{thing.name or thing.label}, {support_words(thing)}")
         else:
-            if thing.name and thing.name not in lines:
-                lines.append(thing.name)
-            lines.append(load_words(thing, stage.scene.system))
+            words = load_words(thing, stage.scene.system)
+            lines.append(words if shared or not thing.name else f"{thing.name} {words}")
         if stage.chosen(thing.id):
             lines.append(f"x {quantity(thing.x, 'length', stage.scene.system)}")
     return lines
