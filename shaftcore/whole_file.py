@@ -40,12 +40,13 @@ def write_whole_file(path: Path, content: bytes) -> None:
             beside.chmod(target.stat().st_mode & 0o7777)
         os.replace(beside, target)
     except (OSError, ValueError) as error:
-        if beside is not None:
-            _removed(beside)
         raise FileAccessError(
             f"{path} could not be saved: {reason_of(error)}. What stood there before is untouched; "
             "save under another name or in another folder."
         ) from error
+    finally:
+        if beside is not None:
+            _removed(beside)
 
 
 def read_at_most(path: Path, most: int) -> bytes:
@@ -65,7 +66,7 @@ def reason_of(error: OSError | ValueError) -> str:
 
 
 def _removed(beside: Path) -> None:
-    """Take the half-written file away; where even that fails there is nothing more to do."""
+    """Take away what was written beside unless it is in place; where even that fails there is nothing more to do."""
     try:
         beside.unlink(missing_ok=True)
     except OSError:

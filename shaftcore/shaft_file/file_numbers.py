@@ -13,6 +13,7 @@ from shaftcore.units import Unit
 class Number(float):
     """A number of the file that keeps the digits it was written with."""
 
+    __slots__ = ("text",)
     text: str
 
     def __new__(cls, text: str) -> "Number":

@@ -6,6 +6,7 @@ from typing import Any
 from shaftcore.errors import ShaftFileError
 from shaftcore.records import Problem
 from shaftcore.shaft_file.file_numbers import Number
+from shaftcore.shaft_file.json_text import shown
 
 FORMAT = "filletwright shaft"
 VERSION = 1
@@ -55,6 +56,4 @@ def _version(content: dict[str, Any], newest: int) -> int:
 
 
 def _shown(content: dict[str, Any], key: str) -> str:
-    value = content.get(key, "missing")
-    text = value.text if isinstance(value, Number) else str(value) if isinstance(value, str | bool) else "no such word"
-    return repr(text[:40])
+    return shown(content[key]) if key in content else "missing"

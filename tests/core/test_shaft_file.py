@@ -441,6 +441,29 @@ def test_a_failed_save_leaves_the_old_file(tmp_path: Path, monkeypatch: pytest.M
     assert os.listdir(tmp_path) == ["a.shaft.json"]
 
 
+def test_a_stopped_save_leaves_the_old_file(tmp_path: Path, monkeypatch: pytest.MonkeyPatch) -> None:
+    path = tmp_path / "a.shaft.json"
+    path.write_text("old", encoding="utf-8")
+
+    def stop(*_: Any) -> None:
+        raise KeyboardInterrupt
+
+    monkeypatch.setattr(whole_file.os, "replace", stop)
+    with pytest.raises(KeyboardInterrupt):
+        write_shaft(SHAFT, path)
+    assert path.read_text(encoding="utf-8") == "old"
+    assert os.listdir(tmp_path) == ["a.shaft.json"]
+
+
+def test_a_read_only_file_is_not_written_over(tmp_path: Path, monkeypatch: pytest.MonkeyPatch) -> None:
+    path = tmp_path / "a.shaft.json"
+    path.write_text("old", encoding="utf-8")
+    monkeypatch.setattr(whole_file.os, "access", lambda *_: False)
+    with pytest.raises(FileAccessError, match="permission is denied"):
+        write_shaft(SHAFT, path)
+    assert path.read_text(encoding="utf-8") == "old"
+
+
 def test_saving_through_a_link_keeps_the_link(tmp_path: Path) -> None:
     (tmp_path / "real").mkdir()
     link = tmp_path / "link.shaft.json"
