@@ -6,7 +6,7 @@ from collections.abc import Callable
 from reportlab.lib.units import mm
 from reportlab.platypus import Flowable, Spacer
 
-from shaftcore.sheet.chart_page import lay_in, vector_page
+from shaftcore.sheet.chart_page import lay_in, vector_pages
 from shaftcore.sheet.closing import limits_and_release, notices
 from shaftcore.sheet.drawing import shaft_drawing
 from shaftcore.sheet.edition import Edition
@@ -37,17 +37,18 @@ def sheet_bytes(edition: Edition, say: Say, pause: Pause) -> bytes:
     width = paper.width / mm
     drawing, height = shaft_drawing(edition, width)
     rooms = {"drawing": (width, height), "traces": (width, paper.height / mm - 10)}
-    charts = {"drawing": vector_page(drawing)}
     pause()
-    say(0.25, "Drawing the traces")
-    charts["traces"] = vector_page(traces(edition, *rooms["traces"]))
+    say(0.15, "Drawing the traces")
+    figures = {"drawing": drawing, "traces": traces(edition, *rooms["traces"])}
+    pause()
+    charts = vector_pages(figures.values())
     pause()
     say(0.45, "Setting the pages")
     pages = _set(edition, rooms, 0, pause)[0]
     say(0.7, "Numbering the pages")
     _, text, places = _set(edition, rooms, pages, pause)
     say(0.85, "Laying in the drawings")
-    return lay_in(text, charts, places, _about(edition))
+    return lay_in(text, charts, [places[name] for name in figures], _about(edition))
 
 
 def _set(

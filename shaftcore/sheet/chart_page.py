@@ -2,20 +2,17 @@
 
 import io
 import threading
-from collections.abc import Iterator, Mapping
+from collections.abc import Iterable, Iterator, Mapping, Sequence
 from contextlib import contextmanager
 from typing import Any
 
 import matplotlib
 import pypdf
-from matplotlib.backends.backend_pdf import FigureCanvasPdf
+from matplotlib.backends.backend_pdf import FigureCanvasPdf, PdfPages
 from matplotlib.figure import Figure
 from matplotlib.font_manager import FontProperties
 
 from shaftcore.units import INCH
-
-POINT = INCH / 72
-"""Millimetres in a point."""
 
 _WRITING = threading.Lock()
 
@@ -32,11 +29,12 @@ def figure(width: float, height: float) -> Figure:
     return made
 
 
-def vector_page(drawn: Figure) -> bytes:
-    """The figure as a PDF of one page, the same bytes every time, its text selectable."""
+def vector_pages(drawn: Iterable[Figure]) -> bytes:
+    """The figures as pages of one PDF, fonts shared, the same bytes every time, their text selectable."""
     file = io.BytesIO()
-    with _whole_fonts():
-        drawn.savefig(file, format="pdf", metadata={"CreationDate": None, "Creator": None, "Producer": None})
+    with _whole_fonts(), PdfPages(file, metadata={"CreationDate": None, "Creator": None, "Producer": None}) as pages:
+        for one in drawn:
+            pages.savefig(one)
     return file.getvalue()
 
 
@@ -56,13 +54,10 @@ def _whole_fonts() -> Iterator[None]:
             matplotlib.rcParams["pdf.fonttype"] = before
 
 
-def lay_in(
-    text: bytes, charts: Mapping[str, bytes], places: Mapping[str, tuple[int, float, float]], about: Mapping[str, str]
-) -> bytes:
-    """The sheet with each chart merged as vectors at its place (page, x, y in points)."""
+def lay_in(text: bytes, charts: bytes, places: Sequence[tuple[int, float, float]], about: Mapping[str, str]) -> bytes:
+    """The sheet with each page of `charts` merged as vectors at its place (page, x, y in points)."""
     writer = pypdf.PdfWriter(clone_from=io.BytesIO(text))
-    for name, (page, x, y) in places.items():
-        chart = pypdf.PdfReader(io.BytesIO(charts[name])).pages[0]
+    for chart, (page, x, y) in zip(pypdf.PdfReader(io.BytesIO(charts)).pages, places, strict=True):
         writer.pages[page].merge_transformed_page(chart, pypdf.Transformation().translate(x, y), over=True)
     writer.add_metadata(dict(about))
     writer.page_mode = "/UseOutlines"

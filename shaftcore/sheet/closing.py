@@ -40,6 +40,9 @@ CAUTIONS = (
     "elements can give higher factors than the published charts.",
     "Strengths are those entered; test pieces and large forgings can differ.",
 )
+STATED = ("given", "judgement")
+"""Where a number is the user's own; no literature."""
+
 NOTE = "blend without step, no grinding burn"
 
 
@@ -111,7 +114,7 @@ def _call_outs(edition: Edition) -> list[Flowable]:
 
 def sources_used(edition: Edition) -> list[str]:
     """Keys of the sources behind the numbers of this sheet."""
-    return [key for key in dict.fromkeys(_source_keys(edition)) if key in SOURCES]
+    return [key for key in dict.fromkeys(_source_keys(edition)) if key in SOURCES and key not in STATED]
 
 
 def _source_keys(edition: Edition) -> Iterator[str]:
@@ -141,5 +144,5 @@ def _signatures(edition: Edition) -> Table:
         ("LEFTPADDING", (0, 0), (-1, -1), PAD),
         ("TOPPADDING", (0, 0), (-1, -1), 3),
         ("BOTTOMPADDING", (0, 0), (-1, -1), 5),
-        rowHeights=[8 * mm, None, 10 * mm, 16 * mm],
+        rowHeights=[7.5 * mm, None, 9 * mm, 14 * mm],
     )
