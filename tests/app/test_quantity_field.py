@@ -71,6 +71,10 @@ def test_units_of_either_system_are_converted(text: str, declaration: Quantity, 
         assert parse(text, declaration, system) == pytest.approx(value, rel=1e-6)
 
 
+def test_the_end_of_a_range_is_met_in_either_unit() -> None:
+    assert parse("3937.00787401575 in", LENGTH, "SI") == 1e5
+
+
 def test_a_bare_number_is_in_the_unit_of_the_system() -> None:
     assert parse("2", LENGTH, "US") == pytest.approx(50.8)
     assert parse("0,125", LENGTH, "US") == pytest.approx(3.175)
@@ -94,6 +98,7 @@ def test_a_bare_number_is_in_the_unit_of_the_system() -> None:
         "1e999",
         "0",
         "-3",
+        "100001",
         "1e6",
     ],
 )
@@ -142,6 +147,7 @@ def test_numbers_are_shown_with_fixed_decimals_groups_and_a_true_minus() -> None
     assert shown(math.inf, "ratio", "SI") == "unloaded"
     assert shown(None, "length", "SI") == "–"
     assert shown(7, "", "SI") == "7"
+    assert shown(100, "temperature", "US") == "212"
     assert with_unit(25.4, "length", "US") == "1.0000\u00a0in"
     assert unit_symbol("stress", "US") == "ksi"
 
