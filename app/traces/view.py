@@ -141,6 +141,8 @@ class TraceView(QWidget):
     @guarded
     def _hover(self, x: float | None) -> None:
         before, self._hovered = self._hovered, x
+        if self._scene.live:  # a gesture has the pointer; what it moves is read, not the place it is at
+            return
         for place in (before, x):
             if place is not None:
                 self.update(QRect(int(self.ruler.to_px(place)) - 2, 0, 5, self.height()))
@@ -197,7 +199,8 @@ class TraceView(QWidget):
         ]
         self.picture.paint(painter, frame, touched)
         if self._scene.results is not None:
-            readout = Readout(self._scene, self._scene.results, self._hovered, self.ruler)
+            hovered = None if self._scene.live else self._hovered
+            readout = Readout(self._scene, self._scene.results, hovered, self.ruler)
             readout.paint(painter, frame, self.picture.heads, self.picture.curves, region)
         if self.hasFocus():
             paint_focus(painter, frame, self._current)

@@ -373,6 +373,17 @@ def test_pointer_reads_and_chooses(view: TraceView, document: Document, qtbot) -
     assert "N·m" in view.accessibleDescription()
 
 
+def test_the_hairline_rests_during_a_gesture(view: TraceView, document: Document) -> None:
+    with_radius(document, 3.0)
+    still = picture(view)
+    document.point_at(200.0)
+    assert picture(view) == still
+    document.commit("Larger fillet")
+    settled = picture(view)
+    document.point_at(None)
+    assert picture(view) != settled
+
+
 def test_wheel_pans_and_zooms_the_ruler(view: TraceView) -> None:
     def turn(keys: Qt.KeyboardModifier) -> None:
         where = QPointF(400.0, 100.0)
