@@ -1,5 +1,6 @@
 """Shafts that can be analysed, drawn at random for property tests."""
 
+import itertools
 import math
 from dataclasses import replace
 
@@ -64,7 +65,7 @@ def _segment(draw: st.DrawFn, index: int, tapers: bool) -> Segment:
 
 def _with_shoulders(draw: st.DrawFn, segments: list[Segment]) -> tuple[Segment, ...]:
     """Every step gets a fillet that takes up to 0.35 of the thinner segment, whether full or cut by the step."""
-    for i, (left, right) in enumerate(zip(segments, segments[1:], strict=False)):
+    for i, (left, right) in enumerate(itertools.pairwise(segments)):
         step = right.diameter - left.right_diameter
         if step:
             room = 0.35 * (left if step > 0 else right).length
