@@ -69,6 +69,8 @@ class LedgerModel(QAbstractTableModel):
         """Take over a scene with as little repainting as it allows."""
         before, self._scene = self._scene, scene
         if scene.results is before.results and scene.system == before.system:
+            if before.live and not scene.live:
+                self._sort()
             return
         if _stations(scene.results) != _stations(before.results) or scene.system != before.system:
             self._anew()
