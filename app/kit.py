@@ -33,7 +33,7 @@ class Kit(QWidget):
         self._labels: list[QLabel] = []
         self._fill()
         row = QHBoxLayout(self)
-        row.setContentsMargins(2, 0, 2, 0)
+        row.setContentsMargins(0, 2, 0, 2)
         row.addWidget(self.bar)
         hand.armed.connect(self._armed)
         self.set_theme(theme)
@@ -43,7 +43,14 @@ class Kit(QWidget):
         for key, action in self.actions_by_key.items():
             action.setIcon(glyph_icon(key, theme))
         for label in self._labels:
-            label.setStyleSheet(f"color: {theme.faint}; padding: 0 2px 0 6px;")
+            label.setStyleSheet(f"color: {theme.faint}; padding: 0 0 0 6px;")
+        self.bar.setStyleSheet(
+            "QToolBar { spacing: 0; border: none; }"
+            "QToolButton { border: 1px solid transparent; border-radius: 3px; padding: 3px 2px; }"
+            f"QToolButton:hover {{ background: {theme.raised}; }}"
+            f"QToolButton:focus {{ border-color: {theme.rule}; }}"
+            f"QToolButton:checked {{ background: {theme.accent_soft}; border-color: {theme.accent}; }}"
+        )
 
     def _fill(self) -> None:
         """Entries by where they go, each group behind its name."""
@@ -65,7 +72,6 @@ class Kit(QWidget):
     def _head(self, tool: Tool) -> None:
         if tool.place is None:
             return
-        self.bar.addSeparator()
         label = QLabel(tool.goes)
         label.setFont(text_font(8.0))
         self._labels.append(label)

@@ -120,7 +120,7 @@ class BenchHand(QObject):
     def type_number(self, text: str) -> None:
         """The text typed so far goes to the gesture as soon as it is a number."""
         self.typed = text
-        if self.gesture is None:
+        if self.gesture is None or (text and not any(map(str.isdigit, text))):
             return
         try:
             self.gesture.read(text)
@@ -270,13 +270,15 @@ class BenchHand(QObject):
         if self.gesture is not None:
             self.end()
             return
-        pos = QPointF(event.pos())
+        pos, size = QPointF(event.pos()), self.keys.size
         if event.reason() == QContextMenuEvent.Reason.Mouse:
             self._take_hold(pos)
             self._pressed = None
+        elif size is not None:
+            pos = self.keys.anchor(size)
         menu = thing_menu(self, self.view.to_shaft(pos)[0])
         if menu is not None:
-            menu.popup(event.globalPos())
+            menu.popup(self.view.mapToGlobal(pos.toPoint()))
 
     def open_field(self, size: Size, at: QPointF, typed: str = "") -> None:
         """A field over the bench for the number of a size."""

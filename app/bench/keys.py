@@ -55,10 +55,11 @@ class Keys:
     # events -------------------------------------------------------------------------------------------
 
     def claims(self, event: QKeyEvent) -> bool:
-        """Keys that must not act as shortcuts of the window: undo rests in a gesture, digits are numbers."""
+        """Keys that must not act as shortcuts: undo and, in a drag, the kit's letters; digits are numbers."""
         if self.hand.gesture is not None:
             undo = event.key() in (Key.Key_Z, Key.Key_Y) and event.modifiers() & Qt.KeyboardModifier.ControlModifier
-            return bool(undo) or event.key() in AT_REST or _digits(event) != ""
+            letters = event.text().isalpha() and not self.hand.gesture.key
+            return bool(undo) or letters or event.key() in AT_REST or _digits(event) != ""
         return event.key() in AT_REST or (_digits(event) != "" and self.size is not None)
 
     def tab(self, event: QKeyEvent) -> bool:

@@ -35,7 +35,7 @@ class Placing(Gesture):
         self._declaration = declaration
 
     def press(self, event: QMouseEvent) -> None:
-        self._point(event)
+        self.move(event)
         self.set_down(keep=has_shift(event))
 
     def move(self, event: QMouseEvent | QDropEvent) -> None:

@@ -30,6 +30,8 @@ class Sketching(Gesture):
         self._pulling = self._at_edge = False
         self._pressed: QPointF | None = None
         self.view.keep_view = True
+        if self.base.segments:
+            self._show_more()
 
     @property
     def base(self) -> Shaft:  # type: ignore[override]
@@ -101,5 +103,9 @@ class Sketching(Gesture):
         view = self.view
         near = pos.x() > view.width() - EDGE or pos.y() < EDGE / 2
         if near and not self._at_edge:
-            view.ruler.zoom(1 / GROWTH, view.ruler.to_px(0.0))
+            self._show_more()
         self._at_edge = near
+
+    def _show_more(self) -> None:
+        """Room to the right; the left-hand end of the shaft stays where it is."""
+        self.view.ruler.zoom(1 / GROWTH, self.view.ruler.to_px(0.0))

@@ -25,7 +25,8 @@ def thing_menu(hand: "BenchHand", x: float) -> QMenu | None:
     menu = QMenu(hand.view)
     menu.setAccessibleName(label_of(scene.shaft, chosen))
     menu.aboutToHide.connect(menu.deleteLater)
-    menu.addSection(label_of(scene.shaft, chosen))
+    menu.addAction(label_of(scene.shaft, chosen)).setEnabled(False)
+    menu.addSeparator()
     for size in sizes_of(scene.shaft, chosen):
         _add(
             menu, f"{size.declaration.label} {size.place}: {size.shown(size.value, scene.system)}…", _opener(hand, size)
