@@ -27,7 +27,7 @@ class Heads(QHeaderView):
         self.setSectionsMovable(True)
         self.setHighlightSections(False)
         self.setFont(text_font(POINTS))
-        self.setFixedHeight(2 * self.fontMetrics().height() + 10)
+        self.setFixedHeight(2 * self.fontMetrics().height() + 12)
         self.setAccessibleName("Columns of the ledger")
 
     @guarded
@@ -44,7 +44,7 @@ class Heads(QHeaderView):
         symbol_text.draw(painter, QPointF(at, base), head, font)
         painter.setFont(font)
         painter.setPen(QColor(self.theme.faint))
-        painter.drawText(QPointF(right - metrics.horizontalAdvance(unit), base + metrics.height()), unit)
+        painter.drawText(QPointF(right - metrics.horizontalAdvance(unit), base + metrics.height() + 2), unit)
         painter.fillRect(rect.left(), rect.bottom(), rect.width(), 1, QColor(self.theme.rule))
         painter.restore()
 
