@@ -5,12 +5,15 @@ import logging
 from collections.abc import Callable
 from typing import Any, TypeVar
 
+from PySide6.QtCore import Qt
 from PySide6.QtWidgets import QApplication, QMessageBox, QWidget
 
 from shaftcore.errors import FilletwrightError
 
 F = TypeVar("F", bound=Callable[..., Any])
 LOG = logging.getLogger("filletwright")
+_OPEN: dict[tuple[str, str], QMessageBox] = {}
+"""Boxes on the screen, by their words; held here so that they live as long as they are shown."""
 
 
 def guarded(method: F) -> F:
@@ -45,10 +48,16 @@ def report(error: Exception, parent: QWidget | None = None) -> None:
 
 
 def tell(head: str, words: str, parent: QWidget | None = None) -> None:
-    """A calm message box."""
+    """A calm message box; one that is still open with the same words is not opened twice."""
     if QApplication.instance() is None:
         LOG.error("%s: %s", head, words)
         return
-    box = QMessageBox(QMessageBox.Icon.NoIcon, "Filletwright", head, QMessageBox.StandardButton.Ok, parent)
+    if (head, words) in _OPEN:
+        return
+    above = parent or QApplication.activeWindow()
+    box = QMessageBox(QMessageBox.Icon.NoIcon, "Filletwright", head, QMessageBox.StandardButton.Ok, above)
     box.setInformativeText(words)
+    box.setAttribute(Qt.WidgetAttribute.WA_DeleteOnClose)
+    _OPEN[head, words] = box
+    box.finished.connect(lambda _: _OPEN.pop((head, words), None))
     box.open()

@@ -51,15 +51,19 @@ class LongWork(QObject):
         self._worker.moved.connect(self._show)
         self._worker.failed.connect(self._failed)
         self._worker.finished.connect(self._end)
-        self._dialog.canceled.connect(self._worker.halt.set)
+        self._dialog.canceled.connect(self.halt)
         self._error: Exception | None = None
 
     def start(self) -> None:
         self._worker.start()
 
+    def halt(self) -> None:
+        """Ask the work to stop, as Cancel does."""
+        self._worker.halt.set()
+
     def stop_and_wait(self) -> None:
         """For closing the window while work is going on."""
-        self._worker.halt.set()
+        self.halt()
         self._worker.wait()
 
     @guarded

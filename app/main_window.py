@@ -59,6 +59,7 @@ class MainWindow(QMainWindow):
         self.menus = Menus(self)
         self._status = QLabel()
         self._status.setAccessibleName("Governing station")
+        self._status.setContentsMargins(0, 0, 12, 0)
         self.statusBar().addPermanentWidget(self._status)
         self.statusBar().setSizeGripEnabled(False)
         self.document.shown.connect(self._shown)

@@ -5,10 +5,10 @@ from typing import TYPE_CHECKING
 
 from PySide6.QtGui import QAction, QActionGroup, QKeySequence
 from PySide6.QtWidgets import QMenu
-from shaftcore.demo import demo_shafts
 
 from app.actions import COMMANDS
 from app.error_messages import guarded
+from shaftcore.demo import demo_shafts
 
 if TYPE_CHECKING:
     from app.main_window import MainWindow
@@ -52,8 +52,8 @@ class Menus:
     def _edit(self, menu: QMenu) -> None:
         stack = self._window.document.undo_stack
         undo, redo = stack.createUndoAction(menu, "&Undo"), stack.createRedoAction(menu, "&Redo")
-        undo.setShortcut(QKeySequence(QKeySequence.StandardKey.Undo))
-        redo.setShortcuts([QKeySequence(QKeySequence.StandardKey.Redo), QKeySequence("Ctrl+Y")])
+        undo.setShortcut(QKeySequence("Ctrl+Z"))
+        redo.setShortcuts([QKeySequence("Ctrl+Shift+Z"), QKeySequence("Ctrl+Y")])
         menu.addActions([undo, redo])
 
     def _view(self, menu: QMenu) -> None:

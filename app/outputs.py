@@ -57,14 +57,15 @@ def export_sheet(window: "MainWindow", results: Results, path: Path, day: date, 
 
 def write_ledger(window: "MainWindow") -> None:
     """Ask where to, then write every number of every station as CSV."""
-    from shaftcore.ledger_table import write_ledger_csv
+    from shaftcore.ledger_table import ledger_csv
+    from shaftcore.whole_file import write_whole_file
 
     results = window.document.scene.results
     if results is None:
         return
     path = ask_save(window, "Write the ledger", _beside(window, ".csv"), "CSV (*.csv)", ".csv")
     if path is not None:
-        write_ledger_csv(results, path)
+        write_whole_file(path, ledger_csv(results).encode())
         window.statusBar().showMessage(f"Ledger written to {path}", MESSAGE_MS)
 
 

@@ -6,15 +6,17 @@ from pathlib import Path
 
 from PySide6.QtCore import QSettings, QTimer
 from PySide6.QtWidgets import QApplication
-from shaftcore.shaft_file import read_shaft
 
 from app.icon import program_icon
 from app.main_window import MainWindow
 from app.preferences import Preferences
 from app.theme import LIGHT, apply_theme, load_type, system_theme
 from shaftcore.errors import FileAccessError, FilletwrightError
+from shaftcore.shaft_file import read_shaft
 
 LIKENESS_SIZE = (1400, 900)
+ROOMY = 1600
+"""Screens narrower than this (pixels) are filled by the window when it opens for the first time."""
 
 
 def _application() -> QApplication:
@@ -35,7 +37,10 @@ def open_window(path: Path | None) -> int:
     preferences = Preferences()
     desktop = system_theme(app)
     window = MainWindow(preferences, desktop)
-    window.show()
+    if preferences.state("geometry") is None and app.primaryScreen().availableGeometry().width() < ROOMY:
+        window.showMaximized()
+    else:
+        window.show()
     if path is not None:
         window.open_file(path)
     # lets Ctrl+C in the terminal end the program: Python needs a moment to see the signal

@@ -12,8 +12,6 @@ def status_words(scene: Scene) -> str:
     judged, station = results.judged, results.stations[i]
     if judged.utilisation[i] == 0:
         return "No station is stressed"
-    words = (
-        f"Governing: {station.number} {station.label}   n {judged.n[i]:.2f}   margin {judged.margin[i]:+.1%}   "
-        f"yield {judged.yield_margin[i]:+.1%}"
-    ).replace("-", "−")
+    margins = f"margin {judged.margin[i]:+.1%}   yield {judged.yield_margin[i]:+.1%}".replace("-", "−")
+    words = f"Governing: {station.number} {station.label}   n {judged.n[i]:.2f}   {margins}"
     return f"{words}   provisional" if results.provisional else words

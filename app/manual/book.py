@@ -5,6 +5,10 @@ from dataclasses import dataclass
 from functools import cache
 from importlib.resources import files
 
+from PySide6.QtGui import QKeySequence
+
+from app.actions import COMMANDS
+from app.bench.tools import TOOLS
 from shaftcore.nomenclature import COLUMNS
 from shaftcore.notches._contract import LOAD_SORTS
 from shaftcore.notches.kinds import KINDS
@@ -50,6 +54,18 @@ def _raisers() -> str:
     return "\n".join(lines)
 
 
+def _keys() -> str:
+    lines = [_written("keys")(), "## The kit, while the bench or the strip has the keyboard", ""]
+    lines += [f"- **{tool.letter}**: {tool.label.lower()}. {tool.words}." for tool in TOOLS]
+    lines += ["", "## Commands", ""]
+    for command in COMMANDS:
+        if command.shortcut is not None:
+            keys = QKeySequence(command.shortcut).toString(QKeySequence.SequenceFormat.NativeText)
+            lines.append(f"- **{keys}**: {command.name.replace('&', '').rstrip('…')}. {command.words}.")
+    lines += ["- **Ctrl+Z**, **Ctrl+Shift+Z**: undo, redo"]
+    return "\n".join(lines)
+
+
 def _sources() -> str:
     lines = ["# Sources", "", "Formulas written down from memory are checked against a second source.", ""]
     for source in SOURCES.values():
@@ -68,7 +84,7 @@ PAGES: tuple[Page, ...] = (
     Page("quantities", "Quantities", _quantities),
     Page("sheet", "The margin sheet", _written("sheet")),
     Page("files", "Files and commands", _written("files")),
-    Page("keys", "Keys", _written("keys")),
+    Page("keys", "Keys", _keys),
     Page("cautions", "Limits and cautions", _written("cautions")),
     Page("sources", "Sources", _sources),
 )
