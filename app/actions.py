@@ -30,7 +30,7 @@ COMMANDS: tuple[Command, ...] = (
     Command("sheet", "&File", "&Margin sheet…", "Ctrl+P", "Write the margin sheet as a PDF", line_before=True),
     Command("ledger_csv", "&File", "&Ledger as CSV…", "Ctrl+Shift+E", "Write every station with every number as CSV"),
     Command("likeness", "&File", "&Picture of the window…", None, "Write what is shown as a PNG"),
-    Command("quit", "&File", "&Quit", STANDARD.Quit, "Close the program", line_before=True),
+    Command("quit", "&File", "&Quit", "Ctrl+Q", "Close the program", line_before=True),
     Command("fit", "&View", "&Fit the shaft", "Ctrl+0", "Show the whole shaft"),
     Command("closer", "&View", "&Closer", STANDARD.ZoomIn, "Look closer at the middle of the bench"),
     Command("farther", "&View", "F&arther", STANDARD.ZoomOut, "See more of the shaft"),

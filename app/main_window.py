@@ -1,5 +1,6 @@
 """The one window: bench and traces share an x axis at the left, ledger and workings stand at the right."""
 
+from collections.abc import Callable
 from pathlib import Path
 
 from PySide6.QtCore import Qt
@@ -157,7 +158,7 @@ class MainWindow(QMainWindow):
 
     # commands -------------------------------------------------------------------------------------
 
-    def _slots(self) -> dict[str, object]:
+    def _slots(self) -> dict[str, Callable[[], object]]:
         return {
             "new": self.begin_new,
             "open": self.ask_open,
@@ -236,7 +237,8 @@ class MainWindow(QMainWindow):
         at = next((i for i, part in enumerate(parts) if now and (part is now or part.isAncestorOf(now))), -1)
         target = parts[(at + 1) % len(parts)]
         inner = target if target.focusPolicy() & Qt.FocusPolicy.TabFocus else target.nextInFocusChain()
-        inner.setFocus(Qt.FocusReason.ShortcutFocusReason)
+        if inner is not None:
+            inner.setFocus(Qt.FocusReason.ShortcutFocusReason)
 
     def open_manual(self, page: str) -> None:
         if self._manual is None:

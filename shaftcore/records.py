@@ -1,5 +1,6 @@
 """Small records that the whole core shares: what is wrong, what to notice, where a formula holds."""
 
+import math
 from dataclasses import dataclass
 from typing import Literal
 
@@ -43,11 +44,13 @@ class Notice:
 
 @dataclass(frozen=True)
 class ValidRange:
-    """Range in which a published fit holds: ``low <= symbol <= high``."""
+    """Range in which a published fit holds: ``low <= symbol <= high``; 0 and inf leave an end open."""
 
     symbol: str
     low: float
     high: float
 
     def __str__(self) -> str:
-        return f"{self.low:g} ≤ {self.symbol} ≤ {self.high:g}"
+        if math.isinf(self.high):
+            return f"{self.symbol} ≥ {self.low:g}"
+        return f"{self.low:g} ≤ {self.symbol} ≤ {self.high:g}" if self.low else f"{self.symbol} ≤ {self.high:g}"

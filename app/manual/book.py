@@ -56,7 +56,7 @@ def _raisers() -> str:
 
 def _keys() -> str:
     lines = [_written("keys")(), "## The kit, while the bench or the strip has the keyboard", ""]
-    lines += [f"- **{tool.letter}**: {tool.label.lower()}. {tool.words}." for tool in TOOLS]
+    lines += [f"- **{tool.letter}**: {tool.label.lower()}. {tool.words.rstrip('.')}." for tool in TOOLS]
     lines += ["", "## Commands", ""]
     for command in COMMANDS:
         if command.shortcut is not None:

@@ -1,6 +1,5 @@
 """The window's frame: opening, saving, asking, exporting, remembering."""
 
-from collections.abc import Iterator
 from pathlib import Path
 
 import pytest
@@ -23,13 +22,13 @@ MENDED = next(path for path in demo_shafts() if "mended" in path.name)
 
 
 @pytest.fixture
-def window(qtbot: QtBot, preferences: Preferences) -> Iterator[MainWindow]:
+def window(qtbot: QtBot, preferences: Preferences) -> MainWindow:
     made = MainWindow(preferences, LIGHT)
     qtbot.addWidget(made, before_close_func=lambda w: w.document.undo_stack.setClean())
     made.resize(1366, 768)
     with qtbot.waitExposed(made):
         made.show()
-    yield made
+    return made
 
 
 def _modify(window: MainWindow) -> None:
