@@ -7,7 +7,7 @@ import numpy as np
 from numpy.typing import NDArray
 
 from shaftcore.notch_sensitivity import fatigue_factor, material_length, sensitivity
-from shaftcore.notches._contract import LOAD_SORTS, Array, Fit, Site, Sizes
+from shaftcore.notches._contract import LOAD_SORTS, Array, Fit, RaiserKind, Site, Sizes
 from shaftcore.notches.kinds import KINDS
 from shaftcore.shaft import Judgement
 
@@ -41,30 +41,34 @@ class NotchFactors:
 
 def notch_factors(sites: Sequence[Site | None], judgement: Judgement, tensile_strength: float) -> NotchFactors:
     """Factors for one entry a station, None for a plain section."""
-    shape = (len(LOAD_SORTS), len(sites))
-    found = NotchFactors(
-        np.ones(shape),
-        np.zeros(shape),
-        np.ones(shape),
-        np.zeros(shape, bool),
-        np.zeros(shape),
-        np.zeros(shape, bool),
-        np.zeros(shape),
-    )
+    every = _plain(len(sites))
     for key, kind in KINDS.items():
-        index = np.array([i for i, site in enumerate(sites) if site is not None and site.kind == key], dtype=np.intp)
-        if index.size:
-            chosen = [sites[i] for i in index]
-            sizes = {name: np.array([s.sizes[name] for s in chosen if s]) for name in kind.size_symbols}
-            measures = kind.parameters(sizes)
-            for sort, fit in kind.fits[judgement.kt_source].items():
-                row = LOAD_ROWS[sort]
-                _one_load(found, row, index, fit, sizes, judgement.sensitivity, tensile_strength)
-                found.outside[row, index] = _outside(fit, measures)
-                if fit.low_by:
-                    sharpness, share = zip(*fit.low_by, strict=True)
-                    found.low_by[row, index] = np.interp(measures["r/d"], sharpness, share)
+        index = [i for i, site in enumerate(sites) if site is not None and site.kind == key]
+        if index:
+            chosen = [site.sizes for site in sites if site is not None and site.kind == key]
+            sizes = {name: np.array([own[name] for own in chosen]) for name in kind.size_symbols}
+            for name, values in vars(factors_of(kind, sizes, judgement, tensile_strength)).items():
+                getattr(every, name)[:, index] = values
+    return every
+
+
+def factors_of(kind: RaiserKind, sizes: Sizes, judgement: Judgement, tensile_strength: float) -> NotchFactors:
+    """Factors of raisers of one kind for arrays (n) of their sizes, in mm."""
+    found, measures = _plain(len(sizes["r"])), kind.parameters(sizes)
+    for sort, fit in kind.fits[judgement.kt_source].items():
+        row = LOAD_ROWS[sort]
+        _one_load(found, row, fit, sizes, judgement.sensitivity, tensile_strength)
+        found.outside[row] = _outside(fit, measures)
+        if fit.low_by:
+            sharpness, share = zip(*fit.low_by, strict=True)
+            found.low_by[row] = np.interp(measures["r/d"], sharpness, share)
     return found
+
+
+def _plain(count: int) -> NotchFactors:
+    shape = (len(LOAD_SORTS), count)
+    no, none = np.zeros(shape, dtype=bool), np.zeros(shape)
+    return NotchFactors(np.ones(shape), none, np.ones(shape), no, none.copy(), no.copy(), none.copy())
 
 
 def kf_of(fit: Fit, sizes: Sizes, rule: str, tensile_strength: float, torsion: bool) -> tuple[Array, Array, Array]:
@@ -74,31 +78,25 @@ def kf_of(fit: Fit, sizes: Sizes, rule: str, tensile_strength: float, torsion: b
     return kt, q, fatigue_factor(kt, q)
 
 
-def _one_load(
-    found: NotchFactors, row: int, index: NDArray[np.intp], fit: Fit, sizes: Sizes, rule: str, tensile_strength: float
-) -> None:
-    torsion = row == LOAD_ROWS["torsion"]
-    kt, q, kf = kf_of(fit, sizes, rule, tensile_strength, torsion)
-    radius = sizes["r"].copy()
-    found.kt[row, index], found.q[row, index] = kt, q
+def _one_load(found: NotchFactors, row: int, fit: Fit, sizes: Sizes, rule: str, tensile_strength: float) -> None:
+    torsion, own = row == LOAD_ROWS["torsion"], sizes["r"]
 
-    def kf_at(chosen: Sizes, radii: Array) -> Array:
+    def factors_at(chosen: Sizes, radii: Array) -> tuple[Array, Array, Array]:
         grid = {name: values[:, None] for name, values in chosen.items()}
-        return kf_of(fit, {**grid, "r": radii}, rule, tensile_strength, torsion)[2]
+        return kf_of(fit, {**grid, "r": radii}, rule, tensile_strength, torsion)
 
-    if seams := fit.seams(sizes):
-        radii = np.column_stack(seams) * JUST_ABOVE
-        kf, radius = _highest(sizes["r"], np.column_stack([radius, radii]), np.column_stack([kf, kf_at(sizes, radii)]))
+    radii = np.column_stack([own, *(seam * JUST_ABOVE for seam in fit.seams(sizes))])
+    kt, q, every = factors_at(sizes, radii)
+    kf, radius = _highest(own, radii, every)
     tried = material_length(rule, tensile_strength, torsion) * PEAK_SHARES
-    small = sizes["r"] < tried[-1]
+    small = own < tried[-1]
     if small.any():
         chosen = {name: values[small] for name, values in sizes.items()}
-        radii = np.tile(tried, (len(chosen["r"]), 1))
-        peak, at = _peak_above(chosen, radii, kf_at)
+        peak, at = _peak_above(chosen, np.tile(tried, (len(chosen["r"]), 1)), lambda *grid: factors_at(*grid)[2])
         higher = peak > kf[small]
         kf[small], radius[small] = np.where(higher, peak, kf[small]), np.where(higher, at, radius[small])
-    found.kf[row, index], found.radius[row, index] = kf, radius
-    found.held[row, index] = radius > sizes["r"]
+    found.kt[row], found.q[row], found.kf[row], found.radius[row] = kt[:, 0], q[:, 0], kf, radius
+    found.held[row] = radius > own
 
 
 def _peak_above(sizes: Sizes, radii: Array, kf_at: Callable[[Sizes, Array], Array]) -> tuple[Array, Array]:
