@@ -1,6 +1,7 @@
 """The menu bar, built from the actions, with the lists that change while the program runs."""
 
 from collections.abc import Callable
+from functools import partial
 from typing import TYPE_CHECKING
 
 from PySide6.QtGui import QAction, QActionGroup, QKeySequence
@@ -40,12 +41,12 @@ class Menus:
         recent.aboutToShow.connect(guarded(lambda: self._fill_recent(recent)))
         for path in demo_shafts():
             name = path.name.removesuffix(".shaft.json").replace("_", " ").capitalize()
-            _add(demos, name, lambda path=path: self._window.open_copy(path))
+            _add(demos, name, partial(self._window.open_copy, path))
 
     def _fill_recent(self, menu: QMenu) -> None:
         menu.clear()
         for path in self._window.preferences.recent_files():
-            _add(menu, str(path), lambda path=path: self._window.open_file(path))
+            _add(menu, str(path), partial(self._window.open_file, path))
         if menu.isEmpty():
             menu.addAction("none yet").setEnabled(False)
 

@@ -19,7 +19,7 @@ class Preferences:
         value = self._settings.value(key, default)
         return value if isinstance(value, str) else default
 
-    def list(self, key: str, default: list[str]) -> list[str]:
+    def lines(self, key: str, default: list[str]) -> list[str]:
         """A list of lines; an empty one stays empty."""
         value = self._settings.value(key)
         return [line for line in value.split("\n") if line] if isinstance(value, str) else default
@@ -33,12 +33,12 @@ class Preferences:
 
     def recent_files(self) -> list[Path]:
         """Newest first; files that are gone are left out."""
-        return [Path(name) for name in self.list("recent", []) if Path(name).is_file()]
+        return [Path(name) for name in self.lines("recent", []) if Path(name).is_file()]
 
     def note_file(self, path: Path) -> None:
         """Put a file at the head of the recent ones."""
         name = str(path.resolve())
-        others = [known for known in self.list("recent", []) if known != name]
+        others = [known for known in self.lines("recent", []) if known != name]
         self.keep("recent", [name, *others][:MOST_RECENT])
 
     def folder(self) -> str:

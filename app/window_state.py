@@ -24,10 +24,10 @@ def restore(window: "MainWindow") -> None:
         window.restoreGeometry(geometry)
     if kept.words("units", "SI") == "US":
         window.document.set_system("US")
-    window.traces.show_tracks(kept.list("tracks", list(window.traces.shown_tracks)))
-    window.ledger.columns = kept.list("ledger columns", list(window.ledger.columns))
+    window.traces.show_tracks(kept.lines("tracks", list(window.traces.shown_tracks)))
+    window.ledger.columns = kept.lines("ledger columns", list(window.ledger.columns))
     window.ledger.order = kept.words("ledger order", window.ledger.order)
-    opened = kept.list("opened parts", [key for key, fold in window.folds.items() if fold.opened])
+    opened = kept.lines("opened parts", [key for key, fold in window.folds.items() if fold.opened])
     for key, fold in window.folds.items():
         fold.set_opened(key in opened)
 

@@ -6,11 +6,11 @@ from app.preferences import MOST_RECENT, Preferences
 
 
 def test_an_empty_list_is_not_the_default(preferences: Preferences) -> None:
-    assert preferences.list("opened", ["ledger"]) == ["ledger"]
+    assert preferences.lines("opened", ["ledger"]) == ["ledger"]
     preferences.keep("opened", [])
-    assert preferences.list("opened", ["ledger"]) == []
+    assert preferences.lines("opened", ["ledger"]) == []
     preferences.keep("opened", ["a", "b"])
-    assert preferences.list("opened", []) == ["a", "b"]
+    assert preferences.lines("opened", []) == ["a", "b"]
 
 
 def test_recent_files_newest_first_without_those_gone(preferences: Preferences, tmp_path: Path) -> None:
