@@ -13,7 +13,7 @@ NO_DISPLAY = (
 def main(argv: list[str] | None = None) -> int:
     """Run one command; returns the exit status."""
     words = sys.argv[1:] if argv is None else argv
-    from shaftcore import command
+    import shaftcore.command as command
 
     if words and words[0] == "likeness":
         return _likeness(words[1:])
