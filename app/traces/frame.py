@@ -70,7 +70,8 @@ class Chart:
         theme = self._view.theme
         first, *others = [self._add_axes(plot.band) for _ in plot.scales]
         first.grid(True, color=theme.rule, linewidth=0.5 / POINT)
-        first.axhline(0.0, color=theme.faint, linewidth=1.0 / POINT)
+        # on the margin's track zero parts what holds from what fails
+        first.axhline(0.0, color=theme.ink if plot.track.capped else theme.faint, linewidth=1.0 / POINT)
         for axes in others:
             axes.xaxis.set_visible(False)
             axes.yaxis.set_visible(False)

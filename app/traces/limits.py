@@ -18,7 +18,8 @@ LEAST_FILLED = 0.5
 """A settled axis of which less than this is used is fitted anew."""
 MARGIN_TOPS = (1.0, 2.0, MARGIN_CAP)
 MARGIN_FLOORS = (-0.25, -0.5, -1.0)
-EDGE_ROOM = 0.04
+EDGE_ROOM, TOP_ROOM = 0.04, 0.1
+"""Free shares beyond an end that no line crosses, and above a capped end with its number."""
 
 
 @dataclass(frozen=True)
@@ -112,5 +113,5 @@ def _capped(dimension_name: str, curves: Sequence[Curve], system: System) -> Sca
     low = _needed(curves)[0]
     top = next((shown(t) for t in MARGIN_TOPS if usual <= shown(t)), shown(MARGIN_CAP))
     floor = next((shown(f) for f in MARGIN_FLOORS if low >= shown(f)), shown(MARGIN_FLOORS[-1]))
-    room = EDGE_ROOM * (top - floor)
-    return Scale(dimension_name, (floor - room, top + room), top)
+    span = top - floor
+    return Scale(dimension_name, (floor - EDGE_ROOM * span, top + TOP_ROOM * span), top)

@@ -20,10 +20,11 @@ from app.document import Document
 from app.ruler import LEFT_MARGIN, RIGHT_MARGIN, Ruler
 from app.theme import DARK, LIGHT
 from app.traces.bands import GAP, bands_of, with_border_moved
-from app.traces.limits import scales_of
+from app.traces.limits import Scale, scales_of
 from app.traces.live import FAR_OUT, Polyline, changed_tracks, to_pixels
 from app.traces.pace import Pace
 from app.traces.reading import value_at
+from app.traces.ticks import labels, value_ticks
 from app.traces.tracks import BY_KEY, TRACKS, Curve, curves_of
 from app.traces.view import TraceView
 from shaftcore.shaft import AxialForce, Material, RadialForce, Segment, Shaft, Shoulder, Support, Torque
@@ -241,6 +242,28 @@ def test_margin_axis_shows_its_end_and_the_zero_line(document: Document) -> None
         low, high = scale.limits
         assert low >= -100.0 - 0.05 * (high - low)  # a margin of n/n_asked - 1 cannot be below -100 %
         assert all(scale.pinned(curve.mark_y).max() <= scale.limits[1] for curve in curves)
+
+
+def test_numbers_at_the_axes_are_round_apart_and_told_apart() -> None:
+    for low, high, height in (
+        (-3.0, 1700.0, 40.0),
+        (-0.0004, 0.0011, 80.0),
+        (-250.0, 2.5e6, 300.0),
+        (-1e-9, 1e-7, 50.0),
+    ):
+        scale = Scale("stress", (low, high))
+        ticks = value_ticks(scale, height)
+        assert len(ticks) >= 1
+        assert ticks.min() >= low
+        assert ticks.max() < high
+        if len(ticks) > 1:
+            assert np.diff(ticks).min() / (high - low) * height >= 10
+        words = labels(ticks)
+        assert len(set(words)) == len(ticks)
+        spaces = str.maketrans("−", "-", "\u202f")
+        assert [float(text.translate(spaces)) for text in words] == pytest.approx(ticks.tolist(), rel=1e-6)
+    capped = Scale("share", (-16.0, 330.0), 300.0)
+    assert labels(value_ticks(capped, 80.0), 300.0)[-1] == "over 300"
 
 
 # while dragging -------------------------------------------------------------------------------------
