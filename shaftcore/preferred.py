@@ -38,6 +38,9 @@ INCHES: tuple[float, ...] = (
 WIDE = 8
 """Preferred sizes further apart than this many resolutions get round sizes between them."""
 
+FINER = 8
+"""Freely pulled sizes go in steps this many times finer than the hand can tell, or nearly so."""
+
 
 def sort_of(name: str, quantity: Quantity) -> SizeSort:
     """By which row of sizes a declared quantity steps."""
@@ -75,6 +78,13 @@ def snapped(
             rest = min((low, high, *filled), key=lambda size: abs(size - shown))
             break
     return math.copysign(rest * unit.factor, value)
+
+
+def rounded(value: float, resolution: float, system: System = "SI", dimension_name: str = "length") -> float:
+    """`value` without digits that no hand can mean: on round steps a few times finer than `resolution`."""
+    factor = dimension(dimension_name).unit(system).factor
+    step = round_step(resolution / factor / FINER, "SI", dimension_name)
+    return _round_to(value / factor, step) * factor
 
 
 def stepped(value: float, sort: SizeSort, up: bool, system: System = "SI", dimension_name: str = "length") -> float:

@@ -15,11 +15,10 @@ from app.bench.sizes import Size, at_step, size_of
 from app.number_text import parse
 from shaftcore import edits
 from shaftcore.geometry import faces_of
+from shaftcore.radius_window import RadiusWindow, radius_window
 from shaftcore.shaft import Shaft
 
 if TYPE_CHECKING:
-    from shaftcore.radius_window import RadiusWindow
-
     from app.bench.hand import BenchHand
 
 E_FOLD = 120.0
@@ -47,8 +46,8 @@ class Drag(Gesture):
         if self.hand.typed or self.size.value is None:
             return
         value = self.size.held(self._at(event.position()))
-        if not is_free(event):
-            value = self.size.rested(value, self._resolution(value), self.document.scene.system)
+        rest = self.size.freely if is_free(event) else self.size.rested
+        value = rest(value, self._resolution(value), self.document.scene.system)
         self.hand.attempt(lambda: self.set(value))
 
     def set(self, value: float) -> None:
@@ -92,13 +91,11 @@ class Drag(Gesture):
             return abs(value) * TELLABLE / E_FOLD
         return self.grip.gain * TELLABLE / self._scale
 
-    def _window(self) -> "RadiusWindow | None":
+    def _window(self) -> RadiusWindow | None:
         """The radius window of a fillet; it does not hang on the radius, so once for a drag will do."""
         results = self.document.scene.results
         if results is None or not at_step(self.size.chosen) or self.size.sort != "radius":
             return None
-        from shaftcore.radius_window import radius_window
-
         return radius_window(results, self.size.chosen[1])
 
 

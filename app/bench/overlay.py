@@ -1,7 +1,6 @@
 """What the hand draws over the bench: grips, the radius window, and a thing about to be placed."""
 
 from dataclasses import replace
-from typing import TYPE_CHECKING
 
 import numpy as np
 from PySide6.QtCore import QPointF, Qt
@@ -14,10 +13,8 @@ from app.bench.sizes import Size
 from app.theme import Theme, text_font
 from shaftcore.notch_sites import seatings
 from shaftcore.notches._contract import Array
+from shaftcore.radius_window import RadiusWindow
 from shaftcore.shaft import Shaft
-
-if TYPE_CHECKING:
-    from shaftcore.radius_window import RadiusWindow
 
 GRIP_PX = 7.0
 BAND_ALPHA = 90
@@ -64,11 +61,9 @@ def _grip_pixmap(theme: Theme, ratio: float, hovered: bool) -> QPixmap:
     return made
 
 
-def draw_window(
-    painter: QPainter, shaft: Shaft, frame: Frame, size: Size, window: "RadiusWindow", theme: Theme
-) -> None:
+def draw_window(painter: QPainter, shaft: Shaft, frame: Frame, size: Size, window: RadiusWindow, theme: Theme) -> None:
     """The radius window as a translucent band between the needed and the allowed outline."""
-    if window.needed is None or window.allowed is None:
+    if window.needed is None:
         return
     seating = next((s for s in seatings(shaft) if (s.kind.key, s.place) == size.chosen), None)
     if seating is None:

@@ -12,7 +12,7 @@ from app.bench.tools import Tool
 from app.number_text import parse
 from shaftcore.declared import Quantity, declared
 from shaftcore.geometry import faces_of
-from shaftcore.preferred import finely, snapped, stepped
+from shaftcore.preferred import finely, rounded, snapped, stepped
 from shaftcore.shaft import Shaft, Support
 from shaftcore.units import System
 
@@ -90,7 +90,7 @@ class Placing(Gesture):
         shaft = self.document.shaft
         x = min(max(self.view.to_shaft(event.position())[0], 0.0), shaft.length)
         scale, system = self.view.ruler.scale, self.document.scene.system
-        self.x = x if is_free(event) else rested_place(shaft, x, scale, system)
+        self.x = rounded(x, TELLABLE / scale, system) if is_free(event) else rested_place(shaft, x, scale, system)
         self.view.update()
 
 

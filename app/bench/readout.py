@@ -1,6 +1,6 @@
 """What stands beside the pointer while something is pulled: the size, what it does, and why not further."""
 
-from typing import TYPE_CHECKING
+import math
 
 from PySide6.QtCore import QPointF, QRectF, QSizeF, Qt
 from PySide6.QtGui import QColor, QFont, QFontMetricsF, QPainter, QPen
@@ -12,10 +12,8 @@ from app.document import Scene, Selection
 from app.number_text import shown
 from app.theme import Theme, text_font
 from shaftcore.nomenclature import BY_KEY
+from shaftcore.radius_window import RadiusWindow
 from shaftcore.results import Results
-
-if TYPE_CHECKING:
-    from shaftcore.radius_window import RadiusWindow
 
 Lines = list[tuple[str, str]]
 """(role, text): role is "size", "plain", "symbols" (set as in print) or "refusal"."""
@@ -34,7 +32,7 @@ def station_for(results: Results | None, chosen: Selection | None) -> int | None
     return results.station_of(chosen[1]) if index is None else index
 
 
-def drag_lines(scene: Scene, size: Size, value: float | None, typed: str, window: "RadiusWindow | None") -> Lines:
+def drag_lines(scene: Scene, size: Size, value: float | None, typed: str, window: RadiusWindow | None) -> Lines:
     """Size, Kt, n and margin there, the worst station, and the radius window."""
     symbol = f"{size.declaration.symbol} = " if size.declaration.symbol else ""
     text = f"{typed}▏ {size.unit(scene.system)}" if typed else size.shown(value, scene.system)
@@ -128,14 +126,15 @@ def _station_rows(scene: Scene, results: Results, index: int) -> list[str]:
     return rows
 
 
-def _window_words(scene: Scene, size: Size, window: "RadiusWindow") -> str:
-    allowed = "" if window.allowed is None else size.shown(window.allowed, scene.system)
+def _window_words(scene: Scene, size: Size, window: RadiusWindow) -> str:
+    unit = size.declaration.dimension.unit(scene.system)
+    allowed = f"{window.limited_by} allows {size.shown(window.allowed, scene.system)}"
     if window.needed is None:
-        return f"no radius reaches the asked factor; allowed {allowed}"
-    needed = size.shown(window.needed, scene.system)
-    if window.empty:
-        return f"radius window empty: needs {needed}, allowed {allowed} ({window.limited_by})"
-    return f"radius window {needed} to {allowed} ({window.limited_by})"
+        return f"no radius reaches the asked factors; {allowed}"
+    # rounded up: the number shown must be one that lasts
+    needed = f"{math.ceil(unit.shown(window.needed) * 10**unit.decimals) / 10**unit.decimals:g} {unit.symbol}"
+    head = "radius window is empty" if window.empty else "radius window"
+    return f"{head}: {needed} needed, {allowed}"
 
 
 def _width(role: str, text: str, font: QFont) -> float:

@@ -12,7 +12,7 @@ from app.number_text import editable
 from shaftcore import edits
 from shaftcore.declared import Quantity, declared
 from shaftcore.notches.kinds import KINDS
-from shaftcore.preferred import SizeSort, finely, snapped, sort_of, stepped
+from shaftcore.preferred import SizeSort, finely, rounded, snapped, sort_of, stepped
 from shaftcore.shaft import Shaft, things
 from shaftcore.units import System
 
@@ -57,6 +57,10 @@ class Size:
         """The preferred size near `value` that the declaration allows."""
         rest = snapped(value, self.sort, resolution, system, self.declaration.dimension_name)
         return self.held(rest) if self.declaration.holds(rest) or not self.declaration.holds(value) else value
+
+    def freely(self, value: float, resolution: float, system: System) -> float:
+        """`value` in steps finer than the hand can tell, so that no digits stand in it that nobody meant."""
+        return self.held(rounded(value, resolution, system, self.declaration.dimension_name))
 
     def held(self, value: float) -> float:
         """A value kept within the declared range."""

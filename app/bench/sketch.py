@@ -6,7 +6,7 @@ from app.bench.sizes import Size, size_of
 from app.document import Document
 from shaftcore import edits
 from shaftcore.declared import Quantity, declared
-from shaftcore.preferred import snapped
+from shaftcore.preferred import rounded, snapped
 from shaftcore.shaft import Segment, Shaft
 
 TELLABLE = 6.0
@@ -50,11 +50,17 @@ class Sketch:
 
     def follow(self, x: float, y: float, scale: float, free: bool) -> bool:
         """Show the step pulled to x, y (mm) at that scale (px a mm); nothing while there is no step."""
-        length, diameter = x - self.begin, 2 * abs(y)
-        if not free:
-            system = self.document.scene.system
-            length = snapped(length, "length", TELLABLE / scale, system) if length > 0 else 0.0
-            diameter = snapped(diameter, "diameter", 2 * TELLABLE / scale, system)
+        length, diameter, mm, system = (
+            max(x - self.begin, 0.0),
+            2 * abs(y),
+            TELLABLE / scale,
+            self.document.scene.system,
+        )
+        if free:
+            length, diameter = rounded(length, mm, system), rounded(diameter, 2 * mm, system)
+        else:
+            length = snapped(length, "length", mm, system) if length > 0 else 0.0
+            diameter = snapped(diameter, "diameter", 2 * mm, system)
         self.pulled = {"length": length, "diameter": diameter}
         return self.show()
 

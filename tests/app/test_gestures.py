@@ -1,0 +1,671 @@
+"""The whole job on the bench, by pointer and by keyboard alone, with the events Qt itself sends."""
+
+from collections.abc import Callable
+
+import pytest
+from PySide6.QtCore import QByteArray, QEvent, QMimeData, QPointF, Qt
+from PySide6.QtGui import QDragEnterEvent, QDropEvent, QMouseEvent
+from PySide6.QtTest import QTest
+from PySide6.QtWidgets import QApplication, QVBoxLayout, QWidget
+from pytestqt.qtbot import QtBot
+
+import app.document
+from app.bench.drags import Drag
+from app.bench.hand import BenchHand, make_hand
+from app.bench.hits import Grip
+from app.bench.tools import MIME, TOOLS
+from app.bench.view import BenchView
+from app.document import Document
+from app.kit import Kit
+from app.ruler import Ruler
+from app.theme import LIGHT
+from shaftcore import edits
+from shaftcore.evaluation import evaluate
+from shaftcore.preferred import R40
+from shaftcore.radius_window import radius_window
+from shaftcore.shaft import Shaft, things
+
+Key, NONE, LEFT = Qt.Key, Qt.MouseButton.NoButton, Qt.MouseButton.LeftButton
+CTRL, SHIFT, PLAIN = (
+    Qt.KeyboardModifier.ControlModifier,
+    Qt.KeyboardModifier.ShiftModifier,
+    Qt.KeyboardModifier.NoModifier,
+)
+
+
+def loaded_shaft() -> Shaft:
+    """An invented agitator shaft: three steps, two bearings, one force, torque in and out."""
+    shaft = Shaft()
+    for length, diameter in ((60.0, 40.0), (120.0, 55.0), (70.0, 45.0)):
+        shaft = edits.add_segment(shaft, length, diameter)
+    for x in (20.0, 230.0):
+        shaft, _ = edits.add_support(shaft, x)
+    shaft, _ = edits.add_load(shaft, "radial force", 120.0, 4000.0)
+    shaft, _ = edits.add_load(shaft, "torque", 40.0, 2e5)
+    return edits.add_load(shaft, "torque", 200.0, -2e5)[0]
+
+
+class Desk:
+    """Bench and kit in a window, with the pointer's and the keyboard's events."""
+
+    def __init__(self, qtbot: QtBot, shaft: Shaft) -> None:
+        self.document, self.ruler = Document(), Ruler()
+        self.bench = BenchView(self.document, self.ruler, LIGHT)
+        self.hand: BenchHand = make_hand(self.bench, self.document)
+        self.bench.hand = self.hand
+        self.kit = Kit(self.document, self.bench, LIGHT)
+        self.refusals: list[str] = []
+        self.document.refused.connect(self.refusals.append)
+        window = QWidget()
+        column = QVBoxLayout(window)
+        column.addWidget(self.bench)
+        column.addWidget(self.kit)
+        self.window = window
+        qtbot.addWidget(window)
+        window.resize(1000, 460)
+        window.show()
+        self.document.load(shaft, None)
+        self.bench.fit()
+        window.activateWindow()
+        self.bench.setFocus()
+        qtbot.waitUntil(self.bench.hasFocus, timeout=2000)
+
+    @property
+    def shaft(self) -> Shaft:
+        return self.document.shaft
+
+    def mouse(
+        self,
+        kind: QEvent.Type,
+        pos: QPointF,
+        button: Qt.MouseButton = NONE,
+        held: Qt.MouseButton = NONE,
+        modifiers: Qt.KeyboardModifier = PLAIN,
+    ) -> None:
+        event = QMouseEvent(kind, pos, QPointF(self.bench.mapToGlobal(pos)), button, held, modifiers)
+        QApplication.sendEvent(self.bench, event)
+
+    def press(self, pos: QPointF, modifiers: Qt.KeyboardModifier = PLAIN) -> None:
+        self.mouse(QEvent.Type.MouseButtonPress, pos, LEFT, LEFT, modifiers)
+
+    def move(self, pos: QPointF, held: bool = True, modifiers: Qt.KeyboardModifier = PLAIN) -> None:
+        self.mouse(QEvent.Type.MouseMove, pos, NONE, LEFT if held else NONE, modifiers)
+
+    def release(self, pos: QPointF, modifiers: Qt.KeyboardModifier = PLAIN) -> None:
+        self.mouse(QEvent.Type.MouseButtonRelease, pos, LEFT, NONE, modifiers)
+
+    def pull(self, start: QPointF, by: QPointF, modifiers: Qt.KeyboardModifier = PLAIN, let_go: bool = True) -> None:
+        self.press(start, modifiers)
+        for share in (0.25, 0.5, 0.75, 1.0):
+            self.move(start + by * share, True, modifiers)
+        if let_go:
+            self.release(start + by, modifiers)
+
+    def click(self, pos: QPointF) -> None:
+        self.move(pos, held=False)
+        self.press(pos)
+        self.release(pos)
+
+    def keys(self, *keys: Qt.Key | str, modifiers: Qt.KeyboardModifier = PLAIN) -> None:
+        """Keys go to whatever has the keyboard at that moment, letter by letter."""
+        for key in keys:
+            for one in key if isinstance(key, str) else (key,):
+                QTest.keyClick(QApplication.focusWidget() or self.bench, one, modifiers)
+
+    def grip(self, sort: str, id: str, name: str) -> Grip:
+        return next(grip for grip in self.hand.grips if grip.chosen == (sort, id) and grip.name == name)
+
+    def at(self, sort: str, id: str, name: str) -> QPointF:
+        """A place on a grip where no other one is nearer: of a line, near its begin."""
+        grip = self.grip(sort, id, name)
+        if grip.x2 is None or grip.y2 is None:
+            return QPointF(grip.x, grip.y)
+        return QPointF(grip.x + 0.3 * (grip.x2 - grip.x), grip.y + 0.3 * (grip.y2 - grip.y))
+
+    def radius(self, index: int) -> float:
+        shoulder = self.shaft.segments[index].shoulder
+        assert shoulder is not None
+        return shoulder.radius
+
+    def margin(self, place: str) -> float:
+        results = self.document.scene.results
+        assert results is not None
+        index = next(i for i, s in enumerate(results.stations) if (s.kind, s.place) == ("shoulder", place))
+        return float(results.judged.margin[index])
+
+
+@pytest.fixture
+def desk(qtbot: QtBot) -> Desk:
+    return Desk(qtbot, loaded_shaft())
+
+
+@pytest.fixture
+def empty(qtbot: QtBot) -> Desk:
+    return Desk(qtbot, Shaft())
+
+
+def sizes(shaft: Shaft) -> list[tuple[float, float]]:
+    return [(segment.length, segment.diameter) for segment in shaft.segments]
+
+
+# sketching --------------------------------------------------------------------------------------------
+
+
+def test_a_shaft_is_drawn_by_clicks_and_esc_ends(empty: Desk) -> None:
+    bench = empty.bench
+    empty.click(bench.to_screen(0, 0))
+    empty.move(bench.to_screen(99.0, 20.2), held=False)
+    assert sizes(empty.shaft) == [(100.0, 40.0)]
+    empty.click(bench.to_screen(99.0, 20.2))
+    empty.click(bench.to_screen(100.0 + 124.0, 25.3))
+    empty.move(bench.to_screen(300.0, 15.0), held=False)
+    assert len(empty.shaft.segments) == 3
+    empty.keys(Key.Key_Escape)
+    assert sizes(empty.shaft) == [(100.0, 40.0), (125.0, 50.0)]
+    assert empty.document.undo_stack.count() == 2
+    assert empty.shaft.segments[0].shoulder is not None
+    empty.document.undo_stack.undo()
+    assert sizes(empty.shaft) == [(100.0, 40.0)]
+
+
+def test_a_step_pulled_with_the_button_held_stands_on_release(empty: Desk) -> None:
+    empty.pull(empty.bench.to_screen(0, 0), QPointF(200, -60))
+    empty.keys(Key.Key_Return)
+    assert len(empty.shaft.segments) == 1
+    assert empty.hand.gesture is None
+
+
+def test_typed_numbers_fix_length_and_diameter(empty: Desk) -> None:
+    empty.click(empty.bench.to_screen(0, 0))
+    empty.move(empty.bench.to_screen(50, 30), held=False)
+    empty.keys("82,5", Key.Key_Tab, "47.5")
+    empty.move(empty.bench.to_screen(250, 10), held=False)
+    assert sizes(empty.shaft) == [(82.5, 47.5)]
+    empty.click(empty.bench.to_screen(250, 10))
+    empty.move(empty.bench.to_screen(150, 20), held=False)
+    empty.keys("30")
+    assert empty.shaft.segments[1].length == 30.0
+    empty.keys(Key.Key_Return, Key.Key_Return)
+    assert sizes(empty.shaft)[0] == (82.5, 47.5)
+    assert empty.shaft.segments[1].length == 30.0
+
+
+def test_a_shaft_is_drawn_by_keyboard_alone(empty: Desk) -> None:
+    empty.keys("D", "100", Key.Key_Tab, "40", Key.Key_Return, "60", Key.Key_Tab, "50", Key.Key_Return)
+    empty.keys(Key.Key_Return)
+    assert sizes(empty.shaft) == [(100.0, 40.0), (60.0, 50.0)]
+    assert empty.hand.gesture is None
+    assert [empty.document.undo_stack.text(i) for i in range(2)] == [
+        "Draw s1: 100 mm long, diameter 40 mm",
+        "Draw s2: 60 mm long, diameter 50 mm",
+    ]
+
+
+def test_typed_numbers_are_in_the_units_of_the_user(empty: Desk) -> None:
+    empty.document.set_system("US")
+    empty.keys("D", "4", Key.Key_Tab, "1.5", Key.Key_Return, Key.Key_Return)
+    assert sizes(empty.shaft) == [(pytest.approx(101.6), pytest.approx(38.1))]
+
+
+def test_a_wrong_number_is_said_and_nothing_is_drawn(empty: Desk) -> None:
+    empty.keys("D", "0")
+    assert "Length" in empty.hand.refusal
+    empty.keys(Key.Key_Backspace, "70", Key.Key_Tab, "30", Key.Key_Return, Key.Key_Escape)
+    assert sizes(empty.shaft) == [(70.0, 30.0)]
+
+
+def test_ctrl_pulls_freely(empty: Desk) -> None:
+    empty.click(empty.bench.to_screen(0, 0))
+    pos = empty.bench.to_screen(101.3, 20.4)
+    empty.move(pos, held=False, modifiers=CTRL)
+    x, y = empty.bench.to_shaft(pos)
+    assert sizes(empty.shaft) == [(pytest.approx(x, abs=0.5), pytest.approx(2 * y, abs=1.0))]
+    assert empty.shaft.segments[0].length not in R40
+    empty.keys(Key.Key_Escape)
+
+
+def test_backspace_takes_the_last_step_of_a_sketch_back(empty: Desk) -> None:
+    empty.keys("D", "100", Key.Key_Tab, "40", Key.Key_Return, "60", Key.Key_Tab, "50", Key.Key_Return)
+    empty.keys(Key.Key_Backspace)
+    assert sizes(empty.shaft) == [(100.0, 40.0)]
+    empty.keys("30", Key.Key_Tab, "45", Key.Key_Return, Key.Key_Escape)
+    assert sizes(empty.shaft) == [(100.0, 40.0), (30.0, 45.0)]
+
+
+def test_the_bench_shows_more_when_a_sketch_nears_its_edge(empty: Desk) -> None:
+    empty.click(empty.bench.to_screen(0, 0))
+    before = empty.ruler.end
+    empty.move(QPointF(empty.bench.width() - 100, 150), held=False)
+    assert empty.ruler.end == before
+    empty.move(QPointF(empty.bench.width() - 10, 150), held=False)
+    assert empty.ruler.end > 1.2 * before
+    empty.keys(Key.Key_Escape)
+
+
+def test_a_sketch_goes_on_at_the_right_hand_end(desk: Desk) -> None:
+    before = sizes(desk.shaft)
+    desk.keys("D", "35", Key.Key_Tab, "30", Key.Key_Return, Key.Key_Escape)
+    assert sizes(desk.shaft) == [*before, (35.0, 30.0)]
+    assert desk.shaft.segments[2].shoulder is not None
+
+
+# dragging ----------------------------------------------------------------------------------------------
+
+
+def test_pulling_a_fillet_changes_the_margin_live_and_commits_one_step(desk: Desk) -> None:
+    radius, margin = desk.radius(0), desk.margin("s1")
+    seen: list[float] = []
+    desk.document.shown.connect(lambda scene: seen.append(scene.shaft.segments[0].shoulder.radius))
+    desk.pull(desk.at("shoulder", "s1", "radius"), QPointF(-38, -38))
+    assert desk.radius(0) == 2.5
+    assert radius < desk.radius(0)
+    assert desk.margin("s1") > margin
+    assert len(set(seen)) > 2
+    assert desk.document.undo_stack.count() == 1
+    assert desk.document.undo_stack.undoText() == "Fillet radius s1|s2 to 2.5 mm"
+    desk.document.undo_stack.undo()
+    assert (desk.radius(0), desk.margin("s1")) == (radius, margin)
+    desk.document.undo_stack.redo()
+    assert desk.radius(0) == 2.5
+    assert desk.margin("s1") == pytest.approx(
+        float(evaluate(desk.shaft).judged.margin[evaluate(desk.shaft).station_of("s1")])  # type: ignore[index]
+    )
+
+
+def test_a_click_on_a_grip_chooses_and_changes_nothing(desk: Desk) -> None:
+    before = desk.shaft
+    desk.click(desk.at("shoulder", "s1", "radius"))
+    assert desk.document.scene.chosen == ("shoulder", "s1")
+    assert desk.shaft == before
+    assert desk.document.undo_stack.count() == 0
+
+
+def test_esc_takes_a_drag_back(desk: Desk) -> None:
+    before = desk.shaft
+    desk.pull(desk.at("shoulder", "s1", "radius"), QPointF(-40, -40), let_go=False)
+    assert desk.shaft != before
+    desk.keys(Key.Key_Escape)
+    assert desk.shaft == before
+    assert not desk.document.in_gesture
+    desk.release(QPointF(10, 10))
+    assert desk.document.undo_stack.count() == 0
+
+
+def test_a_number_typed_during_a_drag_stands_whatever_the_pointer_does(desk: Desk) -> None:
+    start = desk.at("shoulder", "s1", "radius")
+    desk.pull(start, QPointF(-30, -30), let_go=False)
+    desk.keys("2,25")
+    desk.move(start + QPointF(-90, -90))
+    assert desk.radius(0) == 2.25
+    desk.release(start + QPointF(-90, -90))
+    assert desk.radius(0) == 2.25
+    assert desk.document.undo_stack.undoText() == "Fillet radius s1|s2 to 2.25 mm"
+
+
+def test_ctrl_leaves_preferred_radii_aside(desk: Desk) -> None:
+    start = desk.at("shoulder", "s1", "radius")
+    desk.pull(start, QPointF(-31, -29), CTRL)
+    free = desk.radius(0)
+    assert free not in edits.FIRST_RADII
+    desk.document.undo_stack.undo()
+    desk.pull(start, QPointF(-31, -29))
+    assert desk.radius(0) != free
+
+
+def test_a_refused_size_holds_at_the_last_possible_and_says_why(desk: Desk) -> None:
+    start = desk.at("segment", "s1", "length")
+    desk.pull(start, QPointF(60, 0), let_go=False)
+    desk.move(start + QPointF(2000, 0))
+    assert "segments[1]" in desk.hand.refusal
+    held = desk.shaft
+    assert evaluate(held)
+    assert held.segments[0].length > 60.0
+    desk.move(start + QPointF(30, 0))
+    assert desk.hand.refusal == ""
+    desk.release(start + QPointF(30, 0))
+    assert desk.document.undo_stack.count() == 1
+    assert not desk.document.in_gesture
+
+
+@pytest.mark.expects_error
+def test_a_drag_survives_a_failure_inside_the_analysis(desk: Desk, monkeypatch: pytest.MonkeyPatch) -> None:
+    before = desk.shaft
+    start = desk.at("shoulder", "s1", "radius")
+    desk.pull(start, QPointF(-40, -40), let_go=False)
+
+    def broken(shaft: Shaft) -> None:
+        raise ZeroDivisionError("planted")
+
+    with monkeypatch.context() as patched:
+        patched.setattr(app.document, "evaluate", broken)
+        desk.move(start + QPointF(-80, -80))
+        assert desk.hand.gesture is None
+        assert desk.shaft == before
+        desk.release(start + QPointF(-80, -80))
+    for box in QApplication.topLevelWidgets():
+        if box is not desk.window:
+            box.close()
+    desk.bench.setFocus()
+    desk.pull(start, QPointF(-38, -38))
+    assert desk.radius(0) == 2.5
+    assert desk.document.undo_stack.count() == 1
+
+
+def test_undo_rests_during_a_drag(desk: Desk) -> None:
+    desk.document.change(edits.replace_shoulder(desk.shaft, "s1", radius=1.2), "Fillet")
+    undo = desk.document.undo_stack.createUndoAction(desk.bench)
+    assert undo.isEnabled()
+    desk.pull(desk.at("shoulder", "s1", "radius"), QPointF(-50, -50), let_go=False)
+    shown = desk.shaft
+    assert not undo.isEnabled()
+    desk.keys(Key.Key_Z, modifiers=CTRL)
+    undo.trigger()
+    assert desk.shaft == shown
+    desk.release(QPointF(10, 10))
+    assert undo.isEnabled()
+    undo.trigger()
+    assert desk.radius(0) == 1.2
+
+
+def test_a_step_taken_back_under_a_drag_ends_it_in_good_order(desk: Desk) -> None:
+    before = desk.shaft
+    desk.document.change(edits.replace_shoulder(desk.shaft, "s1", radius=1.2), "Fillet")
+    start = desk.at("shoulder", "s1", "radius")
+    desk.pull(start, QPointF(-50, -50), let_go=False)
+    desk.document.undo_stack.undo()
+    assert desk.shaft == before
+    desk.move(start + QPointF(-90, -90))
+    desk.release(start)
+    assert desk.shaft == before
+    assert desk.hand.gesture is None
+    assert desk.document.undo_stack.index() == 0
+
+
+def test_an_outline_pulls_the_diameter(desk: Desk) -> None:
+    by = 5.0 * desk.ruler.scale / 2
+    desk.pull(desk.at("segment", "s2", "diameter"), QPointF(0, -by))
+    assert desk.shaft.segments[1].diameter == 60.0
+    assert desk.document.undo_stack.undoText() == "Diameter s2 to 60 mm"
+
+
+def test_a_face_is_pulled_between_its_neighbours_and_with_shift_all_moves_along(desk: Desk) -> None:
+    start, scale = desk.at("segment", "s1", "length"), desk.ruler.scale
+    desk.pull(start, QPointF(7.0 * scale, 0))
+    assert desk.shaft.segments[0].length == 67.0
+    assert desk.shaft.length == pytest.approx(250.0)
+    desk.document.undo_stack.undo()
+    desk.pull(start, QPointF(7.0 * scale, 0), SHIFT)
+    assert desk.shaft.segments[0].length == 67.0
+    assert desk.shaft.length == pytest.approx(257.0)
+    assert things(desk.shaft)["B"].x == pytest.approx(237.0)  # type: ignore[union-attr]
+
+
+def test_supports_and_loads_are_pulled_sideways(desk: Desk) -> None:
+    desk.pull(desk.at("support", "B", "x"), QPointF(-9.0 * desk.ruler.scale, 0))
+    assert things(desk.shaft)["B"].x == pytest.approx(221.0, abs=2.0)  # type: ignore[union-attr]
+    desk.pull(desk.at("radial force", "F1", "x"), QPointF(20.0 * desk.ruler.scale, 0))
+    assert things(desk.shaft)["F1"].x == pytest.approx(140.0, abs=2.0)  # type: ignore[union-attr]
+
+
+def test_the_free_end_of_an_arrow_pulls_the_force(desk: Desk) -> None:
+    grip = desk.grip("radial force", "F1", "force")
+    desk.pull(QPointF(grip.x, grip.y), QPointF(*grip.direction) * 83.0)
+    assert desk.shaft.loads[0].force == 8000.0  # type: ignore[union-attr]
+
+
+@pytest.mark.parametrize("key", [tool.key for tool in TOOLS if tool.goes == "on a diameter"])
+def test_every_size_handle_of_every_raiser_pulls_its_size(desk: Desk, key: str) -> None:
+    shaft, id = edits.add_raiser(desk.shaft, key, 100.0)
+    desk.document.load(shaft, None)
+    for grip in [grip for grip in desk.hand.grips if grip.chosen == (key, id) and grip.law == "ratio"]:
+        before = getattr(things(desk.shaft)[id], grip.name)
+        desk.pull(QPointF(grip.x, grip.y), QPointF(*grip.direction) * 60.0)
+        assert getattr(things(desk.shaft)[id], grip.name) > before
+        desk.document.undo_stack.undo()
+    desk.pull(desk.at(key, id, "x"), QPointF(10.0 * desk.ruler.scale, 0))
+    assert things(desk.shaft)[id].x == pytest.approx(110.0, abs=2.0)  # type: ignore[union-attr]
+
+
+def test_every_grip_is_taken_hold_of_within_nine_pixels(desk: Desk) -> None:
+    for grip in desk.hand.grips:
+        if not grip.is_line:
+            taken = desk.hand.grips[0].__class__
+            assert isinstance(grip, taken)
+            assert grip.distance(QPointF(grip.x + 9.0, grip.y)) <= 11.0
+            desk.move(QPointF(grip.x, grip.y), held=False)
+            assert desk.bench.cursor().shape() in (
+                Qt.CursorShape.SizeHorCursor,
+                Qt.CursorShape.SizeVerCursor,
+                Qt.CursorShape.SizeBDiagCursor,
+                Qt.CursorShape.SizeFDiagCursor,
+            )
+
+
+def test_a_drag_of_a_fillet_shows_its_radius_window(desk: Desk) -> None:
+    desk.pull(desk.at("shoulder", "s1", "radius"), QPointF(-20, -20), let_go=False)
+    results = desk.document.scene.results
+    assert results is not None
+    gesture = desk.hand.gesture
+    assert isinstance(gesture, Drag)
+    assert gesture.window == radius_window(evaluate(loaded_shaft()), "s1")
+    desk.bench.grab()
+    desk.keys(Key.Key_Escape)
+
+
+def test_one_analysis_for_each_move_that_changes_something(desk: Desk, monkeypatch: pytest.MonkeyPatch) -> None:
+    counted: list[Shaft] = []
+    real: Callable[[Shaft], object] = app.document.evaluate
+
+    def counting(shaft: Shaft) -> object:
+        counted.append(shaft)
+        return real(shaft)
+
+    start = desk.at("shoulder", "s1", "radius")
+    desk.press(start)
+    desk.move(start + QPointF(-10, -10), modifiers=CTRL)
+    monkeypatch.setattr(app.document, "evaluate", counting)
+    for step in range(11, 21):
+        desk.move(start + QPointF(-step, -step), modifiers=CTRL)
+    assert len(counted) == 10
+    desk.move(start + QPointF(-20, -20), modifiers=CTRL)
+    desk.release(start + QPointF(-20, -20), modifiers=CTRL)
+    assert len(counted) == 10
+
+
+# keyboard alone ------------------------------------------------------------------------------------------
+
+
+def test_arrows_walk_and_change_and_steps_of_one_size_merge(desk: Desk) -> None:
+    before = desk.shaft
+    for _ in range(20):
+        desk.keys(Key.Key_Right)
+        if desk.document.scene.chosen == ("shoulder", "s1"):
+            break
+    assert desk.document.scene.chosen == ("shoulder", "s1")
+    results = desk.document.scene.results
+    assert results is not None
+    assert desk.document.scene.station == results.station_of("s1")
+    radius = desk.radius(0)
+    desk.keys(Key.Key_Up, Key.Key_Up)
+    assert desk.radius(0) in edits.FIRST_RADII or desk.radius(0) > radius
+    desk.keys(Key.Key_Up, modifiers=CTRL)
+    assert desk.document.undo_stack.count() == 1
+    assert f"{desk.radius(0):g}" in desk.document.undo_stack.undoText()
+    desk.document.undo_stack.undo()
+    assert desk.shaft == before
+
+
+def test_left_and_right_pass_every_station_and_every_thing(desk: Desk) -> None:
+    desk.keys(Key.Key_Home)
+    seen = []
+    for _ in range(60):
+        seen.append((desk.document.scene.chosen, desk.document.scene.station))
+        desk.keys(Key.Key_Right)
+    results = desk.document.scene.results
+    assert results is not None
+    stations = {(s.kind, s.place) for s in results.stations}
+    assert stations <= {chosen for chosen, _ in seen}
+    assert set(things(desk.shaft)) <= {chosen[1] for chosen, _ in seen if chosen}
+
+
+def test_enter_opens_the_number_and_a_refusal_stays_beside_it(desk: Desk) -> None:
+    desk.click(desk.at("shoulder", "s1", "radius"))
+    desk.keys(Key.Key_Return)
+    field = desk.hand.number_field
+    assert field is not None
+    assert field.field.hasFocus()
+    desk.keys("500", Key.Key_Return)
+    assert desk.hand.number_field is field
+    assert field.field.problem
+    assert desk.shaft == loaded_shaft()
+    field.field.selectAll()
+    desk.keys("1,5", Key.Key_Return)
+    assert desk.radius(0) == 1.5
+    assert desk.hand.number_field is None
+    assert desk.bench.hasFocus()
+
+
+def test_esc_leaves_the_number_as_it_was(desk: Desk) -> None:
+    desk.click(desk.at("shoulder", "s1", "radius"))
+    desk.keys(Key.Key_Return, "3", Key.Key_Escape, Key.Key_Escape)
+    assert desk.hand.number_field is None
+    assert desk.shaft == loaded_shaft()
+
+
+def test_a_digit_opens_the_number_with_it(desk: Desk) -> None:
+    desk.click(desk.at("segment", "s2", "diameter"))
+    desk.keys("60", Key.Key_Return)
+    assert desk.shaft.segments[1].diameter == 60.0
+
+
+def test_tab_goes_through_the_sizes_and_then_on(desk: Desk) -> None:
+    desk.click(desk.at("segment", "s2", "diameter"))
+    names = [desk.hand.keys.size.name]  # type: ignore[union-attr]
+    while desk.bench.hasFocus() and len(names) < 10:
+        desk.keys(Key.Key_Tab)
+        if desk.bench.hasFocus():
+            names.append(desk.hand.keys.size.name)  # type: ignore[union-attr]
+    assert names == ["diameter", "end_diameter", "bore", "length"]
+    assert not desk.bench.hasFocus()
+
+
+def test_delete_takes_the_chosen_thing_off(desk: Desk) -> None:
+    desk.click(desk.at("radial force", "F1", "x"))
+    desk.keys(Key.Key_Delete)
+    assert "F1" not in things(desk.shaft)
+    assert desk.document.scene.chosen is None
+    assert desk.document.undo_stack.undoText() == "Radial force F1 taken off"
+    desk.click(desk.at("shoulder", "s1", "radius"))
+    desk.keys(Key.Key_Delete)
+    assert desk.shaft.segments[0].shoulder is not None
+    assert any("differ" in words for words in desk.refusals)
+
+
+# kit ---------------------------------------------------------------------------------------------------
+
+
+def test_supports_and_loads_are_put_on_by_key_and_click(empty: Desk) -> None:
+    empty.keys("D", "200", Key.Key_Tab, "40", Key.Key_Return, Key.Key_Return)
+    assert empty.document.scene.missing
+    for key, x in (("S", 20.0), ("S", 180.0), ("R", 100.0)):
+        empty.keys(key)
+        assert empty.hand.gesture is not None
+        empty.click(empty.bench.to_screen(x + 0.4, 3.0))
+    assert [support.x for support in empty.shaft.supports] == [20.0, 180.0]
+    assert [support.locating for support in empty.shaft.supports] == [True, False]
+    assert empty.document.scene.results is not None
+    assert empty.document.scene.chosen == ("radial force", "F1")
+    assert empty.shaft.loads[0].force > 0  # type: ignore[union-attr]
+    empty.keys("2500", Key.Key_Return)
+    assert empty.shaft.loads[0].force == 2500.0  # type: ignore[union-attr]
+
+
+def test_things_are_put_on_by_keyboard_alone(empty: Desk) -> None:
+    empty.keys("D", "200", Key.Key_Tab, "40", Key.Key_Return, Key.Key_Return)
+    empty.keys("S", "15", Key.Key_Return, "S", "185", Key.Key_Return, "T", Key.Key_Right, Key.Key_Return)
+    assert [support.x for support in empty.shaft.supports] == [15.0, 185.0]
+    assert empty.shaft.loads[0].x == 105.0
+    empty.keys("120", Key.Key_Return)
+    assert empty.shaft.loads[0].torque == 120e3  # type: ignore[union-attr]
+
+
+@pytest.mark.parametrize("tool", [tool for tool in TOOLS if tool.place], ids=lambda tool: tool.key)
+def test_every_entry_of_the_kit_can_be_dropped_on_the_bench(qtbot: QtBot, tool: object) -> None:
+    shaft = loaded_shaft()
+    desk = Desk(qtbot, edits.remove_thing(shaft, "A"))
+    before, key = desk.shaft, tool.key  # type: ignore[attr-defined]
+    data = QMimeData()
+    data.setData(MIME, QByteArray(key.encode()))
+    pos = desk.bench.to_screen(90.0, 5.0)
+    enter = QDragEnterEvent(pos.toPoint(), Qt.DropAction.CopyAction, data, LEFT, PLAIN)
+    QApplication.sendEvent(desk.bench, enter)
+    assert enter.isAccepted()
+    drop = QDropEvent(pos, Qt.DropAction.CopyAction, data, LEFT, PLAIN)
+    QApplication.sendEvent(desk.bench, drop)
+    assert drop.isAccepted()
+    assert desk.shaft != before
+    assert desk.document.scene.chosen is not None
+    assert desk.hand.keys.size is not None
+    assert desk.document.undo_stack.count() == 1
+
+
+def test_esc_puts_an_entry_back(desk: Desk) -> None:
+    action = desk.kit.actions_by_key["support"]
+    desk.keys("S")
+    assert action.isChecked()
+    desk.keys(Key.Key_Escape)
+    assert not action.isChecked()
+    assert desk.hand.gesture is None
+    action.trigger()
+    assert action.isChecked()
+    action.trigger()
+    assert not action.isChecked()
+    assert desk.shaft == loaded_shaft()
+
+
+def test_a_third_support_is_refused_in_words(desk: Desk) -> None:
+    desk.keys("S")
+    desk.click(desk.bench.to_screen(100.0, 0.0))
+    assert len(desk.shaft.supports) == 2
+    assert desk.refusals
+    desk.bench.grab()
+    desk.keys(Key.Key_Escape)
+
+
+def test_every_entry_has_name_letter_and_words(desk: Desk) -> None:
+    actions = desk.kit.actions_by_key
+    assert set(actions) == {tool.key for tool in TOOLS}
+    letters = [action.shortcut().toString() for action in actions.values()]
+    assert len(set(letters)) == len(letters)
+    for action in actions.values():
+        assert action.text()
+        assert action.toolTip()
+        assert desk.kit.bar.widgetForAction(action).accessibleName()
+
+
+# menu --------------------------------------------------------------------------------------------------
+
+
+def test_the_menu_of_a_thing_offers_its_sizes_and_changes(desk: Desk) -> None:
+    from app.bench.thing_menu import thing_menu
+
+    desk.click(desk.at("shoulder", "s1", "radius"))
+    menu = thing_menu(desk.hand, 60.0)
+    assert menu is not None
+    corners = next(action.menu() for action in menu.actions() if action.menu() is not None)
+    next(action for action in corners.actions() if action.text().startswith("1.5 mm")).trigger()  # type: ignore[union-attr]
+    assert desk.shaft.segments[0].shoulder.bearing_corner == 1.5  # type: ignore[union-attr]
+
+    desk.click(desk.bench.to_screen(110.0, 5.0))
+    menu = thing_menu(desk.hand, 110.0)
+    assert menu is not None
+    by_text = {action.text().replace("&", ""): action for action in menu.actions()}
+    assert any(text.startswith("Bore s2") for text in by_text)
+    by_text["Split here"].trigger()
+    assert [segment.length for segment in desk.shaft.segments] == [60.0, 50.0, 70.0, 70.0]
+
+    desk.click(desk.at("support", "B", "x"))
+    menu = thing_menu(desk.hand, 230.0)
+    assert menu is not None
+    next(action for action in menu.actions() if "locating" in action.text()).trigger()
+    assert [support.locating for support in desk.shaft.supports] == [False, True]
