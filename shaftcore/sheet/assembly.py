@@ -13,7 +13,7 @@ from shaftcore.sheet.edition import Edition
 from shaftcore.sheet.givens import givens
 from shaftcore.sheet.lettering import load_type, para
 from shaftcore.sheet.pages import ACROSS, UPRIGHT, ChartRoom, Furniture, Heading, SheetTemplate, papers, turn_to
-from shaftcore.sheet.station_key import station_key
+from shaftcore.sheet.station_key import key_height, station_key
 from shaftcore.sheet.station_tables import station_tables
 from shaftcore.sheet.summary import summary
 from shaftcore.sheet.traces import traces
@@ -28,6 +28,9 @@ ABOUT_DRAWING = (
     "a cross one away from the viewer; a bow is a torque, its head above where it goes in, below where it comes out."
 )
 
+ABOUT_HEIGHT = 29.0
+"""Height (mm) of the heading above the drawing and of the words below it."""
+
 
 def sheet_bytes(edition: Edition, say: Say, pause: Pause) -> bytes:
     """The whole PDF. `pause` is called between steps and may raise to stop the work."""
@@ -35,7 +38,7 @@ def sheet_bytes(edition: Edition, say: Say, pause: Pause) -> bytes:
     say(0.05, "Drawing the shaft")
     paper = papers(edition.system)[ACROSS]
     width = paper.width / mm
-    drawing, height = shaft_drawing(edition, width)
+    drawing, height = shaft_drawing(edition, width, (paper.height - key_height(edition)) / mm - ABOUT_HEIGHT)
     rooms = {"drawing": (width, height), "traces": (width, paper.height / mm - 10)}
     pause()
     say(0.15, "Drawing the traces")

@@ -74,10 +74,13 @@ def limits_and_release(edition: Edition) -> list[Flowable]:
         *section("Not checked", *_items(NOT_CHECKED)),
         *section("Cautions", *_items(CAUTIONS)),
         *_call_outs(edition),
-        *section("Sources", *_items([SOURCES[key].full for key in sources_used(edition)])),
-        Spacer(1, 4 * mm),
-        KeepTogether([Heading("Release", 1), Spacer(1, 1 * mm), _signatures(edition)]),
+        KeepTogether([*_sources(edition), Heading("Release", 1), Spacer(1, 1 * mm), _signatures(edition)]),
     ]
+
+
+def _sources(edition: Edition) -> list[Flowable]:
+    full = [SOURCES[key].full for key in sources_used(edition)]
+    return [Heading("Sources", 1), *_items(full), Spacer(1, 3 * mm)]
 
 
 def _items(lines: Sequence[str]) -> list[Flowable]:

@@ -22,14 +22,16 @@ from shaftcore.sheet.utilisation_band import FULL, band_stretches, colours
 
 EDGE = 14.0
 """Room (mm) left and right of the shaft."""
-TALLEST = 62.0
-"""Most height (mm) the shaft itself may take."""
+SHORTEST, TALLEST = 42.0, 64.0
+"""Between which heights (mm) a thick shaft is drawn, as the page has room."""
+AROUND = 78.0
+"""Height (mm) of all that stands above and below the shaft in the drawing, about."""
 CLEAR = 15.0
 """Room (mm) above and below the shaft for arrows and bearings."""
 ROW = 4.6
 BAND = 1.5
 """Width (mm) of the utilisation band."""
-LEAST_STRETCH = 1.0
+LEAST_STRETCH = 1.6
 """Length (mm) on paper below which a raiser's stretch would not be seen."""
 MOST_NUMBERS = 160
 
@@ -37,16 +39,16 @@ MOST_NUMBERS = 160
 class Sheetwise:
     """From the shaft's mm to mm on paper; the axis lies at height `middle`."""
 
-    def __init__(self, results: Results, width: float) -> None:
+    def __init__(self, results: Results, width: float, tallest: float) -> None:
         outline = upper_outline(results.shaft)
         self.length, self.radius = results.shaft.length, float(outline[:, 1].max())
-        self.scale = min((width - 2 * EDGE) / self.length, TALLEST / (2 * self.radius))
+        self.scale = min((width - 2 * EDGE) / self.length, tallest / (2 * self.radius))
         self.left = (width - self.length * self.scale) / 2
         self.width, self.half = width, self.radius * self.scale
         self.rows = rows_needed(len(results.stations), 5.0, width)
         self.tags = len(results.shaft.loads) + len(results.shaft.supports)
         self.tag_rows = rows_needed(self.tags, 7.0, width)
-        self.foot = 22.0 + ROW * (self.tag_rows + 1)
+        self.foot = 19.0 + ROW * self.tag_rows
         self.middle = self.foot + CLEAR + self.half
         self.height = self.middle + self.half + CLEAR + 5.0 + ROW * (self.rows + 0.5)
         self.outline = self.points(outline)
@@ -67,10 +69,10 @@ class Sheetwise:
         return float(np.interp(x, self.outline[:, 0], self.outline[:, 1]))
 
 
-def shaft_drawing(edition: Edition, width: float) -> tuple[Figure, float]:
-    """The figure and its height (mm) for a width in mm."""
+def shaft_drawing(edition: Edition, width: float, height: float) -> tuple[Figure, float]:
+    """The figure and its height (mm) for a width in mm, about as high as `height` or lower."""
     results = edition.results
-    at = Sheetwise(results, width)
+    at = Sheetwise(results, width, min(max(height - AROUND, SHORTEST), TALLEST))
     drawn = figure(width, at.height)
     axes = bare(drawn.add_axes((0, 0, 1, 1)))
     axes.set_xlim(0, width)

@@ -10,8 +10,14 @@ from shaftcore.sheet.pages import ACROSS, papers
 from shaftcore.sheet.tables import Field, ruled_table
 
 ABREAST = 3
+HEAD_ROOM, ROW = 9 * mm, 4.2 * mm
 BESIDE = 46 * mm
 """Room for number, x and margin beside the place."""
+
+
+def key_height(edition: Edition) -> float:
+    """Height (points) of the key where every place takes one line."""
+    return HEAD_ROOM + ROW * -(-len(edition.results.stations) // ABREAST)
 
 
 def station_key(edition: Edition) -> Table:

@@ -33,7 +33,9 @@ def summary(edition: Edition) -> list[Flowable]:
     story += [para(f"<b>Provisional:</b> {typeset(words)}", "caution") for words in _provisional(edition)]
     story += [para(words, "lead") for words in _statement(edition)]
     story += [Spacer(1, 2 * mm), _compared(edition), Spacer(1, 2 * mm)]
-    story += [para(words) for words in _remarks(edition)]
+    story += [para(words) for words in _notes(edition)]
+    if title.remarks:
+        story.append(para(f"Remarks: {safe(title.remarks)}", "cell"))
     return story
 
 
@@ -99,8 +101,8 @@ def _against(edition: Edition, i: int, margin: str, factor: str, asked: float) -
         return UNLOADED
     value = getattr(edition.results.judged, margin)[i]
     words = "below the asked factor" if value < 0 else "above the asked factor" if value > 0 else "just as asked"
-    symbol = typeset(BY_KEY[factor].symbol)
-    return f"margin {edition.phrase(margin, i)}, {words} ({symbol} = {edition.cell(factor, i)}, asked {asked:g})"
+    found = f"{typeset(BY_KEY[factor].symbol)}\u00a0=\u00a0{edition.cell(factor, i)}"
+    return f"margin {edition.phrase(margin, i)}, {words} ({found}, asked\u00a0{asked:g})"
 
 
 def _compared(edition: Edition) -> Table:
@@ -120,7 +122,7 @@ def _compared(edition: Edition) -> Table:
     return ruled_table(fields, papers(edition.system)[UPRIGHT].width)
 
 
-def _remarks(edition: Edition) -> list[str]:
+def _notes(edition: Edition) -> list[str]:
     results = edition.results
     judged, asked = results.judged, results.shaft.judgement
     missing = [
@@ -144,6 +146,4 @@ def _remarks(edition: Edition) -> list[str]:
         "A design aid: the codes in force and a licensed engineer's judgement decide. What was not checked, "
         "and the cautions, stand in chapter 8."
     )
-    if results.shaft.title.remarks:
-        found.append(f"Remarks: {safe(results.shaft.title.remarks)}")
     return found

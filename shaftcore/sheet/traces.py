@@ -221,7 +221,7 @@ def _name_governing(axes: Any, board: Board, at: Array) -> None:
     if np.isfinite(at[i]):
         axes.annotate(
             f"No. {board.results.stations[i].number}", (board.station_x[i], min(at[i], axes.get_ylim()[1])),
-            xytext=(5, 0), va="center", textcoords="offset points",
+            xytext=(5, 0), va="center", textcoords="offset points", bbox={"fc": "white", "ec": "none", "pad": 0.6},
             fontproperties=letters(6.2, True), color=TEAL, zorder=6,
         )  # fmt: skip
 

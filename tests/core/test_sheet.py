@@ -403,7 +403,7 @@ def test_us_units_convert_by_the_inch(long: Results, long_pdf: bytes) -> None:
 @pytest.mark.parametrize("results", ["small", "long"])
 def test_drawing_numbers_every_station_and_marks_every_load(results: str, request: pytest.FixtureRequest) -> None:
     chosen = request.getfixturevalue(results)
-    drawn, _ = shaft_drawing(Edition(chosen, "SI", HASH, DAY, "0"), 260.0)
+    drawn, _ = shaft_drawing(Edition(chosen, "SI", HASH, DAY, "0"), 260.0, 150.0)
     words = [text.get_text() for text in drawn.axes[0].texts]
     for station in chosen.stations:
         assert words.count(str(station.number)) >= 1
