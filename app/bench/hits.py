@@ -101,14 +101,15 @@ def thing_at(shaft: Shaft, frame: Frame, grips: tuple[Grip, ...], pos: QPointF) 
 
 
 def _raiser_grips(stage: Stage) -> Iterator[Grip]:
-    """The handles each kind declares, and for raisers that can be moved one on the lower outline."""
+    """The handles each kind declares; a step has them below too, where a raiser that can be moved has its place."""
     for seating in stage.plan.seated:
-        chosen = (seating.kind.key, seating.place)
-        for handle in seating.kind.handles(seating.record, seating.around):
-            at = stage.frame.to_screen(handle.x, handle.y)
-            direction = (handle.direction[0], -handle.direction[1])
-            yield Grip(chosen, handle.size, at.x(), at.y(), direction, "ratio")
-        if seating.kind.goes == "on a diameter":
+        chosen, movable = (seating.kind.key, seating.place), seating.kind.goes == "on a diameter"
+        for side in (1.0,) if movable else (1.0, -1.0):
+            for handle in seating.kind.handles(seating.record, seating.around):
+                at = stage.frame.to_screen(handle.x, side * handle.y)
+                direction = (handle.direction[0], -side * handle.direction[1])
+                yield Grip(chosen, handle.size, at.x(), at.y(), direction, "ratio")
+        if movable:
             at = stage.frame.to_screen(seating.around.x, -seating.around.left_diameter / 2)
             yield Grip(chosen, "x", at.x(), at.y(), (1.0, 0.0))
 

@@ -46,7 +46,7 @@ def drag_lines(scene: Scene, size: Size, value: float | None, typed: str, window
     margin = shown(scene.results.least_margin, "share", scene.system, 1, signed=True)
     lines.append(("plain", f"worst: {scene.results.stations[worst].label}   margin {margin} %"))
     if window is not None:
-        lines.append(("plain", _window_words(scene, size, window)))
+        lines.append(("symbols", _window_words(scene, size, window)))
     return lines
 
 
@@ -128,7 +128,7 @@ def _station_rows(scene: Scene, results: Results, index: int) -> list[str]:
 
 def _window_words(scene: Scene, size: Size, window: RadiusWindow) -> str:
     unit = size.declaration.dimension.unit(scene.system)
-    allowed = f"{window.limited_by} allows {size.shown(window.allowed, scene.system)}"
+    allowed = f"{size.shown(window.allowed, scene.system)} allowed ({window.limited_by})"
     if window.needed is None:
         return f"no radius reaches the asked factors; {allowed}"
     # rounded up: the number shown must be one that lasts
