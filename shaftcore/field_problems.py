@@ -97,7 +97,7 @@ def _as_float(value: float) -> float:
     try:
         return float(value)
     except OverflowError:  # a whole number of more than 308 digits
-        return math.copysign(math.inf, value)
+        return math.inf if value > 0 else -math.inf
 
 
 def _text_remedy(text: Text, value: Any) -> str:
