@@ -3,6 +3,7 @@
 Thin cosmetic pens are what is quick; a strong line is drawn as several of them side by side.
 """
 
+import math
 from collections.abc import Sequence
 from typing import Any
 
@@ -21,8 +22,8 @@ from shaftcore.notches._contract import Array
 
 FAR_OUT = 20_000.0
 """Pixels beyond which a coordinate is cut, far outside any screen."""
-STRAND = 0.8
-"""Pixels of the screen between the thin lines that make a strong one."""
+WIDEST_GAP = 1.2
+"""Pixels of the screen between the thin lines of a strong one that the eye does not part."""
 PALE = 0.38
 """Share of its ink that a ghost keeps."""
 
@@ -82,10 +83,8 @@ class LivePainter:
         if curve.line.dash:
             pen.setDashPattern([step * ratio for step in curve.line.dash])
         painter.setPen(pen)
-        strands = max(1, 1 + round((curve.line.weight * ratio - 1) / STRAND))
-        for strand in range(strands):
-            aside = (strand - (strands - 1) / 2) * STRAND / ratio
-            painter.drawPolyline(self._polyline.fill(x + aside, y + aside))
+        for right, down in strands(curve.line.weight * ratio):
+            painter.drawPolyline(self._polyline.fill(x + right / ratio, y + down / ratio))
 
     def _marks(
         self, painter: QPainter, curve: Curve, mapping: Mapping, scale: Scale, ink: QColor, frame: Frame
@@ -128,6 +127,20 @@ def _draw_stamp(ink: str, paper: str, upward: bool, ratio: float) -> QPixmap:
         painter.drawEllipse(box)
     painter.end()
     return pixmap
+
+
+def strands(width: float) -> tuple[tuple[float, float], ...]:
+    """Where the thin lines lie that make a line of `width`, right and down, all in pixels of the screen.
+
+    A pair will do for a line of up to two pixels; more than that is as wide in every direction.
+    """
+    spare = (width - 1) / 2
+    if spare < 0.15:
+        return ((0.0, 0.0),)
+    if spare <= 0.5:
+        return ((-spare, -spare), (spare, spare))
+    rings = [spare * step / math.ceil(spare / WIDEST_GAP) for step in range(1, math.ceil(spare / WIDEST_GAP) + 1)]
+    return tuple(place for r in rings for place in ((-r, 0.0), (r, 0.0), (0.0, -r), (0.0, r)))
 
 
 def to_pixels(mapping: Mapping, x: Array, y: Array) -> tuple[Array, Array]:

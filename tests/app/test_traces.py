@@ -21,7 +21,7 @@ from app.ruler import LEFT_MARGIN, RIGHT_MARGIN, Ruler
 from app.theme import DARK, LIGHT
 from app.traces.bands import GAP, bands_of, with_border_moved
 from app.traces.limits import Scale, scales_of
-from app.traces.live import FAR_OUT, Polyline, changed_tracks, to_pixels
+from app.traces.live import FAR_OUT, Polyline, changed_tracks, strands, to_pixels
 from app.traces.pace import Pace
 from app.traces.reading import value_at
 from app.traces.ticks import labels, value_ticks
@@ -146,6 +146,14 @@ def test_polyline_buffer_is_the_painters_own_memory() -> None:
     assert again[2].toTuple() == (2.0, -2.0)
     assert again[4].toTuple() == (2.0, -2.0)  # what is left over adds no stroke
     assert polyline.fill(np.arange(50.0), np.zeros(50))[49].toTuple() == (49.0, 0.0)
+
+
+@pytest.mark.parametrize("width", [1.0, 1.6, 2.0, 3.2, 4.8, 9.0])
+def test_strands_make_the_width_without_gaps(width: float) -> None:
+    right, down = np.array(strands(width)).T
+    for across in (right, down):
+        assert np.ptp(across) + 1.0 == pytest.approx(width, abs=0.31)
+        assert np.diff(np.sort(across)).max(initial=0.0) <= 1.2
 
 
 def test_tracks_share_the_height_and_borders_move(view: TraceView) -> None:
