@@ -16,7 +16,7 @@ from shaftcore.sheet.chart_page import bare, figure, letters
 from shaftcore.sheet.edition import Edition
 from shaftcore.sheet.numbers import shown, unit_of
 from shaftcore.sheet.palette import FAINT, INK, LEAD, METAL, TEAL
-from shaftcore.sheet.spread import rows_needed, spread
+from shaftcore.sheet.spread import TAG, rows_needed, spread
 from shaftcore.sheet.symbols import draw_loads, draw_supports
 from shaftcore.sheet.utilisation_band import FULL, band_stretches, colours
 
@@ -24,7 +24,7 @@ EDGE = 14.0
 """Room (mm) left and right of the shaft."""
 SHORTEST, TALLEST = 42.0, 64.0
 """Between which heights (mm) a thick shaft is drawn, as the page has room."""
-AROUND = 78.0
+AROUND = 70.0
 """Height (mm) of all that stands above and below the shaft in the drawing, about."""
 CLEAR = 15.0
 """Room (mm) above and below the shaft for arrows and bearings."""
@@ -33,7 +33,6 @@ BAND = 1.5
 """Width (mm) of the utilisation band."""
 LEAST_STRETCH = 1.6
 """Length (mm) on paper below which a raiser's stretch would not be seen."""
-MOST_NUMBERS = 160
 
 
 class Sheetwise:
@@ -45,9 +44,12 @@ class Sheetwise:
         self.scale = min((width - 2 * EDGE) / self.length, tallest / (2 * self.radius))
         self.left = (width - self.length * self.scale) / 2
         self.width, self.half = width, self.radius * self.scale
-        self.rows = rows_needed(len(results.stations), 5.0, width)
+        count = len(results.stations)
+        self.gap = 2.0 + 1.4 * len(str(count))
+        self.rows = rows_needed(count, self.gap, width, 2)
+        self.every = -(-int(count * self.gap) // int(self.rows * width))
         self.tags = len(results.shaft.loads) + len(results.shaft.supports)
-        self.tag_rows = rows_needed(self.tags, 7.0, width)
+        self.tag_rows = rows_needed(self.tags, TAG, width, 4)
         self.foot = 19.0 + ROW * self.tag_rows
         self.middle = self.foot + CLEAR + self.half
         self.height = self.middle + self.half + CLEAR + 5.0 + ROW * (self.rows + 0.5)
@@ -142,11 +144,9 @@ def _ticks(axes: Any, at: Sheetwise, x: Array, use: Array) -> None:
 
 def _numbers(axes: Any, at: Sheetwise, results: Results) -> None:
     """Station numbers above the shaft, each led to its place; the governing one set bold in a frame."""
-    stations = results.stations
-    every = -(-len(stations) // MOST_NUMBERS)
-    kept = [s for s in stations if s.number % every == 0 or s.number - 1 == results.governing]
+    kept = [s for s in results.stations if s.number % at.every == 0 or s.number - 1 == results.governing]
     want = at.x(np.array([s.x for s in kept]))
-    places = spread(want, 5.0 / at.rows, 4.0, at.width - 4.0)
+    places = spread(want, at.gap / at.rows, 4.0, at.width - 4.0)
     low = at.middle + at.half + CLEAR
     leads = []
     for i, (station, x, place) in enumerate(zip(kept, want, places, strict=True)):
@@ -179,6 +179,8 @@ def _ruler(axes: Any, at: Sheetwise, edition: Edition) -> None:
     ratio = f"scale about 1 : {1 / at.scale:.3g}" if at.scale < 1 else f"scale about {at.scale:.3g} : 1"
     length = shown(at.length, "length", edition.system)
     words = f"{ratio}, length {length} {unit_of('length', edition.system)}"
+    if at.every > 1:
+        words = f"one station in {at.every} is numbered; {words}"
     axes.text(at.width - 1, 5.0, words, ha="right", va="center", color=FAINT, fontproperties=letters(6))
 
 

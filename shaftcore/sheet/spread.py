@@ -4,6 +4,9 @@ import numpy as np
 
 from shaftcore.notches._contract import Array
 
+TAG = 7.5
+"""Room (mm) for the mark of a support or load."""
+
 
 def spread(wanted: Array, gap: float, low: float, high: float) -> Array:
     """Positions (n, sorted as `wanted`) at least `gap` apart, within low..high where there is room, near the wanted.
@@ -27,6 +30,6 @@ def spread(wanted: Array, gap: float, low: float, high: float) -> Array:
     return np.clip(kept, low, high - offsets[-1]) + offsets
 
 
-def rows_needed(count: int, gap: float, room: float, most: int = 2) -> int:
+def rows_needed(count: int, gap: float, room: float, most: int) -> int:
     """In how many rows `count` labels of width `gap` stand in `room`."""
     return min(max(int(np.ceil(count * gap / room)), 1), most)

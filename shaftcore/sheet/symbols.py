@@ -17,7 +17,7 @@ from shaftcore.shaft import AxialForce, RadialForce, Torque
 from shaftcore.sheet.chart_page import letters
 from shaftcore.sheet.givens import load_marks, support_marks
 from shaftcore.sheet.palette import INK, LEAD, RUST, TEAL, VIOLET
-from shaftcore.sheet.spread import spread
+from shaftcore.sheet.spread import TAG, spread
 
 if TYPE_CHECKING:
     from shaftcore.sheet.drawing import Sheetwise
@@ -118,8 +118,9 @@ def _tagged(results: Results) -> Iterator[tuple[float, str, str]]:
 def _marks(axes: Any, at: "Sheetwise", results: Results) -> None:
     """L and B marks in rows under the shaft, each led to its place."""
     tags = sorted(_tagged(results), key=lambda tag: tag[0])
+    tags = tags[:: -(-int(len(tags) * TAG) // int(at.tag_rows * at.width))]
     want = at.x(np.array([x for x, _, _ in tags]))
-    places = spread(want, 7.0 / at.tag_rows, 4.0, at.width - 4.0)
+    places = spread(want, TAG / at.tag_rows, 4.0, at.width - 4.0)
     high = at.middle - at.half - CLEARANCE
     leads = []
     for i, ((along, mark, colour), x, place) in enumerate(zip(tags, want, places, strict=True)):

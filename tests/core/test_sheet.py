@@ -37,6 +37,8 @@ from shaftcore.units import System
 from shaftcore.workings import workings_of
 
 DAY = datetime.date(2026, 3, 4)
+FONT_TYPE = matplotlib.rcParams["pdf.fonttype"]
+"""As it stood before any sheet was written."""
 HASH = "0123456789abcdef" * 4
 
 SI_SHOWN = {
@@ -192,6 +194,7 @@ def test_import_is_quick_and_knows_no_window() -> None:
 
 def test_drawing_library_is_left_as_it_was(again: Export) -> None:
     assert again.settings_after == again.settings_before
+    assert again.settings_after["pdf.fonttype"] == FONT_TYPE
 
 
 # pages ----------------------------------------------------------------------------------------
@@ -410,6 +413,17 @@ def test_drawing_numbers_every_station_and_marks_every_load(results: str, reques
     for i in range(1, len(chosen.shaft.loads) + 1):
         assert words.count(f"L{i}") == 1
     assert {"B1", "B2"} <= set(words)
+
+
+def test_drawing_with_too_many_stations_says_how_many_are_numbered() -> None:
+    segments = tuple(Segment(f"s{i}", 30.0, 40.0 + 4 * (i % 2), shoulder=Shoulder(1.5)) for i in range(300))
+    supports = (Support("l", 0.0, locating=True), Support("r", 9000.0))
+    results = evaluate(Shaft(segments=segments, supports=supports, loads=(RadialForce("f", 4500.0, 100.0),)))
+    drawn, _ = shaft_drawing(Edition(results, "SI", HASH, DAY, "0"), 260.0, 150.0)
+    words = [text.get_text() for text in drawn.axes[0].texts]
+    numbers = [int(word) for word in words if word.isdigit() and int(word) <= len(results.stations)]
+    assert results.stations[results.governing].number in numbers
+    assert any("one station in" in word for word in words)
 
 
 @settings(max_examples=60, deadline=None)
