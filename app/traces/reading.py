@@ -45,7 +45,9 @@ def station_text(track: Track, results: Results, station: int, system: System) -
         for line in track.lines
         if line.at_stations is not None
     ]
-    return f"station {results.stations[station].number}: {', '.join(parts)}" if parts else ""
+    place = results.stations[station]
+    notched = "" if place.site is None else ", notched"
+    return f"station {place.number}{notched}: {', '.join(parts)}" if parts else ""
 
 
 def _text(track: Track, line: Line, value: float, system: System) -> str:

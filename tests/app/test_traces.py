@@ -23,7 +23,7 @@ from app.traces.bands import GAP, bands_of, with_border_moved
 from app.traces.limits import Scale, scales_of
 from app.traces.live import FAR_OUT, Polyline, changed_tracks, strands, to_pixels
 from app.traces.pace import Pace
-from app.traces.reading import value_at
+from app.traces.reading import station_text, value_at
 from app.traces.ticks import labels, value_ticks
 from app.traces.tracks import BY_KEY, TRACKS, Curve, curves_of
 from app.traces.view import TraceView
@@ -211,6 +211,22 @@ def test_values_are_read_on_the_right_of_a_jump() -> None:
     endless = np.array([math.inf, math.inf, 1.0, 2.0])
     assert value_at(x, endless, 5.0) == math.inf
     assert value_at(x, endless, 10.0) == 1.0
+
+
+def test_a_station_is_read_with_its_notch(document: Document) -> None:
+    document.load(a_shaft(), None)
+    results = document.scene.results
+    assert results is not None
+    at_shoulder = results.station_of("a")
+    assert at_shoulder is not None
+    margin = results.judged.margin[at_shoulder]
+    assert f"{at_shoulder + 1}, notched: fatigue {100 * margin:+.1f}" in station_text(
+        BY_KEY["margin"], results, at_shoulder, "SI"
+    ).replace("−", "-")
+    at_load = results.station_of("f")
+    assert at_load is not None
+    assert "notched" not in station_text(BY_KEY["margin"], results, at_load, "SI")
+    assert station_text(BY_KEY["moment"], results, at_shoulder, "SI") == ""
 
 
 def test_units_switch(view: TraceView, document: Document) -> None:
