@@ -3,8 +3,8 @@
 from collections.abc import Callable
 
 import pytest
-from PySide6.QtCore import QByteArray, QEvent, QMimeData, QPointF, Qt
-from PySide6.QtGui import QDragEnterEvent, QDropEvent, QMouseEvent
+from PySide6.QtCore import QByteArray, QEvent, QMimeData, QPointF, QRectF, Qt
+from PySide6.QtGui import QDragEnterEvent, QDropEvent, QMouseEvent, QPainter, QPixmap
 from PySide6.QtTest import QTest
 from PySide6.QtWidgets import QApplication, QVBoxLayout, QWidget
 from pytestqt.qtbot import QtBot
@@ -13,12 +13,16 @@ import app.document
 from app.bench.drags import Drag
 from app.bench.hand import BenchHand, make_hand
 from app.bench.hits import Grip
+from app.bench.placing import rested_place
+from app.bench.readout import drag_lines, draw_readout
+from app.bench.sizes import size_of
+from app.bench.thing_menu import thing_menu
 from app.bench.tools import MIME, TOOLS
 from app.bench.view import BenchView
 from app.document import Document
 from app.kit import Kit
 from app.ruler import Ruler
-from app.theme import LIGHT
+from app.theme import DARK, LIGHT
 from shaftcore import edits
 from shaftcore.evaluation import evaluate
 from shaftcore.preferred import R40
@@ -647,8 +651,6 @@ def test_every_entry_has_name_letter_and_words(desk: Desk) -> None:
 
 
 def test_the_menu_of_a_thing_offers_its_sizes_and_changes(desk: Desk) -> None:
-    from app.bench.thing_menu import thing_menu
-
     desk.click(desk.at("shoulder", "s1", "radius"))
     menu = thing_menu(desk.hand, 60.0)
     assert menu is not None
@@ -669,3 +671,139 @@ def test_the_menu_of_a_thing_offers_its_sizes_and_changes(desk: Desk) -> None:
     assert menu is not None
     next(action for action in menu.actions() if "locating" in action.text()).trigger()
     assert [support.locating for support in desk.shaft.supports] == [False, True]
+
+
+# what is shown and the rest ------------------------------------------------------------------------------
+
+
+def test_the_readout_of_a_fillet_names_size_factors_worst_place_and_window(desk: Desk) -> None:
+    weak = edits.replace_thing(desk.shaft, "F1", force=14000.0)
+    desk.document.load(edits.replace_shoulder(weak, "s1", radius=0.6, bearing_corner=2.1), None)
+    size = size_of(desk.shaft, ("shoulder", "s1"), "radius")
+    results = desk.document.scene.results
+    assert size is not None
+    assert results is not None
+    window = radius_window(results, "s1")
+    lines = [text for _, text in drag_lines(desk.document.scene, size, 0.6, "", window)]
+    assert lines[0].startswith("Fillet radius s1|s2")
+    assert "0.6 mm" in lines[0]
+    assert "Kt" in lines[1]
+    assert "margin" in lines[2]
+    assert results.stations[results.governing].label in lines[3]
+    assert window.needed is not None
+    needed = float(lines[4].split(": ")[1].split(" mm needed")[0])
+    assert window.needed <= needed < window.needed + 0.01
+    assert "2 mm allowed (bearing corner" in lines[4]
+    typed = drag_lines(desk.document.scene, size, 0.6, "1,", window)
+    assert "1,▏" in typed[0][1]
+
+
+def test_the_readout_keeps_clear_of_what_is_pulled(desk: Desk) -> None:
+    room, pulled = QRectF(0, 0, 600, 300), QPointF(320, 160)
+    canvas = QPixmap(600, 300)
+    painter = QPainter(canvas)
+    for pointer in (QPointF(300, 140), QPointF(340, 180), QPointF(300, 180), QPointF(580, 290)):
+        box = draw_readout(painter, [("size", "Fillet radius 2.5 mm"), ("plain", "n 2")], pointer, room, LIGHT, pulled)
+        assert room.contains(box)
+        assert not box.contains(pulled)
+        assert not box.contains(pointer)
+    painter.end()
+
+
+def test_things_come_to_rest_on_faces_and_middles_and_freely_with_ctrl(desk: Desk) -> None:
+    near = 5.0 / desk.ruler.scale
+    assert rested_place(desk.shaft, 60.0 + near, desk.ruler.scale, "SI") == 60.0
+    assert rested_place(desk.shaft, 120.0 - near, desk.ruler.scale, "SI") == 120.0
+    desk.document.change(edits.remove_thing(desk.shaft, "B"), "B taken off")
+    desk.keys("S")
+    desk.press(desk.bench.to_screen(60.0 + near, 0.0), CTRL)
+    assert things(desk.shaft)["B"].x == pytest.approx(60.0 + near, abs=0.3)  # type: ignore[union-attr]
+
+
+def test_shift_keeps_the_entry_in_hand(desk: Desk) -> None:
+    desk.keys("R")
+    for x in (80.0, 150.0):
+        desk.press(desk.bench.to_screen(x, 0.0), SHIFT)
+        desk.release(desk.bench.to_screen(x, 0.0), SHIFT)
+    assert {"F2", "F3"} <= set(things(desk.shaft))
+    assert desk.hand.gesture is not None
+    desk.click(desk.bench.to_screen(200.0, 0.0))
+    assert desk.hand.gesture is None
+
+
+def test_each_end_of_a_taper_is_pulled_by_its_half_of_the_outline(desk: Desk) -> None:
+    desk.document.change(edits.replace_thing(desk.shaft, "s2", end_diameter=50.0), "Taper")
+    up = QPointF(0, -5.0 * desk.ruler.scale / 2)
+    desk.pull(desk.at("segment", "s2", "end_diameter"), up)
+    segment = desk.shaft.segments[1]
+    assert (segment.diameter, segment.end_diameter) == (55.0, 55.0)
+    desk.document.undo_stack.undo()
+    desk.pull(desk.at("segment", "s2", "diameter"), up)
+    segment = desk.shaft.segments[1]
+    assert (segment.diameter, segment.end_diameter) == (60.0, 50.0)
+
+
+def test_a_fillet_is_pulled_by_its_lower_arc_too(desk: Desk) -> None:
+    upper, lower = (g for g in desk.hand.grips if g.chosen == ("shoulder", "s1") and g.name == "radius")
+    assert upper.y + lower.y == pytest.approx(2 * desk.bench.axis_px())
+    desk.pull(QPointF(lower.x, lower.y), QPointF(*lower.direction) * 54.0)
+    assert desk.radius(0) == 2.5
+
+
+def test_two_quick_clicks_open_the_number(desk: Desk) -> None:
+    desk.mouse(QEvent.Type.MouseButtonDblClick, desk.at("segment", "s1", "length"), LEFT, LEFT)
+    field = desk.hand.number_field
+    assert field is not None
+    assert field.field.accessibleName() == "Length s1"
+    desk.press(desk.bench.to_screen(110.0, 0.0))
+    assert desk.hand.number_field is None
+
+
+def test_the_middle_button_moves_the_picture(desk: Desk) -> None:
+    begin, middle = desk.ruler.begin, Qt.MouseButton.MiddleButton
+    desk.mouse(QEvent.Type.MouseButtonPress, QPointF(300, 100), middle, middle)
+    desk.mouse(QEvent.Type.MouseMove, QPointF(340, 100), NONE, middle)
+    desk.mouse(QEvent.Type.MouseButtonRelease, QPointF(340, 100), middle, NONE)
+    assert desk.ruler.begin == pytest.approx(begin - 40.0 / desk.ruler.scale)
+    desk.move(QPointF(380, 100), held=False)
+    assert desk.ruler.begin == pytest.approx(begin - 40.0 / desk.ruler.scale)
+
+
+def test_a_letter_does_not_end_a_drag_and_a_new_file_does(desk: Desk) -> None:
+    start = desk.at("shoulder", "s1", "radius")
+    desk.pull(start, QPointF(-40, -40), let_go=False)
+    desk.keys("S")
+    assert isinstance(desk.hand.gesture, Drag)
+    other = edits.add_segment(Shaft(), 10.0, 5.0)
+    desk.document.load(other, None)
+    assert desk.hand.gesture is None
+    desk.release(start)
+    assert desk.shaft == other
+
+
+def test_steps_of_two_sizes_stay_two_and_there_and_back_is_none(desk: Desk) -> None:
+    desk.click(desk.at("segment", "s2", "diameter"))
+    desk.keys(Key.Key_Up, Key.Key_Tab, Key.Key_Tab, Key.Key_Tab, Key.Key_Up)
+    assert desk.document.undo_stack.count() == 2
+    desk.document.load(loaded_shaft(), None)
+    before = desk.shaft
+    desk.document.choose(("segment", "s1"))
+    desk.keys(Key.Key_Up, Key.Key_Down)
+    assert desk.shaft == before
+    assert desk.document.undo_stack.count() == 0
+
+
+def test_the_whole_overlay_draws_in_both_themes_at_rest_and_in_every_gesture(desk: Desk) -> None:
+    for theme in (LIGHT, DARK):
+        desk.bench.set_theme(theme)
+        desk.kit.set_theme(theme)
+        plain = desk.bench.grab().toImage()
+        desk.move(desk.at("segment", "s2", "diameter"), held=False)
+        assert desk.bench.grab().toImage() != plain
+        desk.keys(Key.Key_Right)
+        desk.bench.grab()
+        for letter in ("D", "S"):
+            desk.keys(letter, "5")
+            desk.bench.grab()
+            desk.keys(Key.Key_Escape)
+        assert not desk.kit.grab().isNull()

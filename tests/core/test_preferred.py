@@ -19,6 +19,7 @@ from shaftcore.preferred import (
     RADII,
     finely,
     round_step,
+    rounded,
     snapped,
     sort_of,
     stepped,
@@ -137,3 +138,10 @@ def test_round_steps_are_one_two_or_five(least: float) -> None:
     assert step >= least * (1 - 1e-6)
     assert step <= 2.5 * least * (1 + 1e-6)
     assert min(abs(lead - whole) for whole in (1, 2, 5, 10)) < 1e-6
+
+
+@given(st.floats(0.5, 500.0), st.floats(0.01, 5.0))
+def test_freely_pulled_sizes_stay_within_what_the_hand_can_tell(value: float, resolution: float) -> None:
+    free = rounded(value, resolution)
+    assert abs(free - value) <= resolution / 4
+    assert len(f"{free:.10g}".replace(".", "").lstrip("0")) <= 6
