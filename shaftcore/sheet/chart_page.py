@@ -59,10 +59,9 @@ def lay_in(text: bytes, charts: bytes, places: Sequence[tuple[int, float, float]
     writer = pypdf.PdfWriter(clone_from=io.BytesIO(text))
     for chart, (page, x, y) in zip(pypdf.PdfReader(io.BytesIO(charts)).pages, places, strict=True):
         writer.pages[page].merge_transformed_page(chart, pypdf.Transformation().translate(x, y), over=True)
+        writer.pages[page].compress_content_streams()
     writer.add_metadata(dict(about))
     writer.page_mode = "/UseOutlines"
-    for page_object in writer.pages:
-        page_object.compress_content_streams()
     file = io.BytesIO()
     writer.write(file)
     return file.getvalue()

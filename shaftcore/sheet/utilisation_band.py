@@ -5,12 +5,16 @@ from typing import Any
 import matplotlib
 import numpy as np
 
+from shaftcore.geometry import faces_of
 from shaftcore.notches._contract import Array
 from shaftcore.outline import upper_outline
 from shaftcore.results import Results
 
 FULL = 1.25
 """Utilisation at the end of the colour scale; more looks the same."""
+
+FINENESS = 12
+"""Stretches shorter than this part of `least` are not told apart, ends of raisers and faces always."""
 
 
 def band_stretches(results: Results, least: float) -> tuple[Array, Array]:
@@ -20,9 +24,10 @@ def band_stretches(results: Results, least: float) -> tuple[Array, Array]:
     the larger utilisation counts.
     """
     spans, uses = _raiser_spans(results, least)
-    length = results.shaft.length
-    edges = np.concatenate([results.along.x, upper_outline(results.shaft)[:, 0], spans.ravel(), [0.0, length]])
-    edges = np.unique(np.clip(edges, 0.0, length))
+    between = np.concatenate([results.along.x, upper_outline(results.shaft)[:, 0]])
+    seen = np.unique(np.floor(between * FINENESS / least), return_index=True)[1]
+    edges = np.concatenate([between[seen], faces_of(results.shaft), spans.ravel()])
+    edges = np.unique(np.clip(edges, 0.0, results.shaft.length))
     middle = (edges[1:] + edges[:-1]) / 2
     use = np.interp(middle, results.along.x, results.judged_along.utilisation)
     for (begin, end), value in zip(spans, uses, strict=True):
