@@ -23,6 +23,9 @@ from shaftcore.strength_factors import SIZE_HIGH, SIZE_LOW
 BALANCE = 1e-6
 """Torque left over below this share of the largest torque is rounding of the entries."""
 
+TAPER_WORTH_SAYING = 0.1
+"""Share of a step by which a taper may rise under its fillet before it is worth a notice."""
+
 LOW_WORTH_SAYING = 0.03
 """Share by which finite elements must lie above a fit before it is worth a notice."""
 
@@ -67,6 +70,8 @@ def notices_of(
         *_balance(shaft, loads),
         *_shaft_wide(shaft),
         *_seats(shaft, seated, stations),
+        *_bore_steps(shaft, stations),
+        *_fillets_on_tapers(shaft, seated, stations),
         *_station_flags(shaft, stations, factors, judged),
     )
 
@@ -126,6 +131,36 @@ def _seats(shaft: Shaft, seated: Sequence[Seating], stations: Sequence[Station])
                 f"bearing corner r_s,min {corner:g} mm (catalogue value).",
                 seating.place,
                 where,
+            )
+
+
+def _bore_steps(shaft: Shaft, stations: Sequence[Station]) -> Iterator[Notice]:
+    faces = zip(shaft.segments, shaft.segments[1:], faces_of(shaft)[1:], strict=False)
+    steps = [(left.bore, right.bore, face) for left, right, face in faces if left.bore != right.bore]
+    where = {x: i for i, station in enumerate(stations) for x in (station.x, *station.also)} if steps else {}
+    for one, other, face in steps:
+        yield Notice(
+            "bore step",
+            f"The bore steps from {one:g} to {other:g} mm; its inner corner is judged without a stress concentration "
+            "of its own.",
+            stations[where[face]].place,
+            where[face],
+        )
+
+
+def _fillets_on_tapers(shaft: Shaft, seated: Sequence[Seating], stations: Sequence[Station]) -> Iterator[Notice]:
+    tapered = [s for s in seated if s.kind.key == "shoulder" and shaft.segments[s.segment].end_diameter is not None]
+    where = {station.place: i for i, station in enumerate(stations) if station.kind == "shoulder"} if tapered else {}
+    for seating in tapered:
+        segment, site = shaft.segments[seating.segment], seating.site
+        rise = abs(segment.right_diameter - segment.diameter) / 2 * (site.span[1] - site.span[0]) / segment.length
+        if rise > TAPER_WORTH_SAYING * site.sizes["h"]:
+            yield Notice(
+                "fillet on a taper",
+                f"Kt is that of a step between cylinders; here the thinner side changes its radius by {rise:.2g} mm "
+                "under the fillet.",
+                seating.place,
+                where[seating.place],
             )
 
 
