@@ -9,7 +9,7 @@ from PySide6.QtGui import QDropEvent, QMouseEvent, QPainter
 
 from app.bench.gesture import Gesture, is_free
 from app.bench.hits import Grip
-from app.bench.overlay import draw_window
+from app.bench.overlay import draw_band, window_band
 from app.bench.readout import drag_lines
 from app.bench.sizes import Size, at_step, size_of
 from app.number_text import parse
@@ -41,6 +41,7 @@ class Drag(Gesture):
         self.value = size.value
         self._press, self._scale = press, self.view.ruler.scale
         self.window = self._window()
+        self._band = None if self.window is None else window_band(self.base, size, self.window)
 
     def move(self, event: QMouseEvent | QDropEvent) -> None:
         if self.hand.typed or self.size.value is None:
@@ -73,8 +74,8 @@ class Drag(Gesture):
 
     def paint(self, painter: QPainter) -> None:
         scene, window = self.document.scene, self.window
-        if window is not None:
-            draw_window(painter, scene.shaft, self.view.frame, self.size, window, self.view.theme)
+        if window is not None and self._band is not None:
+            draw_band(painter, self.view.frame, self._band, window.empty, self.view.theme)
         lines = drag_lines(scene, self.size, self.value, self.hand.typed, window)
         self.hand.read_out(painter, lines, clear=None if self.grip.is_line else QPointF(self.grip.x, self.grip.y))
 

@@ -61,22 +61,24 @@ def _grip_pixmap(theme: Theme, ratio: float, hovered: bool) -> QPixmap:
     return made
 
 
-def draw_window(painter: QPainter, shaft: Shaft, frame: Frame, size: Size, window: RadiusWindow, theme: Theme) -> None:
-    """The radius window as a translucent band between the needed and the allowed outline."""
-    if window.needed is None:
-        return
+def window_band(shaft: Shaft, size: Size, window: RadiusWindow) -> Array | None:
+    """The ring (n, 2) in mm between the needed and the allowed outline; None where no radius is enough."""
     seating = next((s for s in seatings(shaft) if (s.kind.key, s.place) == size.chosen), None)
-    if seating is None:
-        return
-    colour = QColor(theme.caution if window.empty else theme.accent)
-    colour.setAlpha(BAND_ALPHA)
+    if window.needed is None or seating is None:
+        return None
     edges = []
     for radius in (window.needed, window.allowed):
         record = replace(seating.record, **{size.name: max(radius, LEAST_RADIUS)})
         edges.append(seating.kind.outline(record, seating.around))
-    band: Array = np.vstack([edges[0], edges[1][::-1]])
-    painter.setPen(hairline(theme.caution if window.empty else theme.accent))
-    painter.setBrush(QBrush(colour, Qt.BrushStyle.BDiagPattern) if window.empty else QBrush(colour))
+    return np.vstack([edges[0], edges[1][::-1]])
+
+
+def draw_band(painter: QPainter, frame: Frame, band: Array, empty: bool, theme: Theme) -> None:
+    """The radius window, translucent, on both outlines; hatched where nothing lies between its ends."""
+    colour = QColor(theme.caution if empty else theme.accent)
+    painter.setPen(hairline(theme.caution if empty else theme.accent))
+    colour.setAlpha(BAND_ALPHA)
+    painter.setBrush(QBrush(colour, Qt.BrushStyle.BDiagPattern) if empty else QBrush(colour))
     for mirrored in (False, True):
         painter.drawPolygon(polygon(frame.points(band, mirrored)))
     painter.setBrush(Qt.BrushStyle.NoBrush)

@@ -143,6 +143,8 @@ def _width(role: str, text: str, font: QFont) -> float:
 
 def _wrapped(role: str, text: str, font: QFont) -> list[str]:
     """The text in lines no wider than the readout may be."""
+    if _width(role, text, font) <= WIDEST:
+        return [text]
     lines = [""]
     for word in text.split(" "):
         longer = f"{lines[-1]} {word}" if lines[-1] else word
