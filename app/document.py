@@ -12,6 +12,7 @@ from PySide6.QtCore import QObject, Signal, Slot
 from PySide6.QtGui import QUndoCommand, QUndoStack
 
 from app.error_messages import guarded
+from app.refusal import refusal_words
 from shaftcore.errors import UnsoundShaftError
 from shaftcore.evaluation import evaluate
 from shaftcore.records import Problem
@@ -186,7 +187,7 @@ class Document(QObject):
         except UnsoundShaftError as error:
             wrong = [problem for problem in error.problems if problem.severity == "wrong"]
             if wrong:
-                self.refused.emit(str(wrong[0]))
+                self.refused.emit(refusal_words(shaft, wrong[0]))
                 return None
             missing = error.problems
         scene = replace(self.scene, shaft=shaft, results=results, missing=missing, live=live)

@@ -108,6 +108,7 @@ class MainWindow(QMainWindow):
         self.setCentralWidget(self.across)
         self.resize(1366, 768)
         self.across.setSizes([860, 506])
+        self.left.setSizes([330, 390])
 
     def set_theme(self, theme: Theme) -> None:
         self.theme = theme

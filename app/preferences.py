@@ -1,7 +1,5 @@
 """What the program remembers between sittings: window state, recent files, choices of view."""
 
-from __future__ import annotations
-
 from pathlib import Path
 
 from PySide6.QtCore import QByteArray, QSettings

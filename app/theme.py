@@ -127,6 +127,7 @@ def style_sheet(theme: Theme) -> str:
         QToolButton#foldHead {{ border: none; padding: 5px 10px; text-align: left; color: {theme.ink};
             background: {theme.panel}; font-weight: bold; }}
         QToolButton#foldHead:hover, QToolButton#foldHead:focus {{ background: {theme.accent_soft}; }}
+        QDialogButtonBox {{ dialogbuttonbox-buttons-have-icons: 0; }}
         QTextBrowser {{ background: {theme.paper}; color: {theme.ink}; border: none; }}
     """
 
