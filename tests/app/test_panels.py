@@ -457,7 +457,7 @@ def test_a_renamed_thing_stays_chosen(thing: ThingPanel, document: Document) -> 
     assert document.scene.chosen == ("segment", "seat")
     assert "seat" in thing.title.text()
     _type(thing, Segment, "id", "s1")
-    assert "rename" in thing.forms[Segment].editors["id"].words_label.text()
+    assert "Rename" in thing.forms[Segment].editors["id"].words_label.text()
 
 
 def test_nothing_chosen_says_what_to_do(thing: ThingPanel, document: Document) -> None:
