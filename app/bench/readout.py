@@ -12,7 +12,7 @@ from app.document import Scene, Selection
 from app.number_text import shown
 from app.theme import Theme, text_font
 from shaftcore.nomenclature import BY_KEY
-from shaftcore.radius_window import RadiusWindow
+from shaftcore.radius_window import SMALLEST, RadiusWindow
 from shaftcore.results import Results
 
 Lines = list[tuple[str, str]]
@@ -131,6 +131,8 @@ def _window_words(scene: Scene, size: Size, window: RadiusWindow) -> str:
     allowed = f"{size.shown(window.allowed, scene.system)} allowed ({window.limited_by})"
     if window.needed is None:
         return f"no radius reaches the asked factors; {allowed}"
+    if window.needed <= SMALLEST:
+        return f"any radius reaches the asked factors; {allowed}"
     # rounded up: the number shown must be one that lasts
     needed = f"{math.ceil(unit.shown(window.needed) * 10**unit.decimals) / 10**unit.decimals:g} {unit.symbol}"
     head = "radius window is empty" if window.empty else "radius window"

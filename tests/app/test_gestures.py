@@ -26,7 +26,7 @@ from app.theme import DARK, LIGHT
 from shaftcore import edits
 from shaftcore.evaluation import evaluate
 from shaftcore.preferred import R40
-from shaftcore.radius_window import radius_window
+from shaftcore.radius_window import SMALLEST, RadiusWindow, radius_window
 from shaftcore.shaft import Shaft, things
 
 Key, NONE, LEFT = Qt.Key, Qt.MouseButton.NoButton, Qt.MouseButton.LeftButton
@@ -691,9 +691,12 @@ def test_the_readout_of_a_fillet_names_size_factors_worst_place_and_window(desk:
     assert "margin" in lines[2]
     assert results.stations[results.governing].label in lines[3]
     assert window.needed is not None
-    needed = float(lines[4].split(": ")[1].split(" mm needed")[0])
-    assert window.needed <= needed < window.needed + 0.01
+    shown = float(lines[4].split(": ")[1].split(" mm needed")[0])
+    assert window.needed <= shown < window.needed + 0.01
     assert "2 mm allowed (bearing corner" in lines[4]
+    for needed, words in ((None, "no radius"), (SMALLEST, "any radius"), (3.001, "empty: 3.01 mm needed")):
+        other = RadiusWindow("s1", needed, 2.0, "bearing corner")
+        assert words in drag_lines(desk.document.scene, size, 0.6, "", other)[4][1]
     typed = drag_lines(desk.document.scene, size, 0.6, "1,", window)
     assert "1,▏" in typed[0][1]
 
