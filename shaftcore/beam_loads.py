@@ -109,7 +109,7 @@ def beam_loads(shaft: Shaft, profile: Profile, x: Array, side: Array) -> BeamLoa
         side=side,
         shear=shear,
         moment=moment,
-        normal=-axial_loads.felt(x, right)[0],
+        normal=0.0 - axial_loads.felt(x, right)[0],
         torque=torque_loads.felt(x, right)[0],
         deflection=deflection[..., at],
         slope=slope[..., at],

@@ -170,6 +170,7 @@ def _station_flags(
     source = shaft.judgement.kt_source
     size = judged.strength.size_diameter
     too_small_or_large = (size < SIZE_LOW) | (size > SIZE_HIGH)
+    outsides, lows, held = factors.outside.T.tolist(), factors.low_by.T.tolist(), factors.held.any(axis=0).tolist()
     for i, station in enumerate(stations):
         if too_small_or_large[i]:
             yield Notice(
@@ -185,7 +186,7 @@ def _station_flags(
         for key, words in kind.remarks(station.site):
             yield Notice(key, words[0].upper() + words[1:] + ".", station.place, i)
         fits = kind.fits[source]
-        outside = [sort for row, sort in enumerate(LOAD_SORTS) if factors.outside[row, i]]
+        outside = [sort for sort, is_outside in zip(LOAD_SORTS, outsides[i], strict=True) if is_outside]
         if outside:
             ranges = "; ".join(f"{sort}: {', '.join(map(str, fits[sort].ranges))}" for sort in outside)
             measures = kind.parameters({name: np.array(value) for name, value in station.site.sizes.items()})
@@ -200,19 +201,18 @@ def _station_flags(
                 station.place,
                 i,
             )
-        low = factors.low_by[:, i]
-        if low.max() > LOW_WORTH_SAYING:
-            words = ", ".join(
-                f"{sort} {low[row]:.0%}" for row, sort in enumerate(LOAD_SORTS) if low[row] > LOW_WORTH_SAYING
-            )
+        low = [
+            f"{sort} {share:.0%}" for sort, share in zip(LOAD_SORTS, lows[i], strict=True) if share > LOW_WORTH_SAYING
+        ]
+        if low:
             yield Notice(
                 "fit below finite elements",
                 f"For a root this sharp finite elements give more than {SOURCES[fits['bending'].source].short}: "
-                f"up to {words} more Kt.",
+                f"up to {', '.join(low)} more Kt.",
                 station.place,
                 i,
             )
-        if factors.held[:, i].any():
+        if held[i]:
             yield Notice(
                 "Kf held",
                 "For a root this sharp the formulas would let Kf fall again; it is held at its peak.",

@@ -45,7 +45,7 @@ def judge_places(
     """What the beam carries and how it is judged at the stations, and how along all points of `loads`.
 
     A station is judged on both sides of its place and of every place it covers (`Station.also`),
-    with one section and one set of notch factors; the side with the largest utilisation is kept.
+    with one section and one set of notch factors; where it is used most is kept.
     Along the shaft the section is the plain one.
     """
     owner, point = _candidates(stations, loads.x)
@@ -56,7 +56,7 @@ def judge_places(
     kf[:, :count] = factors.kf[:, owner]
     fatigue = Fatigue(kf[LOAD_ROWS["bending"]], kf[LOAD_ROWS["tension"]], kf[LOAD_ROWS["torsion"]])
     judged = judge(shaft, station_stresses(every, d, bore, shaft.duty.turning), fatigue, d, bore, finish)
-    worst = _worst_of_each(owner, judged.utilisation[:count])
+    worst = _worst_of_each(owner, judged.utilisation[:count], judged.greatest[:count])
     return taken(every, worst), taken(judged, worst), taken(judged, slice(count, None))
 
 
@@ -87,9 +87,9 @@ def _sections(
     return d, bore, finish
 
 
-def _worst_of_each(owner: Index, utilisation: Array) -> Index:
-    """For each owner the entry with the largest utilisation."""
-    order = np.lexsort((utilisation, owner))
+def _worst_of_each(owner: Index, utilisation: Array, greatest: Array) -> Index:
+    """For each owner the entry with the largest utilisation; of those equal but for rounding, the largest stress."""
+    order = np.lexsort((greatest, utilisation.astype(np.float32), owner))
     return order[np.searchsorted(owner[order], np.arange(owner.max() + 1), "right") - 1]
 
 
