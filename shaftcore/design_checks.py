@@ -170,7 +170,7 @@ def _station_flags(
     source = shaft.judgement.kt_source
     size = judged.strength.size_diameter
     too_small_or_large = (size < SIZE_LOW) | (size > SIZE_HIGH)
-    outsides, lows, held = factors.outside.T.tolist(), factors.low_by.T.tolist(), factors.held.any(axis=0).tolist()
+    outsides, lows, held = factors.outside.T.tolist(), factors.low_by.T.tolist(), np.any(factors.held, axis=0).tolist()
     for i, station in enumerate(stations):
         if too_small_or_large[i]:
             yield Notice(

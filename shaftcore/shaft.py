@@ -85,7 +85,7 @@ class RadialForce:
         LARGEST_FORCE,
         symbol="F_a",
         default=0.0,
-        words="The force swings by this much either side of its mean.",
+        words="The force swings by this much either side of its mean, all forces of the shaft in phase.",
     )
     name: str = text("Name", longest=60)
 
