@@ -2,12 +2,11 @@
 
 import math
 from dataclasses import replace
-from typing import TYPE_CHECKING
 
 from PySide6.QtCore import QPointF
 from PySide6.QtGui import QDropEvent, QMouseEvent, QPainter
 
-from app.bench.gesture import Gesture, is_free
+from app.bench.gesture import Gesture, Holder, is_free
 from app.bench.hits import Grip
 from app.bench.overlay import draw_band, window_band
 from app.bench.readout import drag_lines
@@ -17,9 +16,6 @@ from shaftcore import edits
 from shaftcore.geometry import faces_of
 from shaftcore.radius_window import RadiusWindow, radius_window
 from shaftcore.shaft import Shaft
-
-if TYPE_CHECKING:
-    from app.bench.hand import BenchHand
 
 E_FOLD = 120.0
 """Pixels of pull that make a size e times as large."""
@@ -34,7 +30,7 @@ class Drag(Gesture):
     why. A typed number stands whatever the pointer does.
     """
 
-    def __init__(self, hand: "BenchHand", grip: Grip, press: QPointF, size: Size, whole: bool = False) -> None:
+    def __init__(self, hand: Holder, grip: Grip, press: QPointF, size: Size, whole: bool = False) -> None:
         super().__init__(hand)
         self.grip, self.size = grip, _pulled_size(self.document.shaft, grip, size, whole)
         self.base: Shaft = self.document.shaft

@@ -1,17 +1,52 @@
-"""What every gesture on the bench can be asked; the hand holds one at a time."""
+"""What every gesture on the bench can be asked, and what it may ask of the hand that holds it."""
 
-from typing import TYPE_CHECKING
+from collections.abc import Callable
+from typing import Protocol
 
 from PySide6.QtCore import QPointF, Qt
 from PySide6.QtGui import QDropEvent, QMouseEvent, QPainter
 
+from app.bench.hits import Grip
+from app.bench.readout import Lines
+from app.bench.sizes import Size
+from app.bench.view import BenchView
+from app.document import Document, Selection
 from shaftcore.shaft import Shaft
-
-if TYPE_CHECKING:
-    from app.bench.hand import BenchHand
 
 STARTS_AT = 4.0
 """Pixels of movement that turn a press into a pull, so that a click changes nothing."""
+
+
+class Holder(Protocol):
+    """The hand as gestures, keys and menu see it.
+
+    `typed` is the number typed so far, `refusal` why the last change was not taken.
+    """
+
+    view: BenchView
+    document: Document
+    gesture: "Gesture | None"
+    typed: str
+    refusal: str
+
+    @property
+    def grips(self) -> tuple[Grip, ...]: ...
+
+    def choose(self, chosen: Selection | None) -> None: ...
+
+    def attempt(self, change: Callable[[], object]) -> None: ...
+
+    def say(self, words: str) -> None: ...
+
+    def type_number(self, text: str) -> None: ...
+
+    def open_field(self, size: Size, at: QPointF, typed: str = "") -> None: ...
+
+    def read_out(
+        self, painter: QPainter, lines: Lines, at: QPointF | None = None, clear: QPointF | None = None
+    ) -> None: ...
+
+    def end(self) -> None: ...
 
 
 class Gesture:
@@ -24,7 +59,7 @@ class Gesture:
     key = ""
     base: Shaft | None = None
 
-    def __init__(self, hand: "BenchHand") -> None:
+    def __init__(self, hand: Holder) -> None:
         self.hand, self.view, self.document = hand, hand.view, hand.document
 
     def press(self, event: QMouseEvent) -> None: ...

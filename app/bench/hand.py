@@ -276,7 +276,7 @@ class BenchHand(QObject):
             self._pressed = None
         elif size is not None:
             pos = self.keys.anchor(size)
-        menu = thing_menu(self, self.view.to_shaft(pos)[0])
+        menu = thing_menu(self, self.keys, self.view.to_shaft(pos)[0])
         if menu is not None:
             menu.popup(self.view.mapToGlobal(pos.toPoint()))
 

@@ -1,18 +1,14 @@
 """The same edits without a pointer: arrows choose and change, Enter and digits open a number."""
 
-from typing import TYPE_CHECKING
-
 from PySide6.QtCore import QPointF, Qt
 from PySide6.QtGui import QKeyEvent, QPainter
 
+from app.bench.gesture import Holder
 from app.bench.readout import drag_lines
 from app.bench.sizes import Size, at_step, label_of, record_of, sizes_of
 from app.bench.stops import next_stop, stops_of
 from app.document import Selection
 from shaftcore import edits
-
-if TYPE_CHECKING:
-    from app.bench.hand import BenchHand
 
 Key = Qt.Key
 NUMERIC = frozenset("0123456789.,-−")
@@ -24,7 +20,7 @@ AT_REST = (*ENTER, *ARROWS, Key.Key_Delete, Key.Key_Backspace, Key.Key_Home, Key
 class Keys:
     """Keys on the bench. Which size of the chosen thing they change is kept here: Tab goes on to the next."""
 
-    def __init__(self, hand: "BenchHand") -> None:
+    def __init__(self, hand: Holder) -> None:
         self.hand = hand
         self._of: Selection | None = None
         self._at = 0

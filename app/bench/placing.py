@@ -1,11 +1,10 @@
 """Putting a thing of the kit on the shaft: it follows the pointer, a click or Enter sets it down."""
 
 import itertools
-from typing import TYPE_CHECKING
 
 from PySide6.QtGui import QDropEvent, QMouseEvent, QPainter
 
-from app.bench.gesture import Gesture, has_shift, is_free
+from app.bench.gesture import Gesture, Holder, has_shift, is_free
 from app.bench.overlay import draw_ghost
 from app.bench.sizes import label_of
 from app.bench.tools import Tool
@@ -16,9 +15,6 @@ from shaftcore.preferred import finely, rounded, snapped, stepped
 from shaftcore.shaft import Shaft, Support
 from shaftcore.units import System
 
-if TYPE_CHECKING:
-    from app.bench.hand import BenchHand
-
 TELLABLE, PULL = 4.0, 8.0
 """Pixels the hand can tell apart, and within which a face or the middle of a segment draws things to it."""
 
@@ -26,7 +22,7 @@ TELLABLE, PULL = 4.0, 8.0
 class Placing(Gesture):
     """A tool in hand. `x` (mm) is where it would go, None while the pointer is elsewhere."""
 
-    def __init__(self, hand: "BenchHand", tool: Tool) -> None:
+    def __init__(self, hand: Holder, tool: Tool) -> None:
         super().__init__(hand)
         self.tool, self.key = tool, tool.key
         self.x: float | None = self.document.shaft.length / 2 if self.document.shaft.segments else None

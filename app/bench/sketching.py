@@ -1,19 +1,14 @@
 """The gesture of drawing a shaft: press on the axis, pull, click for the next step, Esc ends."""
 
-from typing import TYPE_CHECKING
-
 from PySide6.QtCore import QPointF
 from PySide6.QtGui import QDropEvent, QMouseEvent, QPainter
 
-from app.bench.gesture import Gesture, is_far, is_free
+from app.bench.gesture import Gesture, Holder, is_far, is_free
 from app.bench.readout import sketch_lines
 from app.bench.sketch import Sketch
 from app.bench.tools import DRAW
 from app.number_text import parse
 from shaftcore.shaft import Shaft
-
-if TYPE_CHECKING:
-    from app.bench.hand import BenchHand
 
 EDGE, GROWTH = 40.0, 1.35
 """A step pulled this near the edge of the bench (pixels) makes it show that much more."""
@@ -24,7 +19,7 @@ class Sketching(Gesture):
 
     key = DRAW.key
 
-    def __init__(self, hand: "BenchHand") -> None:
+    def __init__(self, hand: Holder) -> None:
         super().__init__(hand)
         self.sketch = Sketch(self.document)
         self._pulling = self._at_edge = False

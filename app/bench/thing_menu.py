@@ -1,22 +1,20 @@
 """The menu of a thing on the bench: its sizes, what else can be done with it, and taking it off."""
 
 from collections.abc import Callable
-from typing import TYPE_CHECKING
 
 from PySide6.QtGui import QAction
 from PySide6.QtWidgets import QMenu
 
+from app.bench.gesture import Holder
+from app.bench.keys import Keys
 from app.bench.sizes import Size, at_step, label_of, record_of, size_of, sizes_of
 from app.error_messages import guarded
 from shaftcore import edits
 from shaftcore.abutment import CORNERS, largest_fillet
 from shaftcore.shaft import Segment, Shaft, Support
 
-if TYPE_CHECKING:
-    from app.bench.hand import BenchHand
 
-
-def thing_menu(hand: "BenchHand", x: float) -> QMenu | None:
+def thing_menu(hand: Holder, keys: Keys, x: float) -> QMenu | None:
     """The menu of the chosen thing, asked for at x (mm); None where nothing is chosen."""
     scene = hand.document.scene
     record, chosen = record_of(scene.shaft, scene.chosen), scene.chosen
@@ -29,7 +27,9 @@ def thing_menu(hand: "BenchHand", x: float) -> QMenu | None:
     menu.addSeparator()
     for size in sizes_of(scene.shaft, chosen):
         _add(
-            menu, f"{size.declaration.label} {size.place}: {size.shown(size.value, scene.system)}…", _opener(hand, size)
+            menu,
+            f"{size.declaration.label} {size.place}: {size.shown(size.value, scene.system)}…",
+            _opener(hand, keys, size),
         )
     menu.addSeparator()
     if isinstance(record, Segment):
@@ -39,11 +39,11 @@ def thing_menu(hand: "BenchHand", x: float) -> QMenu | None:
     elif at_step(chosen):
         _corner_entries(menu.addMenu("Bearing &corner"), hand, chosen[1])
     if not at_step(chosen):
-        _add(menu, "Take &off", hand.keys.remove)
+        _add(menu, "Take &off", keys.remove)
     return menu
 
 
-def _segment_entries(menu: QMenu, hand: "BenchHand", segment: Segment, x: float) -> None:
+def _segment_entries(menu: QMenu, hand: Holder, segment: Segment, x: float) -> None:
     _change(menu, hand, "&Split here", lambda shaft: edits.split_segment(shaft, segment.id, x))
     if segment.end_diameter is None:
         _change(menu, hand, "Make it a &taper", lambda shaft: edits.make_taper(shaft, segment.id))
@@ -51,7 +51,7 @@ def _segment_entries(menu: QMenu, hand: "BenchHand", segment: Segment, x: float)
         _change(menu, hand, "Make it a c&ylinder", lambda shaft: edits.make_cylinder(shaft, segment.id))
 
 
-def _corner_entries(menu: QMenu, hand: "BenchHand", segment_id: str) -> None:
+def _corner_entries(menu: QMenu, hand: Holder, segment_id: str) -> None:
     """Corners of the bearings that may seat here, each with the fillet it leaves."""
     shaft, system = hand.document.shaft, hand.document.scene.system
     chosen = hand.document.scene.chosen
@@ -75,11 +75,11 @@ def _corner_edit(segment_id: str, corner: float | None) -> Callable[[Shaft], Sha
     return lambda shaft: edits.replace_shoulder(shaft, segment_id, bearing_corner=corner)
 
 
-def _opener(hand: "BenchHand", size: Size) -> Callable[[], object]:
-    return lambda: hand.open_field(size, hand.keys.anchor(size))
+def _opener(hand: Holder, keys: Keys, size: Size) -> Callable[[], object]:
+    return lambda: hand.open_field(size, keys.anchor(size))
 
 
-def _change(menu: QMenu, hand: "BenchHand", text: str, edit: Callable[[Shaft], Shaft], words: str = "") -> QAction:
+def _change(menu: QMenu, hand: Holder, text: str, edit: Callable[[Shaft], Shaft], words: str = "") -> QAction:
     document, chosen = hand.document, hand.document.scene.chosen
     name = f"{label_of(document.shaft, chosen)}: " if chosen and not words else ""
     step = f"{words}: {text}" if words else name + text.replace("&", "").lower()

@@ -652,14 +652,14 @@ def test_every_entry_has_name_letter_and_words(desk: Desk) -> None:
 
 def test_the_menu_of_a_thing_offers_its_sizes_and_changes(desk: Desk) -> None:
     desk.click(desk.at("shoulder", "s1", "radius"))
-    menu = thing_menu(desk.hand, 60.0)
+    menu = thing_menu(desk.hand, desk.hand.keys, 60.0)
     assert menu is not None
     corners = next(action.menu() for action in menu.actions() if action.menu() is not None)
     next(action for action in corners.actions() if action.text().startswith("1.5 mm")).trigger()  # type: ignore[union-attr]
     assert desk.shaft.segments[0].shoulder.bearing_corner == 1.5  # type: ignore[union-attr]
 
     desk.click(desk.bench.to_screen(110.0, 5.0))
-    menu = thing_menu(desk.hand, 110.0)
+    menu = thing_menu(desk.hand, desk.hand.keys, 110.0)
     assert menu is not None
     by_text = {action.text().replace("&", ""): action for action in menu.actions()}
     assert any(text.startswith("Bore s2") for text in by_text)
@@ -667,7 +667,7 @@ def test_the_menu_of_a_thing_offers_its_sizes_and_changes(desk: Desk) -> None:
     assert [segment.length for segment in desk.shaft.segments] == [60.0, 50.0, 70.0, 70.0]
 
     desk.click(desk.at("support", "B", "x"))
-    menu = thing_menu(desk.hand, 230.0)
+    menu = thing_menu(desk.hand, desk.hand.keys, 230.0)
     assert menu is not None
     next(action for action in menu.actions() if "locating" in action.text()).trigger()
     assert [support.locating for support in desk.shaft.supports] == [False, True]
