@@ -42,7 +42,7 @@ def written(value: float) -> str:
         digits, power = f"{value:.{DIGITS - 1}e}".split("e")
         exponent = f"{int(power)}".replace("-", "−")
         return f"({Decimal(digits).normalize():f} × 10^{exponent})"
-    return f"{Decimal(f'{value:.{DIGITS}g}'):f}"
+    return f"{Decimal(f'{value:.{DIGITS}g}'):f}" if value else "0"
 
 
 def line(

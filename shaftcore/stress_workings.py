@@ -38,10 +38,10 @@ def load_lines(results: Results, i: int) -> Iterator[Line]:
             yield given(f"M_y{mark}", f"Bending moment in the xy plane, {words}", y, "torque", "statics")
             yield given(f"M_z{mark}", f"Bending moment in the xz plane, {words}", z, "torque", "statics")
             yield line(
-                f"M{mark}", f"Bending moment, {words}", f"√(M_y{mark}² + M_z{mark}²)", "√({y}^2 + {z}^2)",
+                "M_a" if part else "M", f"Bending moment, {words}", f"√(M_y{mark}² + M_z{mark}²)", "√({y}^2 + {z}^2)",
                 float(np.hypot(y, z)), "torque", "statics", y=y, z=z,
             )  # fmt: skip
-    for part, mark, words in ((MEAN, "", "mean"), (AMPLITUDE, ",a", "amplitude")):
+    for part, mark, words in ((MEAN, "", "mean"), (AMPLITUDE, "_a", "amplitude")):
         torque, normal = float(at.torque[part, i]), float(at.normal[part, i])
         if torque:
             yield given(f"T{mark}", f"Torque, {words}", torque, "torque", "statics")
@@ -63,7 +63,7 @@ def nominal_lines(results: Results, i: int) -> Iterator[Line]:
     both = results.shaft.duty.turning and moment[AMPLITUDE] > 0
     if results.shaft.duty.turning:
         flag = "the shaft turns under a load fixed in space: the whole moment alternates"
-        acting, letters = float(moment.sum()), "(M + M,a)" if both else "M"
+        acting, letters = float(moment.sum()), "(M + M_a)" if both else "M"
         text = "({m} + {ma})" if both else "{acting}"
         yield from _stress(
             results, i, "σ_b,a", "Bending stress, amplitude", 32, letters, text, float(nominal.bending_amplitude[i]),
@@ -71,7 +71,7 @@ def nominal_lines(results: Results, i: int) -> Iterator[Line]:
         )  # fmt: skip
     else:
         for symbol, words, letter, part, value in (
-            ("σ_b,a", "amplitude", "M,a", AMPLITUDE, nominal.bending_amplitude),
+            ("σ_b,a", "amplitude", "M_a", AMPLITUDE, nominal.bending_amplitude),
             ("σ_b,m", "mean", "M", MEAN, nominal.bending_mean),
         ):
             yield from _stress(
@@ -80,7 +80,7 @@ def nominal_lines(results: Results, i: int) -> Iterator[Line]:
             )  # fmt: skip
     yield from _axial_lines(results, i)
     for symbol, words, letter, part, value in (
-        ("τ_a", "amplitude", "|T,a|", AMPLITUDE, nominal.torsion_amplitude),
+        ("τ_a", "amplitude", "|T_a|", AMPLITUDE, nominal.torsion_amplitude),
         ("τ_m", "mean", "|T|", MEAN, nominal.torsion_mean),
     ):
         yield from _stress(
@@ -108,7 +108,7 @@ def _axial_lines(results: Results, i: int) -> Iterator[Line]:
     d, bore = float(results.judged.d[i]), float(results.judged.bore[i])
     section = ("(d² − d_i²)", "({d}^2 − {bore}^2)") if bore else ("d²", "{d}^2")
     for symbol, words, letter, part, value in (
-        ("σ_ax,a", "amplitude", "|N,a|", AMPLITUDE, results.judged.nominal.axial_amplitude),
+        ("σ_ax,a", "amplitude", "|N_a|", AMPLITUDE, results.judged.nominal.axial_amplitude),
         ("σ_ax,m", "mean", "N", MEAN, results.judged.nominal.axial_mean),
     ):
         if value[i]:

@@ -17,8 +17,8 @@ from app.document import Document, Scene
 from app.error_messages import guarded
 from app.panels.dress import EDGE, SMALL_POINTS
 from app.panels.workings_rows import Row, Sort, rows_of
-from app.symbol_text import pieces
 from app.theme import Theme, text_font
+from shaftcore.lettering import pieces
 from shaftcore.workings import workings_of
 
 NOT_YET = "The workings stand here once the shaft can be analysed."

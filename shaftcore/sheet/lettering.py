@@ -1,7 +1,6 @@
 """Type of the sheet: one family, its paragraph styles, and text made safe for them."""
 
 import html
-import re
 import threading
 from functools import cache
 from pathlib import Path
@@ -13,6 +12,7 @@ from reportlab.pdfbase import pdfmetrics
 from reportlab.pdfbase.ttfonts import TTFont
 from reportlab.platypus import Paragraph
 
+from shaftcore.lettering import Level, marked_up
 from shaftcore.sheet.palette import FAINT, INK, RUST
 
 REGULAR, BOLD, OBLIQUE = "Sheet", "Sheet-Bold", "Sheet-Oblique"
@@ -20,12 +20,11 @@ FACES = {REGULAR: "DejaVuSans.ttf", BOLD: "DejaVuSans-Bold.ttf", OBLIQUE: "DejaV
 MISSING = "□"
 """Stands for a character the type family does not have."""
 
-_PIECE = re.compile(
-    r"(?P<base>[^\W\d_]+)_(?P<under>[^\W²³⁰-⁹]+(?:,[^\W²³⁰-⁹]+)*)"  # σ_b,a
-    r"|(?<![^\W\d_])(?P<kay>K)(?P<kind>[tf]s?)(?P<sort>(?:,[a-z]+)*)(?![^\W\d_])"  # Kt,b and Kfs
-    r"|\^(?P<power>[−-]?\w+(?:\.\d+)?|\([^()]*\))"  # d^4
-)
-BELOW, ABOVE = '<sub rise="18%" size="74%">', '<super rise="36%" size="74%">'
+TAGS: dict[Level, str] = {
+    "on": "{}",
+    "below": '<sub rise="18%" size="74%">{}</sub>',
+    "above": '<super rise="36%" size="74%">{}</super>',
+}
 _LOCK = threading.Lock()
 
 
@@ -55,18 +54,7 @@ def safe(text: str) -> str:
 
 def typeset(text: str) -> str:
     """Our own formulas and symbols as paragraph markup: true subscripts, powers raised, minus signs."""
-    text = plain(text).replace(" - ", " − ").replace("sqrt(", "√(").replace("'", "′")
-    found, end = [], 0
-    for match in _PIECE.finditer(text):
-        found.append(html.escape(text[end : match.start()], quote=False))
-        if match["power"]:
-            found.append(f"{ABOVE}{html.escape(match['power'].replace('-', '−'))}</super>")
-        elif match["kay"]:
-            found.append(f"K{BELOW}{match['kind'] + match['sort']}</sub>")
-        else:
-            found.append(f"{match['base']}{BELOW}{match['under']}</sub>")
-        end = match.end()
-    return "".join([*found, html.escape(text[end:], quote=False)])
+    return marked_up(plain(text), TAGS)
 
 
 @cache

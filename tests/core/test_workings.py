@@ -3,6 +3,7 @@
 import ast
 import math
 import operator
+import re
 
 import numpy as np
 import pytest
@@ -10,6 +11,7 @@ from varied_shafts import VARIED
 
 from shaftcore.calculation_lines import Line, line, written
 from shaftcore.evaluation import evaluate
+from shaftcore.nomenclature import BY_KEY
 from shaftcore.results import Results
 from shaftcore.sources import SOURCES
 from shaftcore.units import DIMENSIONS
@@ -105,6 +107,18 @@ def test_symbols_that_a_line_uses_stand_above_it(name: str, i: int) -> None:
         seen.add(entry.symbol)
 
 
+@pytest.mark.parametrize(("name", "i"), STATIONS)
+def test_loads_go_by_the_symbols_of_the_nomenclature(name: str, i: int) -> None:
+    entries = lines_of(name, i)
+    results, symbols = RESULTS[name], {entry.symbol: entry for entry in entries}
+    for key in ("moment", "moment_amplitude", "torque", "torque_amplitude", "normal"):
+        column = BY_KEY[key]
+        value = column.values(results)[i]
+        assert column.symbol not in symbols or symbols[column.symbol].value == pytest.approx(value), column.symbol
+        assert not value or column.symbol in symbols
+    assert not [entry for entry in entries if re.search(r"(?<![_\w])[A-Z],", entry.symbol + entry.formula)]
+
+
 def test_a_plain_section_has_no_notch_lines() -> None:
     for name, i in STATIONS:
         notched = any(entry.symbol.startswith("Kf") for entry in lines_of(name, i))
@@ -158,6 +172,7 @@ def test_a_held_factor_shows_the_radius_it_is_held_at() -> None:
         (-0.265, "(−0.265)"),
         (4.11e-10, "(4.11 × 10^−10)"),
         (0.0, "0"),
+        (-0.0, "0"),
         (1e-5, "0.00001"),
         (-2e20, "(−(2 × 10^20))"),
     ],

@@ -4,7 +4,8 @@ import pytest
 from imports import imported_by, sources_under
 
 LAYERS = (
-    "words: errors records sources units surface calculation_lines declared abutment whole_file demo version",
+    "words: errors records sources units surface calculation_lines declared abutment whole_file demo version "
+    "lettering number_text typed_numbers phrase",
     "formulas of notches: notches",
     "the shaft described: shaft steels field_problems",
     "formulas: section_properties notch_sensitivity strength_factors equivalent_stress mean_stress_rules",
