@@ -7,21 +7,22 @@ from typing import Any
 import numpy as np
 
 from shaftcore.geometry import faces_of
-from shaftcore.notch_sites import seatings
+from shaftcore.notch_sites import Seating, seatings
 from shaftcore.notches._contract import Around, Array
 from shaftcore.notches.kinds import KINDS
 from shaftcore.shaft import Shaft
 
 
-def upper_outline(shaft: Shaft) -> Array:
+def upper_outline(shaft: Shaft, seated: tuple[Seating, ...] | None = None) -> Array:
     """Points (n, 2) of (x, radius), mm, left to right along the upper edge; (0, 2) without segments.
 
     Fillets and grooves are the arcs their kinds draw, tapers are straight, a step without a
     shoulder is a sharp corner. Both ends of the shaft are in; the end faces down to the axis are not.
+    `seated` are the shaft's seatings, where the caller has them at hand.
     """
     if not shaft.segments:
         return np.empty((0, 2))
-    seated = seatings(shaft)
+    seated = seatings(shaft) if seated is None else seated
     at_steps = {s.around.x for s in seated if s.kind.goes == "at a step"}
     pieces = [(s.around.x, _piece(s.kind.key, s.record, s.around)) for s in seated]
     corners = [(x, points) for x, points in _corners(shaft) if x not in at_steps]

@@ -24,6 +24,15 @@ LINES_WORTH_A_PLACE = 4
 
 
 @dataclass(frozen=True)
+class Standing:
+    """How words were placed: in which of their forms, at which of their anchors, how far from it."""
+
+    form: int
+    anchor: int
+    offset: QPointF
+
+
+@dataclass(frozen=True)
 class Callout:
     """Lines of text in a room, and where their leader ends."""
 
@@ -32,6 +41,7 @@ class Callout:
     room: QRectF
     anchor: QPointF
     chosen: bool
+    standing: Standing
 
     @property
     def leader(self) -> QLineF | None:
@@ -43,24 +53,34 @@ class Callout:
         return QLineF(x, room.top(), anchor.x(), anchor.y()) if room.top() > anchor.y() else None
 
 
-Offsets = dict[str, QPointF | None]
-"""Where each callout stood from its anchor (None: nowhere), so that words keep their place during a gesture."""
+Kept = dict[str, Standing | None]
+"""How each callout stood (None: nowhere), so that words keep their place during a gesture."""
 
 
-def place_callouts(
-    stage: Stage, letters: Type, glyphs: list[Glyph], wishes: list[Wish], kept: Offsets
-) -> list[Callout]:
+def place_callouts(stage: Stage, letters: Type, glyphs: list[Glyph], wishes: list[Wish], kept: Kept) -> list[Callout]:
     """All callouts that find room; those in `kept` stay where they stood.
 
-    Where not all find room for all their words, other orders are tried and the best is taken.
+    Where not all others find room for all their words, other orders are tried and the best is taken.
     """
-    board = _board(stage, glyphs)
+    stay = [_as_it_stood(stage, letters, w, standing) for w in wishes if (standing := kept.get(w.key)) is not None]
+    seek = [wish for wish in wishes if wish.key not in kept]
+    return [*stay, *_best_placed(stage, letters, _board(stage, glyphs, stay), seek)] if seek else stay
+
+
+def _as_it_stood(stage: Stage, letters: Type, wish: Wish, standing: Standing) -> Callout:
+    forms, anchor = _forms(wish.lines), wish.anchors(stage)[standing.anchor]
+    words = forms[min(standing.form, len(forms) - 1)]
+    room = QRectF(anchor + standing.offset, _size(letters, words, wish.chosen))
+    return Callout(wish.key, tuple(words), room, anchor, wish.chosen, standing)
+
+
+def _best_placed(stage: Stage, letters: Type, board: Board, wishes: list[Wish]) -> list[Callout]:
     best: list[Callout] = []
     most = sum(LINES_WORTH_A_PLACE + len(wish.lines) for wish in wishes)
     for order in _ORDERS:
-        found = _placed(stage, letters, board.copy(), sorted(wishes, key=order), kept)
-        best = max(best, found, key=_lines_said)
-        if kept or _lines_said(best) == most:
+        board.clear_labels()
+        best = max(best, _placed(stage, letters, board, sorted(wishes, key=order)), key=_lines_said)
+        if _lines_said(best) == most:
             break
     return best
 
@@ -77,20 +97,25 @@ def _lines_said(callouts: list[Callout]) -> int:
     return sum(LINES_WORTH_A_PLACE + len(callout.lines) for callout in callouts)
 
 
-def _placed(stage: Stage, letters: Type, board: Board, wishes: list[Wish], kept: Offsets) -> list[Callout]:
-    found = []
-    for wish in wishes:
-        for words, anchor in itertools.product(_shorter(wish.lines), wish.anchors(stage)):
-            size = max(letters.width(line, wish.chosen) for line in words), letters.line * len(words)
-            if wish.key in kept:
-                stood = kept[wish.key]
-                room = None if stood is None else QRectF(anchor + stood, QSizeF(*size))
-            else:
-                room = board.place(Wanted(wish.key, *size, anchor, anchor.y() < stage.frame.axis), letters.line)
-            if room is not None:
-                found.append(Callout(wish.key, tuple(words), room, anchor, wish.chosen))
-                break
-    return found
+def _placed(stage: Stage, letters: Type, board: Board, wishes: list[Wish]) -> list[Callout]:
+    found = (_first_free(stage, letters, board, wish) for wish in wishes)
+    return [callout for callout in found if callout is not None]
+
+
+def _first_free(stage: Stage, letters: Type, board: Board, wish: Wish) -> Callout | None:
+    """The longest form of the words that finds room, at the first anchor where it does."""
+    for (form, words), (at, anchor) in itertools.product(enumerate(_forms(wish.lines)), enumerate(wish.anchors(stage))):
+        size = _size(letters, words, wish.chosen)
+        wanted = Wanted(wish.key, size.width(), size.height(), anchor, anchor.y() < stage.frame.axis)
+        room = board.place(wanted, letters.line)
+        if room is not None:
+            standing = Standing(form, at, room.topLeft() - anchor)
+            return Callout(wish.key, tuple(words), room, anchor, wish.chosen, standing)
+    return None
+
+
+def _size(letters: Type, words: list[str], bold: bool) -> QSizeF:
+    return QSizeF(max(letters.width(line, bold) for line in words), letters.line * len(words))
 
 
 def draw_callouts(painter: QPainter, stage: Stage, letters: Type, callouts: list[Callout]) -> None:
@@ -114,11 +139,11 @@ def _draw_lines(painter: QPainter, letters: Type, callout: Callout) -> None:
         painter.drawText(QPointF(room.left() + spare / 2, room.top() + i * letters.line + letters.ascent), line)
 
 
-def _board(stage: Stage, glyphs: list[Glyph]) -> Board:
-    """What is taken already: shaft, glyphs, a hint at the top, what the chosen station and segment draw."""
+def _board(stage: Stage, glyphs: list[Glyph], stay: list[Callout]) -> Board:
+    """What is taken already: words that stay, shaft, glyphs, hint, what the chosen station and segment draw."""
     frame = stage.frame
     board = Board(frame.width, TOP_EDGE, stage.foot - 2)
-    for room in _body_rooms(stage):
+    for room in (*_body_rooms(stage), *(callout.room for callout in stay)):
         board.take(room)
     for glyph in glyphs:
         for room in glyph.rooms:
@@ -148,7 +173,7 @@ def _body_rooms(stage: Stage) -> list[QRectF]:
     return rooms
 
 
-def _shorter(lines: list[str]) -> list[list[str]]:
+def _forms(lines: list[str]) -> list[list[str]]:
     """The lines, then the same in less and less room."""
     tried = [lines, [" · ".join(lines)]]
     if len(lines) > 2:

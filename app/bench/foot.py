@@ -1,15 +1,16 @@
 """The strip under the shaft: station numbers, marks of x in the user's unit, legend of the band."""
 
 import math
+from dataclasses import dataclass
 from functools import lru_cache
 
 import numpy as np
 from PySide6.QtCore import QLineF, QPointF, QRectF
-from PySide6.QtGui import QBrush, QPainter
+from PySide6.QtGui import QBrush, QColor, QPainter
 
 from app.bench.colour_scale import TOP, colours_of
 from app.bench.polygons import hairline
-from app.bench.stage import Stage, Type
+from app.bench.stage import FOOT, Stage, Type
 from app.bench.utilisation_band import row_brush
 from app.ruler import LEFT_MARGIN, RIGHT_MARGIN
 from shaftcore.units import dimension
@@ -20,10 +21,21 @@ MARK_SPACING = 90.0
 LEGEND_LENGTH, LEGEND_HEIGHT = 180.0, 6.0
 
 
-def draw_foot(painter: QPainter, stage: Stage, letters: Type) -> None:
+@dataclass(frozen=True)
+class StationNumber:
+    """One number over the ruler: its place (px), the digits, and its colour where it is stressed."""
+
+    x: float
+    text: str
+    stressed: str | None
+
+
+def draw_foot(painter: QPainter, stage: Stage, letters: Type, numbers: tuple[StationNumber, ...]) -> None:
+    """The strip, on paper of its own, so that it stands over a shaft drawn larger than the bench."""
+    painter.fillRect(QRectF(0.0, stage.foot, stage.frame.width, FOOT), QColor(stage.theme.paper))
     _draw_ruler(painter, stage, letters)
     if stage.scene.results is not None:
-        _draw_stations(painter, stage, letters)
+        _draw_stations(painter, stage, letters, numbers)
         _draw_legend(painter, stage, letters)
 
 
@@ -76,40 +88,43 @@ def shown_stations(stage: Stage, letters: Type) -> list[int]:
     if stage.scene.station is not None:
         order.insert(0, stage.scene.station)
     taken = bytearray(max(math.ceil(frame.width), 1))
+    places = [frame.x(station.x) for station in results.stations]
+    halves = [letters.width("0" * digits, True) / 2 + 2.5 for digits in range(len(str(len(places))) + 1)]
     kept = []
     for i in dict.fromkeys(order):
-        x, half = frame.x(results.stations[i].x), letters.width(str(i + 1), True) / 2 + 2.5
+        x, half = places[i], halves[len(str(i + 1))]
         if x < LEFT_MARGIN - 16 or x > frame.width - half:
             continue
         begin, end = int(x - half), math.ceil(x + half)
-        if not any(taken[begin:end]):
+        if 1 not in taken[begin:end]:
             taken[begin:end] = b"\1" * (end - begin)
             kept.append(i)
     return kept
 
 
-def _draw_stations(painter: QPainter, stage: Stage, letters: Type) -> None:
-    results, y = stage.scene.results, stage.foot + STATION_LINE
+def station_numbers(stage: Stage, letters: Type) -> tuple[StationNumber, ...]:
+    """The numbers that are shown: the chosen station's in accent, the governing one's in ink."""
+    results = stage.scene.results
     if results is None:
-        return
-    places = {i: stage.frame.x(results.stations[i].x) for i in shown_stations(stage, letters)}
-    painter.setRenderHint(QPainter.RenderHint.Antialiasing, False)
-    painter.setPen(hairline(stage.theme.faint))
-    painter.setFont(letters.plain)
-    painter.drawLines([QLineF(x, y + 3, x, y + 7) for x in places.values()])
+        return ()
     stressed = {results.governing: stage.theme.ink}
     if stage.scene.station is not None:
         stressed[stage.scene.station] = stage.theme.accent
-    for i, x in places.items():
-        if i not in stressed:
-            text = str(results.stations[i].number)
-            painter.drawText(QPointF(x - letters.width(text) / 2, y), text)
-    painter.setFont(letters.bold)
-    for i, colour in stressed.items():
-        if i in places:
-            text = str(results.stations[i].number)
-            painter.setPen(hairline(colour))
-            painter.drawText(QPointF(places[i] - letters.width(text, True) / 2, y), text)
+    shown = ((i, results.stations[i]) for i in shown_stations(stage, letters))
+    return tuple(StationNumber(stage.frame.x(s.x), str(s.number), stressed.get(i)) for i, s in shown)
+
+
+def _draw_stations(painter: QPainter, stage: Stage, letters: Type, numbers: tuple[StationNumber, ...]) -> None:
+    y = stage.foot + STATION_LINE
+    painter.setRenderHint(QPainter.RenderHint.Antialiasing, False)
+    painter.setPen(hairline(stage.theme.faint))
+    painter.drawLines([QLineF(number.x, y + 3, number.x, y + 7) for number in numbers])
+    for stressed in (False, True):
+        painter.setFont(letters.font(stressed))
+        for number in numbers:
+            if (number.stressed is not None) is stressed:
+                painter.setPen(hairline(number.stressed or stage.theme.faint))
+                painter.drawText(QPointF(number.x - letters.width(number.text, stressed) / 2, y), number.text)
     _draw_head(painter, stage, letters, "station", STATION_LINE)
 
 

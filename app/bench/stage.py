@@ -26,7 +26,8 @@ class Plan:
 
     def __init__(self, shaft: Shaft) -> None:
         self.shaft = shaft
-        self.outline: Array = upper_outline(shaft)
+        self.seated: tuple[Seating, ...] = seatings(shaft)
+        self.outline: Array = upper_outline(shaft, self.seated)
 
     @cached_property
     def faces(self) -> tuple[float, ...]:
@@ -35,10 +36,6 @@ class Plan:
     @cached_property
     def profile(self) -> Profile:
         return profile_of(self.shaft)
-
-    @cached_property
-    def seated(self) -> tuple[Seating, ...]:
-        return seatings(self.shaft)
 
     def radius_at(self, x: float) -> float:
         """The larger plain radius (mm) of both sides of x."""

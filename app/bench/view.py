@@ -13,16 +13,16 @@ from PySide6.QtGui import (
     QMouseEvent,
     QPainter,
     QPaintEvent,
+    QPen,
     QPixmap,
     QResizeEvent,
     QWheelEvent,
 )
 from PySide6.QtWidgets import QWidget
 
-from app.bench.callouts import Offsets
+from app.bench.callouts import Kept
 from app.bench.drawing import Drawing
 from app.bench.frame import Frame
-from app.bench.polygons import hairline
 from app.bench.stage import FOOT, Plan, Stage, Type
 from app.bench.words import description
 from app.document import Document, Scene
@@ -36,6 +36,7 @@ ZOOM_PER_NOTCH = 1.2
 PAN_PER_NOTCH = 60.0
 NOTCH = 120.0
 """One click of a wheel, in Qt's eighths of a degree."""
+POINTER_ALPHA = 90
 
 
 class Hand(Protocol):
@@ -74,8 +75,9 @@ class BenchView(QWidget):
         self._letters: Type | None = None
         self._plan = Plan(document.shaft)
         self._drawing: Drawing | None = None
-        self._offsets: Offsets = {}
-        self._still: QPixmap | None = None
+        self._outdated = True
+        self._standings: Kept = {}
+        self._over: tuple[Drawing, QPixmap] | None = None
         self.setMinimumHeight(LEAST_HEIGHT)
         self.setMouseTracking(True)
         self.setAcceptDrops(True)
@@ -139,7 +141,7 @@ class BenchView(QWidget):
 
     def _redraw(self) -> None:
         """Lay the picture out anew at the next repaint."""
-        self._drawing = self._still = None
+        self._outdated = True
         self.update()
 
     @guarded
@@ -166,31 +168,46 @@ class BenchView(QWidget):
 
     def _laid_out(self) -> Drawing:
         """The picture of the present scene; during a gesture words keep the places they had."""
-        if self._drawing is None:
-            scene = self.document.scene
-            if self._letters is None:
-                self._letters = Type()
-            stage = Stage(scene, self._plan, self.frame, self.theme, self.devicePixelRatioF())
-            self._drawing = Drawing(stage, self._letters, self._offsets if scene.live else {})
-            if not scene.live:
-                self._offsets = self._drawing.offsets
-        return self._drawing
+        ratio, before = self.devicePixelRatioF(), self._drawing
+        if before is not None and not self._outdated and before.stage.pixel_ratio == ratio:
+            return before
+        scene = self.document.scene
+        if self._letters is None:
+            self._letters = Type()
+        stage = Stage(scene, self._plan, self.frame, self.theme, ratio)
+        drawing = Drawing(stage, self._letters, self._standings if scene.live else {}, before)
+        if not scene.live:
+            self._standings = drawing.standings
+        self._drawing, self._outdated = drawing, False
+        return drawing
 
-    def _paint_picture(self, painter: QPainter) -> None:
+    def _over_of(self, drawing: Drawing) -> QPixmap:
+        """Marks and foot on clear ground, kept while they stay the same: they cost more than the shaft."""
+        if self._over is None or not drawing.same_over(self._over[0]):
+            ratio = drawing.stage.pixel_ratio
+            over = QPixmap(self.size() * ratio)
+            over.setDevicePixelRatio(ratio)
+            over.fill(Qt.GlobalColor.transparent)
+            with QPainter(over) as painter:
+                drawing.paint_over(painter)
+            self._over = drawing, over
+        return self._over[1]
+
+    def _paint_picture(self, painter: QPainter, drawing: Drawing) -> None:
         painter.fillRect(self.rect(), QColor(self.theme.paper))
-        self._laid_out().paint(painter)
+        drawing.paint_shaft(painter)
+        painter.drawPixmap(0, 0, self._over_of(drawing))
+        drawing.paint_words(painter)
 
-    def _picture(self) -> QPixmap:
-        """The picture at rest, kept, so that the hairline and the hand cost no redrawing."""
-        ratio = self.devicePixelRatioF()
-        if self._still is None or self._still.devicePixelRatio() != ratio:
-            self._drawing = None
-            still = QPixmap(self.size() * ratio)
-            still.setDevicePixelRatio(ratio)
-            with QPainter(still) as painter:
-                self._paint_picture(painter)
-            self._still = still
-        return self._still
+    def _paint_pointer(self, painter: QPainter) -> None:
+        """A faint line through bench and traces; a gesture has the pointer for itself."""
+        if self._hovered is not None and not self.document.scene.live:
+            colour = QColor(self.theme.faint)
+            colour.setAlpha(POINTER_ALPHA)
+            x = self.ruler.to_px(self._hovered)
+            painter.setRenderHint(QPainter.RenderHint.Antialiasing, False)
+            painter.setPen(QPen(colour, 0.0))
+            painter.drawLine(QLineF(x, 0, x, self.height()))
 
     # events ---------------------------------------------------------------------------------------
 
@@ -198,14 +215,8 @@ class BenchView(QWidget):
     def paintEvent(self, event: QPaintEvent) -> None:  # noqa: N802 (Qt's name)
         # nothing may be left painting when something goes wrong: Qt would end the process
         with QPainter(self) as painter:
-            if self.document.scene.live:
-                self._paint_picture(painter)
-            else:
-                painter.drawPixmap(0, 0, self._picture())
-            if self._hovered is not None:
-                x = self.ruler.to_px(self._hovered)
-                painter.setPen(hairline(self.theme.faint))
-                painter.drawLine(QLineF(x, 0, x, self.height()))
+            self._paint_picture(painter, self._laid_out())
+            self._paint_pointer(painter)
             if self.hand is not None:
                 self.hand.overlay(painter)
 

@@ -30,14 +30,18 @@ class Wish:
         return [self.anchor, mirrored] if self.either_side else [self.anchor]
 
 
-def wishes_of(stage: Stage, glyphs: list[Glyph]) -> list[Wish]:
-    """Callouts wanted: the chosen raiser's, then supports', then loads'."""
-    wishes: list[Wish] = []
+def raiser_wishes(stage: Stage) -> list[Wish]:
+    """The chosen raiser's sizes, if one is chosen."""
     seating = chosen_raiser(stage)
-    if seating is not None:
-        wishes.append(
-            Wish(seating.place, raiser_words(stage, seating), raiser_anchor(stage, seating), True, 0, either_side=True)
-        )
+    if seating is None:
+        return []
+    words, anchor = raiser_words(stage, seating), raiser_anchor(stage, seating)
+    return [Wish(seating.place, words, anchor, True, 0, either_side=True)]
+
+
+def mark_wishes(stage: Stage, glyphs: list[Glyph]) -> list[Wish]:
+    """Supports' words, then loads'; what is chosen first."""
+    wishes: list[Wish] = []
     things = {thing.id: thing for thing in (*stage.shaft.supports, *stage.shaft.loads)}
     for group in _groups([glyph for glyph in glyphs if -60 < glyph.anchor.x() < stage.frame.width + 60]):
         outer = min if group[0].upward else max
@@ -70,7 +74,7 @@ def _lines(stage: Stage, members: list[Load | Support]) -> list[str]:
     lines = list(names) if shared else []
     for thing in members:
         if isinstance(thing, Support):
-            lines.append(f"{thing.name or thing.label}, {support_words(thing)}")
+            lines.append(f"{thing.name or thing.id}, {support_words(thing)}")
         else:
             words = load_words(thing, stage.scene.system)
             lines.append(words if shared or not thing.name else f"{thing.name} {words}")

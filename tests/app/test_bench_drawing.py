@@ -200,7 +200,7 @@ def test_a_board_refuses_what_has_no_room() -> None:
 def test_words_keep_their_place_during_a_gesture(bench: BenchView) -> None:
     bench.document.load(stepped(), None)
     still = Drawing(stage_of(bench), Type())
-    live = Drawing(stage_of(bench), Type(), still.offsets)
+    live = Drawing(stage_of(bench), Type(), still.standings)
     assert [callout.room for callout in live.callouts] == [callout.room for callout in still.callouts]
 
 
