@@ -1,7 +1,8 @@
 """Whether a shaft can be: every field in its range, every thing in its place, and what is still missing."""
 
 import itertools
-from collections.abc import Iterator
+import math
+from collections.abc import Callable, Iterator
 
 from shaftcore.errors import UnsoundShaftError
 from shaftcore.field_problems import field_problems
@@ -20,6 +21,9 @@ GROOVE_ON_TAPER = 0.1
 """Share of a groove's depth by which the radius of a taper may change across its mouth: the fits
 for Kt are for a groove between equal diameters (common practice, no source)."""
 
+HALVINGS = 12
+"""How often the stretch between a size that can be and one that cannot is halved."""
+
 
 def problems_of(shaft: Shaft) -> tuple[Problem, ...]:
     """Everything wrong with the shaft, then everything missing; () where it can be analysed.
@@ -35,6 +39,35 @@ def require_ready(shaft: Shaft) -> tuple[Seating, ...]:
     if problems:
         raise UnsoundShaftError(problems)
     return seated
+
+
+def can_be(shaft: Shaft) -> bool:
+    """Nothing is wrong with the shaft, whatever may still be missing."""
+    return all(problem.severity != "wrong" for problem in problems_of(shaft))
+
+
+def nearest_sound(shaft_with: Callable[[float], Shaft], sound: float, refused: float, unit: float = 1.0) -> float:
+    """The value nearest `refused`, on from `sound`, whose shaft can be: by halving, on round numbers.
+
+    `shaft_with(sound)` can be, `shaft_with(refused)` cannot; `unit` is the size of the unit whose
+    numbers are to be round, in internal units.
+    """
+    low, high = sound / unit, refused / unit
+    for _ in range(HALVINGS):
+        middle = _round_between(low, high)
+        if can_be(shaft_with(middle * unit)):
+            low = middle
+        else:
+            high = middle
+    return low * unit
+
+
+def _round_between(low: float, high: float) -> float:
+    """A number of few digits about midway, by ratio where both are of one sign."""
+    middle = math.copysign(math.sqrt(low * high), low) if low * high > 0 else (low + high) / 2
+    room = min(abs(middle - low), abs(high - middle)) / 2
+    decimals = -math.floor(math.log10(room)) if room > 0 else 0
+    return round(middle, decimals) if room > 0 else middle
 
 
 def _examined(shaft: Shaft) -> tuple[tuple[Problem, ...], tuple[Seating, ...]]:

@@ -11,11 +11,12 @@ from app.bench.hits import Grip
 from app.bench.overlay import draw_band, window_band
 from app.bench.readout import drag_lines
 from app.bench.sizes import Size, at_step, size_of
-from app.number_text import parse
 from shaftcore import edits
 from shaftcore.geometry import faces_of
 from shaftcore.radius_window import RadiusWindow, radius_window
 from shaftcore.shaft import Shaft
+from shaftcore.soundness import nearest_sound
+from shaftcore.typed_numbers import parse
 
 E_FOLD = 120.0
 """Pixels of pull that make a size e times as large."""
@@ -26,8 +27,8 @@ TELLABLE = 4.0
 class Drag(Gesture):
     """One size being pulled by its grip: previews while the pointer moves, then one step or none.
 
-    A refused size is not shown: the shaft stays at the last one that could be, and the hand says
-    why. A typed number stands whatever the pointer does.
+    Pulled to a size that cannot be it goes to the limit, the nearest one that can, and the hand
+    says why; a typed one is refused. A typed number stands whatever the pointer does.
     """
 
     def __init__(self, hand: Holder, grip: Grip, press: QPointF, size: Size, whole: bool = False) -> None:
@@ -36,6 +37,7 @@ class Drag(Gesture):
         self.base: Shaft = self.document.shaft
         self.value = size.value
         self._press, self._scale = press, self.view.ruler.scale
+        self._limits: dict[bool, float] = {}
         self.window = self._window()
         self._band = None if self.window is None else window_band(self.base, size, self.window)
 
@@ -45,24 +47,33 @@ class Drag(Gesture):
         value = self.size.held(self._at(event.position()))
         rest = self.size.freely if is_free(event) else self.size.rested
         value = rest(value, self._resolution(value), self.document.scene.system)
-        self.hand.attempt(lambda: self.set(value))
+        self.hand.attempt(lambda: self.set(value) or self.set(self._limit(value)))
 
-    def set(self, value: float) -> None:
-        """Show the shaft with this number unless it stands there already."""
-        shown = value == self.value and self.document.in_gesture
-        if not shown and self.document.preview(self.size.apply(self.base, value)):
-            self.value = value
+    def set(self, value: float) -> bool:
+        """Show the shaft with this number unless it stands there already; False where it cannot be."""
+        if value == self.value and self.document.in_gesture:
+            return True
+        if not self.document.preview(self.size.apply(self.base, value)):
+            return False
+        self.value = value
+        return True
 
     def read(self, text: str) -> None:
         if text:
             value = parse(text, self.size.declaration, self.document.scene.system)
             self.hand.attempt(lambda: self.set(value))
 
+    def press(self, event: QMouseEvent) -> None:
+        """A press while a refused number still stands gives it up."""
+        self.hand.end()
+
     def release(self, event: QMouseEvent) -> None:
         self.enter()
 
     def enter(self) -> None:
-        """Let go: what is on the screen becomes one named step."""
+        """Let go: what is on the screen becomes one named step; a refused number waits to be mended."""
+        if self.hand.typed and self.hand.refusal:
+            return
         if self.document.in_gesture:
             words = self.size.step_words(self.value, self.document.scene.system)
             self.hand.attempt(lambda: self.document.commit(words))
@@ -82,6 +93,15 @@ class Drag(Gesture):
         if self.grip.law == "ratio":
             return start * math.exp(min(max(along / E_FOLD, -12.0), 12.0))
         return start + self.grip.gain * along / self._scale
+
+    def _limit(self, refused: float) -> float:
+        """Where the size must stop on its way to `refused`; sought once for each way it is pulled."""
+        sound = self.value or 0.0
+        up = refused > sound
+        if up not in self._limits:
+            unit = self.size.declaration.dimension.unit(self.document.scene.system).factor
+            self._limits[up] = nearest_sound(lambda value: self.size.apply(self.base, value), sound, refused, unit)
+        return self._limits[up]
 
     def _resolution(self, value: float) -> float:
         if self.grip.law == "ratio":

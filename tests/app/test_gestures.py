@@ -24,6 +24,7 @@ from app.kit import Kit
 from app.ruler import Ruler
 from app.theme import DARK, LIGHT
 from shaftcore import edits
+from shaftcore.errors import UnsoundShaftError
 from shaftcore.evaluation import evaluate
 from shaftcore.preferred import R40
 from shaftcore.radius_window import SMALLEST, RadiusWindow, radius_window
@@ -316,19 +317,66 @@ def test_ctrl_leaves_preferred_radii_aside(desk: Desk) -> None:
     assert desk.radius(0) != free
 
 
-def test_a_refused_size_holds_at_the_last_possible_and_says_why(desk: Desk) -> None:
+@pytest.mark.parametrize("way", [1.0, -1.0])
+def test_pulled_past_what_can_be_a_size_goes_to_its_limit_and_says_why(desk: Desk, way: float) -> None:
+    """The limit is where it can be and a thousandth further cannot, both seen by the whole analysis."""
     start = desk.at("segment", "s1", "length")
-    desk.pull(start, QPointF(60, 0), let_go=False)
-    desk.move(start + QPointF(2000, 0))
-    assert "length" in desk.hand.refusal.lower()
-    held = desk.shaft
-    assert evaluate(held)
-    assert held.segments[0].length > 60.0
+    desk.pull(start, QPointF(20 * way, 0), let_go=False)
+    desk.move(start + QPointF(2000 * way, 0))
+    refusal, gesture = desk.hand.refusal, desk.hand.gesture
+    assert refusal
+    assert isinstance(gesture, Drag)
+    assert gesture.value is not None
+    reached = gesture.value
+    assert desk.shaft.segments[0].length == reached
+    assert evaluate(desk.shaft)
+    with pytest.raises(UnsoundShaftError):
+        evaluate(gesture.size.apply(gesture.base, reached + 0.5 * way))
+    desk.move(start + QPointF(2100 * way, 0))
+    assert gesture.value == reached
+    assert desk.hand.refusal
     desk.move(start + QPointF(30, 0))
     assert desk.hand.refusal == ""
     desk.release(start + QPointF(30, 0))
     assert desk.document.undo_stack.count() == 1
     assert not desk.document.in_gesture
+
+
+def test_a_fillet_jumps_to_the_radius_its_step_has_room_for(desk: Desk) -> None:
+    """The arc of r 25 mm takes the whole length of a short segment of 25 mm: found to the digit, and kept."""
+    desk.document.load(edits.add_segment(edits.add_segment(Shaft(), 25.0, 100.0), 100.0, 200.0), None)
+    desk.bench.fit()
+    start, pulls = desk.at("shoulder", "s1", "radius"), desk.grip("shoulder", "s1", "radius").direction
+    desk.press(start)
+    desk.move(start + QPointF(*pulls) * 60.0)
+    desk.move(start + QPointF(*pulls) * 900.0)
+    assert desk.radius(0) == 25.0
+    assert "fillet" in desk.hand.refusal.lower() or "shoulder" in desk.hand.refusal.lower()
+    desk.release(start + QPointF(*pulls) * 900.0)
+    assert desk.radius(0) == 25.0
+    assert desk.document.undo_stack.undoText() == "Fillet radius s1|s2 to 25 mm"
+
+
+def test_a_typed_number_that_cannot_be_is_refused_not_bent_and_waits_to_be_mended(desk: Desk) -> None:
+    before, start = desk.shaft, desk.at("shoulder", "s1", "radius")
+    for mended in (True, False):
+        desk.pull(start, QPointF(-20, -20), let_go=False)
+        desk.keys("900")
+        assert desk.hand.refusal
+        assert desk.radius(0) == 90.0
+        desk.release(start + QPointF(-20, -20))
+        desk.keys(Key.Key_Return)
+        assert isinstance(desk.hand.gesture, Drag)
+        assert desk.document.undo_stack.count() == 0
+        if mended:
+            desk.keys(Key.Key_Backspace, Key.Key_Return)
+            assert desk.radius(0) == 90.0
+            desk.document.undo_stack.undo()
+            desk.document.undo_stack.clear()
+        else:
+            desk.click(start + QPointF(200, 0))
+            assert desk.hand.gesture is None
+        assert desk.shaft == before
 
 
 @pytest.mark.expects_error

@@ -11,7 +11,7 @@ from shaftcore.evaluation import evaluate
 from shaftcore.notches.groove import Groove
 from shaftcore.notches.shoulder import Shoulder
 from shaftcore.shaft import AxialForce, Material, RadialForce, Segment, Shaft, Support, Torque
-from shaftcore.soundness import problems_of
+from shaftcore.soundness import can_be, nearest_sound, problems_of
 
 SOUND = Shaft(
     segments=(Segment("a", 60.0, 30.0, shoulder=Shoulder(2.0)), Segment("b", 80.0, 40.0, bore=10.0)),
@@ -220,3 +220,34 @@ def test_the_corners_of_what_is_allowed_are_analysed(data: st.DataObject):
     results = evaluate(shaft)
     assert (results.judged.n >= 0).all()
     assert (results.along.deflection == results.along.deflection).all()
+
+
+@pytest.mark.parametrize(
+    ("sound", "refused", "limit"),
+    [
+        (10.0, 400.0, 30.0),  # solid down to a bore as wide as the neighbour is thick: the bound itself cannot be
+        (10.0, 31.0, 30.0),
+    ],
+)
+def test_the_nearest_size_that_can_be_is_below_its_bound_by_little(sound: float, refused: float, limit: float):
+    found = nearest_sound(lambda bore: with_segment(1, bore=bore), sound, refused)
+    assert can_be(with_segment(1, bore=found))
+    assert limit - 0.002 * limit < found < limit
+
+
+@settings(deadline=None)
+@given(refused=st.floats(80.01, 3000.0), sound=st.floats(1.0, 70.0), unit=st.sampled_from([1.0, 25.0]))
+def test_the_limit_is_found_from_wherever_it_is_sought(refused: float, sound: float, unit: float):
+    """A groove 1 mm deep and wide may stand up to 79 mm along a segment that begins at 60 mm and is 80 mm long."""
+    end = 60.0 + 80.0 - 1.0
+    found = nearest_sound(lambda along: with_groove(x=60.0 + along), sound, refused, unit)
+    assert can_be(with_groove(x=60.0 + found))
+    assert sound <= found <= end - 60.0 + 1e-6
+    # twelve halvings by ratio, each off the middle by an eighth at most through rounding
+    assert found >= (end - 60.0) * (refused / sound) ** -(0.625**12)
+    assert len(f"{found / unit:.10g}") <= 8
+
+
+def test_what_is_missing_does_not_stop_a_size():
+    assert can_be(replace(SOUND, supports=()))
+    assert not can_be(with_segment(1, bore=40.0))
