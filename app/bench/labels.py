@@ -53,8 +53,8 @@ class Board:
 
     def place(self, wanted: Wanted, row: float) -> QRectF | None:
         """The nearest free place, taken at once with its leader; None where there is none."""
-        rooms, leaders = self._choices_left(wanted, row)
-        free = np.flatnonzero(_clear(rooms, leaders, np.array(self._labels).reshape(-1, 4)))
+        rooms, needed = self._choices_left(wanted, row)
+        free = np.flatnonzero(_clear(needed, self._labels))
         if not len(free):
             return None
         left, top, right, bottom = rooms[free[0]].tolist()
@@ -64,17 +64,16 @@ class Board:
         return found
 
     def _choices_left(self, wanted: Wanted, row: float) -> tuple[Array, Array]:
-        """Rooms and leaders (n, 4) each, best first, that lie on the board and meet nothing but labels."""
+        """Rooms (n, 4), best first, that lie on the board and meet nothing but labels, and what each needs."""
         x, y = wanted.anchor.x(), wanted.anchor.y()
         key = wanted.key, wanted.width, wanted.height, x, y
         if key not in self._left:
             rooms = self._choices(wanted, row)
             left, top, right, bottom = rooms.T
-            on_board = (left >= EDGE) & (right <= self.width - EDGE) & (top >= self.top) & (bottom <= self.bottom)
-            rooms = rooms[on_board]
-            leaders = _leaders(rooms, x, y)
-            free = _clear(rooms, leaders, np.array(self._taken).reshape(-1, 4))
-            self._left[key] = rooms[free], leaders[free]
+            rooms = rooms[(left >= EDGE) & (right <= self.width - EDGE) & (top >= self.top) & (bottom <= self.bottom)]
+            needed = _needed(rooms, x, y)
+            free = _clear(needed, self._taken)
+            self._left[key] = rooms[free], needed[:, free]
         return self._left[key]
 
     def _choices(self, wanted: Wanted, row: float) -> Array:
@@ -93,13 +92,21 @@ class Board:
         return np.column_stack([left, top, left + wanted.width, top + wanted.height])
 
 
-def _leaders(rooms: Array, x: float, y: float) -> Array:
-    """The upright stretch (n, 4) between each room and its anchor; turned inside out where there is none."""
+def _needed(rooms: Array, x: float, y: float) -> Array:
+    """What n labels need, (4, n, 2): the room with a gap at its sides, and the leader up to (x, y).
+
+    A leader is turned inside out, and so meets nothing, where the label stands level with its anchor.
+    """
     left, top, right, bottom = rooms.T
     stem = np.clip(x, left, right)
-    made = np.column_stack([stem - 1, np.minimum(bottom, y), stem + 1, np.maximum(top, y)])
-    made[(bottom >= y) & (top <= y)] = np.inf, np.inf, -np.inf, -np.inf
-    return made
+    apart = (bottom < y) | (top > y)
+    needed = np.empty((4, len(rooms), 2))
+    needed[..., 0] = (rooms + REACH).T
+    needed[0, :, 1] = np.where(apart, stem - 1, np.inf)
+    needed[1, :, 1] = np.minimum(bottom, y)
+    needed[2, :, 1] = np.where(apart, stem + 1, -np.inf)
+    needed[3, :, 1] = np.maximum(top, y)
+    return needed
 
 
 def leader_rooms(label: QRectF, anchor: QPointF) -> list[QRectF]:
@@ -112,20 +119,15 @@ def leader_rooms(label: QRectF, anchor: QPointF) -> list[QRectF]:
     return []
 
 
-def _clear(rooms: Array, leaders: Array, taken: Array) -> NDArray[np.bool_]:
-    """Whether each room, with a gap at its sides, and its leader meet nothing that is taken."""
-    if not (len(rooms) and len(taken)):
-        return np.ones(len(rooms), dtype=bool)
-    near = (taken[:, 0] < rooms[:, 2].max() + GAP) & (taken[:, 2] > rooms[:, 0].min() - GAP)
-    taken = np.ascontiguousarray(taken[near].T)
-    return ~(_meets(rooms + REACH, taken) | _meets(leaders, taken))
-
-
-def _meets(rooms: Array, taken: Array) -> NDArray[np.bool_]:
-    """Which of the rooms (n, 4) lie over any of the columns of `taken` (4, m)."""
-    left, top, right, bottom = np.ascontiguousarray(rooms.T)[:, :, None]
-    over = (left < taken[2]) & (right > taken[0])
-    over &= top < taken[3]
-    over &= bottom > taken[1]
-    meets: NDArray[np.bool_] = over.any(axis=1)
-    return meets
+def _clear(needed: Array, taken: list[Room]) -> NDArray[np.bool_]:
+    """Which of n labels, with `needed` (4, n, 2), lie over nothing that is taken."""
+    if not (needed.size and taken):
+        return np.ones(needed.shape[1], dtype=bool)
+    left, top, right, bottom = needed[..., None]
+    columns = np.array(taken).T.copy()
+    over = left < columns[2]
+    over &= right > columns[0]
+    over &= top < columns[3]
+    over &= bottom > columns[1]
+    clear: NDArray[np.bool_] = ~over.any(axis=(1, 2))
+    return clear
