@@ -5,10 +5,11 @@ from PySide6.QtGui import QColor, QKeyEvent, QPainter, QPaintEvent
 from PySide6.QtWidgets import QLabel, QLineEdit, QWidget
 
 from app.error_messages import guarded
-from app.number_text import editable, parse, unit_symbol
 from app.theme import LIGHT, Theme, text_font
 from shaftcore.declared import Quantity
 from shaftcore.errors import QuantityError
+from shaftcore.number_text import editable, unit_symbol
+from shaftcore.typed_numbers import parse
 from shaftcore.units import System, Unit
 
 ECHO_DIGITS = 6

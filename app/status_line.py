@@ -1,6 +1,7 @@
 """The one line at the foot of the window: which station governs, and by how much."""
 
 from app.document import Scene
+from shaftcore.number_text import shown, with_unit
 
 
 def status_words(scene: Scene) -> str:
@@ -12,6 +13,10 @@ def status_words(scene: Scene) -> str:
     judged, station = results.judged, results.stations[i]
     if judged.utilisation[i] == 0:
         return "No station is stressed"
-    margins = f"margin {judged.margin[i]:+.1%}   yield {judged.yield_margin[i]:+.1%}".replace("-", "−")
-    words = f"Governing: {station.number} {station.label}   n {judged.n[i]:.2f}   {margins}"
+    margin, yielding = (
+        with_unit(float(found[i]), "share", scene.system, 1, signed=True)
+        for found in (judged.margin, judged.yield_margin)
+    )
+    n = shown(float(judged.n[i]), "ratio", scene.system, 2)
+    words = f"Governing: {station.number} {station.label}   n {n}   margin {margin}   yield {yielding}"
     return f"{words}   provisional" if results.provisional else words

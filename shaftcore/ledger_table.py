@@ -5,11 +5,9 @@ import io
 import math
 
 from shaftcore.nomenclature import BY_KEY, COLUMNS, Column
+from shaftcore.number_text import UNLOADED, Entry, unit_symbol, with_unit
 from shaftcore.results import Results
 from shaftcore.units import Unit, dimension
-
-UNLOADED = "unloaded"
-"""What stands for an infinite factor or margin: nothing stresses the place."""
 
 READ = (
     "station",
@@ -30,8 +28,6 @@ READ = (
 """Columns of the table to read; the CSV has them all."""
 
 GAP = "  "
-
-Entry = float | str | int | None
 
 
 def ledger_csv(results: Results) -> str:
@@ -81,22 +77,12 @@ def _written(value: Entry, unit: Unit | None) -> str:
 
 def _cells(column: Column, results: Results) -> list[str]:
     """Head, unit and values of one column, all of one width; numbers to the right, words to the left."""
-    unit = dimension(column.dimension).si if column.dimension else None
-    head = [column.symbol or column.label, unit.symbol if unit else ""]
+    head = [column.symbol or column.label, unit_symbol(column.dimension, "SI")]
     values = list(column.values(results))
-    cells = head + [_rounded(column, unit, value) for value in values]
+    cells = head + list(map(column.writer("SI"), values))
     width = max(len(cell) for cell in cells)
     words = any(isinstance(value, str) for value in values)
     return [cell.ljust(width) if words else cell.rjust(width) for cell in cells]
-
-
-def _rounded(column: Column, unit: Unit | None, value: Entry) -> str:
-    if value is None:
-        return "–"
-    if unit is None or isinstance(value, str):
-        return str(value)
-    decimals = unit.decimals if column.decimals is None else column.decimals
-    return UNLOADED if math.isinf(value) else f"{unit.shown(value):.{decimals}f}"
 
 
 def summary(results: Results) -> str:
@@ -113,4 +99,4 @@ def summary(results: Results) -> str:
 
 
 def _per_cent(margin: float) -> str:
-    return UNLOADED if math.isinf(margin) else f"{100 * margin:+.1f} %"
+    return with_unit(float(margin), "share", "SI", 1, signed=True)

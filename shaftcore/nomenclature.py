@@ -11,7 +11,9 @@ import numpy as np
 from shaftcore.declared import Quantity
 from shaftcore.notch_factors import LOAD_ROWS
 from shaftcore.notches._contract import LoadSort
+from shaftcore.number_text import Entry, writer
 from shaftcore.results import Results
+from shaftcore.units import System
 
 
 @dataclass(frozen=True)
@@ -26,9 +28,10 @@ class Column:
     symbol: str
     label: str
     dimension: str
-    values: Callable[[Results], Sequence[float | str | int | None]]
+    values: Callable[[Results], Sequence[Entry]]
     words: str = ""
     decimals: int | None = None
+    signed: bool = False
 
     @property
     def csv_head(self) -> str:
@@ -36,6 +39,10 @@ class Column:
         return (
             self.key if not self.dimension else self.key + Quantity(self.label, self.dimension, 0, 0).dimension.suffix
         )
+
+    def writer(self, system: System) -> Callable[[Entry], str]:
+        """A function that writes its values, in the unit of `system` and without it."""
+        return writer(self.dimension, system, self.decimals, self.signed)
 
 
 def _size(name: str) -> Callable[[Results], Sequence[float | None]]:
@@ -71,8 +78,8 @@ COLUMNS: tuple[Column, ...] = (
     Column("station", "No.", "Station", "", lambda r: [s.number for s in r.stations]),
     Column("place", "", "Place", "", lambda r: [s.label for s in r.stations]),
     Column("x", "x", "Position", "length", lambda r: [s.x for s in r.stations]),
-    Column("margin", "margin", "Margin, fatigue", "share", _judged("margin"), "n/n_asked - 1", 1),
-    Column("yield_margin", "margin_y", "Margin, yield", "share", _judged("yield_margin"), "n_y/n_y,asked - 1", 1),
+    Column("margin", "margin", "Margin, fatigue", "share", _judged("margin"), "n/n_asked - 1", 1, True),
+    Column("yield_margin", "margin_y", "Margin, yield", "share", _judged("yield_margin"), "n_y/n_y,asked - 1", 1, True),
     Column("n", "n", "Factor, fatigue", "ratio", _judged("n")),
     Column("n_yield", "n_y", "Factor, yield", "ratio", _judged("n_yield")),
     Column("utilisation", "u", "Utilisation", "share", _judged("utilisation"), "larger of n_asked/n of both checks", 1),

@@ -8,11 +8,11 @@ from app.bench.gesture import Gesture, Holder, has_shift, is_free
 from app.bench.overlay import draw_ghost
 from app.bench.sizes import label_of
 from app.bench.tools import Tool
-from app.number_text import parse
 from shaftcore.declared import Quantity, declared
 from shaftcore.geometry import faces_of
 from shaftcore.preferred import finely, rounded, snapped, stepped
 from shaftcore.shaft import Shaft, Support
+from shaftcore.typed_numbers import parse
 from shaftcore.units import System
 
 TELLABLE, PULL = 4.0, 8.0

@@ -9,9 +9,9 @@ from app import symbol_text
 from app.bench.sizes import Size
 from app.bench.sketch import FIELDS, Sketch
 from app.document import Scene, Selection
-from app.number_text import shown
 from app.theme import Theme, text_font
 from shaftcore.nomenclature import BY_KEY
+from shaftcore.number_text import shown
 from shaftcore.radius_window import SMALLEST, RadiusWindow
 from shaftcore.results import Results
 

@@ -8,10 +8,10 @@ from dataclasses import dataclass
 from typing import Any
 
 from app.document import Selection
-from app.number_text import editable
 from shaftcore import edits
 from shaftcore.declared import Quantity, declared
 from shaftcore.notches.kinds import KINDS
+from shaftcore.number_text import editable
 from shaftcore.preferred import SizeSort, finely, rounded, snapped, sort_of, stepped
 from shaftcore.shaft import Shaft, things
 from shaftcore.units import System

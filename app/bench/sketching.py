@@ -7,8 +7,8 @@ from app.bench.gesture import Gesture, Holder, is_far, is_free
 from app.bench.readout import sketch_lines
 from app.bench.sketch import Sketch
 from app.bench.tools import DRAW
-from app.number_text import parse
 from shaftcore.shaft import Shaft
+from shaftcore.typed_numbers import parse
 
 EDGE, GROWTH = 40.0, 1.35
 """A step pulled this near the edge of the bench (pixels) makes it show that much more."""

@@ -5,7 +5,7 @@ from collections.abc import Callable
 from typing import Any
 
 from app.document import Scene
-from app.number_text import shown, with_unit
+from shaftcore.number_text import shown, with_unit
 from shaftcore.results import Results
 from shaftcore.shaft import AxialForce, RadialForce, Shaft, Support, Torque
 from shaftcore.units import System, dimension

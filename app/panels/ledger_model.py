@@ -8,8 +8,8 @@ import numpy as np
 from PySide6.QtCore import QAbstractTableModel, QModelIndex, QPersistentModelIndex, Qt
 
 from app.document import Scene
-from app.number_text import GROUP, Entry, unit_symbol, writer
 from shaftcore.nomenclature import BY_KEY, Column
+from shaftcore.number_text import GROUP, Entry, unit_symbol
 from shaftcore.results import Results
 
 Order = Literal["governing", "x"]
@@ -19,7 +19,6 @@ FIRST_COLUMNS = (
     "kt_bending", "kf_bending", "endurance", "amplitude",
 )  # fmt: skip
 """What a new user sees, the most telling ones first so that a narrow window shows them."""
-SIGNED = {"margin", "yield_margin"}
 WORDS = {"place", "flags"}
 """Columns of words, set from the left."""
 
@@ -167,8 +166,7 @@ class LedgerModel(QAbstractTableModel):
 
     def texts(self, column: int, rows: range) -> list[str]:
         """The written cells of one column."""
-        what = self.columns[column]
-        write = writer(what.dimension, self._scene.system, what.decimals, what.key in SIGNED)
+        write = self.columns[column].writer(self._scene.system)
         values, stations = self._values[column], self.rows
         return [write(values[stations[row]]) for row in rows]
 

@@ -6,10 +6,10 @@ from PySide6.QtWidgets import QComboBox, QGridLayout, QLabel, QWidget
 
 from app.document import Document, Scene
 from app.error_messages import guarded
-from app.number_text import editable, unit_symbol
 from app.panels.dress import GAP, quiet
 from app.panels.editors import ChoiceField
 from shaftcore.declared import Choice, Quantity
+from shaftcore.number_text import editable, unit_symbol
 from shaftcore.shaft import Material, Shaft
 from shaftcore.steels import STEELS, steel_material
 from shaftcore.units import System

@@ -5,8 +5,8 @@ from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
 from typing import Literal
 
-from app.number_text import with_unit
 from shaftcore.calculation_lines import written
+from shaftcore.number_text import with_unit
 from shaftcore.results import Results
 from shaftcore.sources import SOURCES
 from shaftcore.units import System, dimension, readable_units

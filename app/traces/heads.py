@@ -8,13 +8,13 @@ import numpy as np
 from PySide6.QtCore import QPointF, QRectF, Qt
 from PySide6.QtGui import QColor, QFont, QFontMetricsF, QPainter, QPen
 
-from app.number_text import unit_symbol
 from app.ruler import RIGHT_MARGIN
 from app.theme import Theme, text_font
 from app.traces.bands import FOOT, HEAD
 from app.traces.plots import Plot, View
 from app.traces.reading import head_words, line_text, widest_text
 from app.traces.tracks import Line
+from shaftcore.number_text import unit_symbol
 from shaftcore.results import Results
 from shaftcore.units import dimension
 

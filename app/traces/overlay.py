@@ -3,12 +3,12 @@
 from PySide6.QtCore import QPointF, QRectF, Qt
 from PySide6.QtGui import QColor, QFontMetricsF, QPainter, QPen
 
-from app.number_text import with_unit
 from app.ruler import LEFT_MARGIN, RIGHT_MARGIN
 from app.traces.heads import key_font
 from app.traces.live import to_pixels
 from app.traces.plots import Frame
 from app.traces.tracks import Curve
+from shaftcore.number_text import with_unit
 
 RING = 5.5
 LABEL_ROOM, LABEL_HEIGHT = 6.0, 19.0

@@ -2,9 +2,9 @@
 
 import numpy as np
 
-from app.number_text import shown, unit_symbol, with_unit
 from app.traces.tracks import TRACKS, Line, Track
 from shaftcore.notches._contract import Array
+from shaftcore.number_text import shown, unit_symbol, with_unit
 from shaftcore.results import Results
 from shaftcore.units import System
 

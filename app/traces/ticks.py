@@ -3,9 +3,9 @@
 import numpy as np
 from matplotlib.ticker import MaxNLocator
 
-from app.number_text import shown
 from app.traces.limits import Scale
 from shaftcore.notches._contract import Array
+from shaftcore.number_text import shown
 
 LEAST_APART = 17.0
 """Pixels between two numbers of a vertical axis."""

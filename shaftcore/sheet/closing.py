@@ -8,10 +8,10 @@ from reportlab.platypus import Flowable, KeepTogether, Spacer, Table
 
 from shaftcore.mean_stress_rules import RULES
 from shaftcore.notches.kinds import KINDS
+from shaftcore.number_text import with_unit
 from shaftcore.records import Notice
 from shaftcore.sheet.edition import Edition
 from shaftcore.sheet.lettering import para, safe
-from shaftcore.sheet.numbers import with_unit
 from shaftcore.sheet.pages import UPRIGHT, Heading, chapter, papers, section
 from shaftcore.sheet.palette import FAINT, RULE
 from shaftcore.sheet.tables import PAD, Field, plain_table, ruled_table

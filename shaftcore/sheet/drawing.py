@@ -10,11 +10,11 @@ from matplotlib.ticker import MaxNLocator
 
 from shaftcore.notch_sites import seatings
 from shaftcore.notches._contract import Array
+from shaftcore.number_text import shown, unit_symbol
 from shaftcore.outline import bore_outline, upper_outline
 from shaftcore.results import Results
 from shaftcore.sheet.chart_page import bare, figure, letters
 from shaftcore.sheet.edition import Edition
-from shaftcore.sheet.numbers import shown, unit_of
 from shaftcore.sheet.palette import FAINT, INK, LEAD, METAL, TEAL
 from shaftcore.sheet.spread import TAG, rows_needed, spread
 from shaftcore.sheet.symbols import draw_loads, draw_supports
@@ -174,11 +174,11 @@ def _ruler(axes: Any, at: Sheetwise, edition: Edition) -> None:
         x = float(at.x(tick * unit_size))
         axes.plot([x, x], [high, high - 1.2], color=FAINT, lw=0.4)
         axes.text(x, high - 1.8, f"{tick:g}", ha="center", va="top", color=FAINT, fontproperties=letters(6))
-    words = f"x, {unit_of('length', edition.system)}"
+    words = f"x, {unit_symbol('length', edition.system)}"
     axes.text(at.x(at.length) + 3, high, words, ha="left", va="center", color=FAINT, fontproperties=letters(6))
     ratio = f"scale about 1 : {1 / at.scale:.3g}" if at.scale < 1 else f"scale about {at.scale:.3g} : 1"
     length = shown(at.length, "length", edition.system)
-    words = f"{ratio}, length {length} {unit_of('length', edition.system)}"
+    words = f"{ratio}, length {length} {unit_symbol('length', edition.system)}"
     if at.every > 1:
         words = f"one station in {at.every} is numbered; {words}"
     axes.text(at.width - 1, 5.0, words, ha="right", va="center", color=FAINT, fontproperties=letters(6))

@@ -5,8 +5,8 @@ from datetime import date
 from functools import cached_property
 
 from shaftcore.nomenclature import BY_KEY
+from shaftcore.number_text import Entry, beside_unit, with_unit
 from shaftcore.results import Results
-from shaftcore.sheet.numbers import Entry, shown, unit_of, with_unit
 from shaftcore.stations import Station
 from shaftcore.units import System, dimension
 
@@ -23,9 +23,7 @@ class Edition:
 
     def cell(self, key: str, station: int) -> str:
         """A station quantity of the nomenclature list as the tables write it."""
-        column = BY_KEY[key]
-        signed = key in ("margin", "yield_margin")
-        return shown(self._values(key)[station], column.dimension, self.system, column.decimals, signed)
+        return BY_KEY[key].writer(self.system)(self._values(key)[station])
 
     def cells(self, key: str) -> list[str]:
         """That quantity of every station."""
@@ -33,8 +31,7 @@ class Edition:
 
     def phrase(self, key: str, station: int) -> str:
         """The same with its unit."""
-        text, unit = self.cell(key, station), unit_of(BY_KEY[key].dimension, self.system)
-        return f"{text}\u00a0{unit}" if unit and text[-1].isdigit() else text
+        return beside_unit(self.cell(key, station), BY_KEY[key].dimension, self.system)
 
     @property
     def length_unit(self) -> float:

@@ -9,10 +9,10 @@ from reportlab.platypus import Flowable, Spacer
 
 from shaftcore.geometry import faces_of
 from shaftcore.notches.kinds import KINDS
+from shaftcore.number_text import NOTHING, shown, unit_symbol
 from shaftcore.results import Results
 from shaftcore.sheet.edition import Edition
 from shaftcore.sheet.lettering import para, safe, typeset
-from shaftcore.sheet.numbers import NOTHING, shown, unit_of
 from shaftcore.sheet.pages import UPRIGHT, Heading, papers, section
 from shaftcore.sheet.tables import Field, entry_rows, plain_table, record_fields, ruled_table
 from shaftcore.units import System
@@ -85,7 +85,7 @@ def _lengths(values: Sequence[float], system: System) -> list[str]:
 def _segments(edition: Edition) -> list[Field]:
     segments, system = edition.results.shaft.segments, edition.system
     faces = faces_of(edition.results.shaft)
-    unit = unit_of("length", system)
+    unit = unit_symbol("length", system)
     begin = Field(f"from x<br/>{unit}", _lengths(faces[:-1], system))
     end = Field(f"to x<br/>{unit}", _lengths(faces[1:], system))
     fields = record_fields(segments, system)
@@ -94,7 +94,7 @@ def _segments(edition: Edition) -> list[Field]:
 
 def _shoulders(edition: Edition) -> list[Field]:
     results, system = edition.results, edition.system
-    shaft, unit = results.shaft, unit_of("length", edition.system)
+    shaft, unit = results.shaft, unit_symbol("length", edition.system)
     records = {segment.id: segment.shoulder for segment in shaft.segments if segment.shoulder}
     sites = [s for s in results.stations if s.site is not None and s.place in records]
     if not sites:
@@ -130,7 +130,7 @@ def _raisers(edition: Edition) -> list[tuple[str, list[Field]]]:
 def _supports(edition: Edition) -> list[Field]:
     results, system = edition.results, edition.system
     supports = results.shaft.supports
-    unit = unit_of("force", system)
+    unit = unit_symbol("force", system)
     reactions = results.along.reactions
     fields = [Field("Mark", support_marks(results), False), *record_fields(supports, system)]
     for part, words in enumerate(("mean", "pulsation")):

@@ -2,6 +2,7 @@
 
 import html
 import threading
+from collections.abc import Container
 from functools import cache
 from pathlib import Path
 
@@ -13,10 +14,13 @@ from reportlab.pdfbase.ttfonts import TTFont
 from reportlab.platypus import Paragraph
 
 from shaftcore.lettering import Level, marked_up
+from shaftcore.number_text import GROUP
 from shaftcore.sheet.palette import FAINT, INK, RUST
 
 REGULAR, BOLD, OBLIQUE = "Sheet", "Sheet-Bold", "Sheet-Oblique"
 FACES = {REGULAR: "DejaVuSans.ttf", BOLD: "DejaVuSans-Bold.ttf", OBLIQUE: "DejaVuSans-Oblique.ttf"}
+HELD = "\u00a0" + GROUP
+"""Spaces that no line may end at; the paragraphs know only the first for what it is."""
 MISSING = "□"
 """Stands for a character the type family does not have."""
 
@@ -44,7 +48,15 @@ def load_type() -> None:
 def plain(text: str) -> str:
     """The text with nothing in it that the family cannot print."""
     glyphs = pdfmetrics.getFont(REGULAR).face.charToGlyph
-    return "".join(" " if ch.isspace() else ch if ord(ch) in glyphs and ch.isprintable() else MISSING for ch in text)
+    return "".join(_printed(sign, glyphs) for sign in text)
+
+
+def _printed(sign: str, glyphs: Container[int]) -> str:
+    if sign in HELD:
+        return HELD[0]
+    if sign.isspace():
+        return " "
+    return sign if ord(sign) in glyphs and sign.isprintable() else MISSING
 
 
 def safe(text: str) -> str:

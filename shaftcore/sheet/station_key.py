@@ -4,8 +4,8 @@ from reportlab.lib.units import mm
 from reportlab.platypus import Table
 
 from shaftcore.nomenclature import BY_KEY
+from shaftcore.number_text import unit_symbol
 from shaftcore.sheet.edition import Edition
-from shaftcore.sheet.numbers import unit_of
 from shaftcore.sheet.pages import ACROSS, papers
 from shaftcore.sheet.tables import Field, ruled_table
 
@@ -35,7 +35,7 @@ def station_key(edition: Edition) -> Table:
 
 def _block(edition: Edition, chosen: range, number: int, share: float) -> list[Field]:
     stations = [edition.results.stations[i] for i in chosen]
-    unit = unit_of(BY_KEY["x"].dimension, edition.system)
+    unit = unit_symbol(BY_KEY["x"].dimension, edition.system)
     gutter = [Field("", [""] * len(stations), least=10.0)] if number else []
     return [
         *gutter,

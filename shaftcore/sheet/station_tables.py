@@ -4,9 +4,9 @@ from reportlab.lib.units import mm
 from reportlab.platypus import CondPageBreak, Flowable, Spacer
 
 from shaftcore.nomenclature import BY_KEY, COLUMNS, Column
+from shaftcore.number_text import NOTHING, shown, unit_symbol, with_unit
 from shaftcore.sheet.edition import Edition
 from shaftcore.sheet.lettering import para, safe, typeset
-from shaftcore.sheet.numbers import shown, unit_of, with_unit
 from shaftcore.sheet.pages import ACROSS, Heading, papers, turn_to
 from shaftcore.sheet.tables import Field, ruled_table
 
@@ -66,10 +66,10 @@ def station_tables(edition: Edition) -> list[Flowable]:
 
 
 def _field(column: Column, edition: Edition, number: bool) -> Field:
-    unit = unit_of(column.dimension, edition.system)
+    unit = unit_symbol(column.dimension, edition.system)
     head = typeset(column.symbol) if column.symbol else safe(column.label)
     cells = edition.cells(column.key)
-    return Field(f"{head}<br/>{unit}" if unit else head, [cell or "–" for cell in cells], number)
+    return Field(f"{head}<br/>{unit}" if unit else head, [cell or NOTHING for cell in cells], number)
 
 
 def _legend(columns: tuple[Column, ...]) -> str:

@@ -8,9 +8,9 @@ from reportlab.lib.units import mm
 from reportlab.platypus import Flowable, HRFlowable, Spacer, Table
 
 from shaftcore.nomenclature import BY_KEY
+from shaftcore.number_text import NOTHING, UNLOADED
 from shaftcore.sheet.edition import Edition
 from shaftcore.sheet.lettering import para, safe, typeset
-from shaftcore.sheet.numbers import NOTHING, UNLOADED
 from shaftcore.sheet.pages import UPRIGHT, Heading, papers
 from shaftcore.sheet.palette import INK, RULE
 from shaftcore.sheet.tables import PAD, Field, plain_table, ruled_table
@@ -46,7 +46,7 @@ def _title_block(edition: Edition) -> Table:
         (("Author", title.author), ("Checker", title.checker), ("Date", edition.date.isoformat())),
     )
     cells: list[list[Any]] = [
-        [[para(label, "head"), para(safe(text) or "–", "cell")] for label, text in row] for row in rows
+        [[para(label, "head"), para(safe(text) or NOTHING, "cell")] for label, text in row] for row in rows
     ]
     made = f"Filletwright {edition.version}"
     cells.append([_entry("Program", made), _entry("Hash of the shaft file", edition.file_hash), ""])

@@ -13,8 +13,8 @@ from reportlab.pdfbase.pdfmetrics import stringWidth
 from reportlab.platypus import Paragraph, Table, TableStyle
 
 from shaftcore.declared import Part, Quantity, Text, declared
+from shaftcore.number_text import NOTHING, beside_unit, entry_words, unit_symbol
 from shaftcore.sheet.lettering import REGULAR, para, plain, safe, sized, typeset
-from shaftcore.sheet.numbers import NOTHING, entry_words, unit_of
 from shaftcore.sheet.palette import FAINT, INK, RULE, TINT
 from shaftcore.units import System
 
@@ -64,7 +64,7 @@ def plain_table(
 
 def _cells(column: Field, style: ParagraphStyle) -> list[Any]:
     if column.number:
-        return list(column.cells)
+        return [plain(cell) for cell in column.cells]
     markup = typeset if column.symbols else safe
     return [Paragraph(markup(cell), style) for cell in column.cells]
 
@@ -136,7 +136,7 @@ def record_fields(records: Sequence[Any], system: System) -> list[Field]:
 def head_of(declaration: Any, system: System) -> str:
     """Column head: label, symbol and unit."""
     symbol = typeset(declaration.symbol) if isinstance(declaration, Quantity) and declaration.symbol else ""
-    unit = unit_of(declaration.dimension_name, system) if isinstance(declaration, Quantity) else ""
+    unit = unit_symbol(declaration.dimension_name, system) if isinstance(declaration, Quantity) else ""
     return " ".join(part for part in (safe(declaration.label), symbol, f"<br/>{unit}" if unit else "") if part)
 
 
@@ -150,8 +150,7 @@ def entry_rows(record: Any, system: System) -> list[tuple[str, str]]:
         label = safe(declaration.label)
         if isinstance(declaration, Quantity):
             label += f", {typeset(declaration.symbol)}" if declaration.symbol else ""
-            unit = unit_of(declaration.dimension_name, system)
-            value = value if value == NOTHING or not unit else f"{value}{'' if unit == '°' else chr(0xA0)}{unit}"
+            value = beside_unit(value, declaration.dimension_name, system)
         if isinstance(declaration, Text) and value == NOTHING and name != "name":
             continue
         rows.append((label, value))

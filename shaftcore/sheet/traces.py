@@ -9,10 +9,10 @@ from matplotlib.ticker import MaxNLocator
 
 from shaftcore.geometry import faces_of
 from shaftcore.notches._contract import Array
+from shaftcore.number_text import unit_symbol
 from shaftcore.outline import upper_outline
 from shaftcore.sheet.chart_page import bare, figure, letters
 from shaftcore.sheet.edition import Edition
-from shaftcore.sheet.numbers import unit_of
 from shaftcore.sheet.palette import FAINT, INK, METAL, RULE, RUST, TEAL, VIOLET
 from shaftcore.units import dimension
 
@@ -47,7 +47,7 @@ class Board:
         return values / dimension(dimension_name).unit(self.edition.system).factor
 
     def label(self, words: str, dimension_name: str) -> str:
-        return f"{words}, {unit_of(dimension_name, self.edition.system)}"
+        return f"{words}, {unit_symbol(dimension_name, self.edition.system)}"
 
 
 def traces(edition: Edition, width: float, height: float) -> Figure:

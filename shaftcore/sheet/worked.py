@@ -4,9 +4,9 @@ from reportlab.lib.colors import HexColor
 from reportlab.platypus import Flowable, Table
 
 from shaftcore.calculation_lines import written
+from shaftcore.number_text import with_unit
 from shaftcore.sheet.edition import Edition
 from shaftcore.sheet.lettering import para, safe, typeset
-from shaftcore.sheet.numbers import with_unit
 from shaftcore.sheet.pages import UPRIGHT, Heading, papers, section
 from shaftcore.sheet.palette import FAINT, INK, RULE
 from shaftcore.sheet.tables import PAD, plain_table

@@ -12,10 +12,11 @@ from PySide6.QtCore import Qt
 from PySide6.QtTest import QTest
 from pytestqt.qtbot import QtBot
 
-from app.number_text import GROUP, editable, parse, shown, unit_symbol, with_unit
 from app.quantity_field import QuantityField
 from shaftcore.declared import Quantity
 from shaftcore.errors import QuantityError
+from shaftcore.number_text import GROUP, brief, editable, in_full, shown, unit_symbol, with_unit
+from shaftcore.typed_numbers import parse
 from shaftcore.units import DIMENSIONS, SYSTEMS, readable_units
 
 LENGTH = Quantity("Length", "length", 0.0, 1e5, above=True)
@@ -149,7 +150,22 @@ def test_numbers_are_shown_with_fixed_decimals_groups_and_a_true_minus() -> None
     assert shown(7, "", "SI") == "7"
     assert shown(100, "temperature", "US") == "212"
     assert with_unit(25.4, "length", "US") == "1.0000\u00a0in"
+    assert with_unit(90, "angle", "SI") == "90.0°"
+    assert with_unit(0.25, "share", "SI", 1, signed=True) == "+25.0\u00a0%"
+    assert with_unit(math.inf, "share", "SI") == "unloaded"
+    assert brief(1200.50, "length", "SI") == "1200.5"
+    assert brief(1200, "force", "SI") == "1200"
     assert unit_symbol("stress", "US") == "ksi"
+
+
+def test_what_was_typed_is_written_in_full_and_what_was_converted_to_a_few_digits() -> None:
+    assert in_full(0.125, "length", "SI") == "0.125"
+    assert in_full(-12345.678, "length", "SI") == f"−12{GROUP}345.678"
+    assert in_full(25.0, "length", "US", kept=4) == "0.9843"
+    assert in_full(1e10, "torque", "SI") == f"10{GROUP}000{GROUP}000"
+    assert in_full(math.pi * 1e6, "length", "SI", kept=4) == f"3{GROUP}142{GROUP}000"
+    assert in_full(-0.0, "length", "SI") == "0"
+    assert editable(math.pi * 1e6, LENGTH, "SI") == "3141590"
 
 
 # the field ----------------------------------------------------------------------------------------

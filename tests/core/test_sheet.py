@@ -284,9 +284,17 @@ def as_shown(column: Column, value: Any) -> str:
         return "unloaded"
     factor, decimals = SI_SHOWN[column.dimension]
     text = format(round(value * factor, 9), f".{decimals if column.decimals is None else column.decimals}f")
+    text = re.sub(r"\d+", lambda whole: grouped(whole[0]), text, count=1)
     if column.key in ("margin", "yield_margin"):
         return (text if text[0] == "-" else "+" + text).replace("-", "−")
-    return (text.lstrip("-") if float(text) == 0 else text).replace("-", "−")
+    return (text if text.strip("-0.") else text.lstrip("-")).replace("-", "−")
+
+
+def grouped(digits: str) -> str:
+    """Five digits and more in threes from the right; the held space reads back as a plain one."""
+    if len(digits) < 5:
+        return digits
+    return " ".join(reversed([digits[max(end - 3, 0) : end] for end in range(len(digits), 0, -3)]))
 
 
 def test_every_number_of_every_station_stands_in_the_tables(small: Results, small_pdf: bytes) -> None:

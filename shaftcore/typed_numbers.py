@@ -1,92 +1,14 @@
-"""Numbers as people read and type them: units of either system, decimal comma or point."""
+"""Typed numbers: decimal comma or point, groups of digits, a unit of either system behind them."""
 
 import math
 import re
-from collections.abc import Callable
-from functools import lru_cache
 
 from shaftcore.declared import Quantity
 from shaftcore.errors import QuantityError
-from shaftcore.units import System, Unit, dimension, readable_units
+from shaftcore.units import System, Unit, readable_units
 
-UNLOADED = "unloaded"
-NOTHING = "–"
-GROUP = "\u202f"
-"""A narrow space between groups of three digits: no sign that could be taken for a decimal one."""
-
-Entry = float | int | str | None
 _SPACES = re.compile(r"[\s\u00a0\u2009\u202f]+")
 _NUMBER = re.compile(r"([+-]?)([\d.,' ]*\d[.,]?)(?:[eE]([+-]?\d{1,3}))?(?![\d.,])")
-
-
-# writing --------------------------------------------------------------------------------------
-
-
-@lru_cache(maxsize=512)
-def writer(
-    dimension_name: str, system: System, decimals: int | None = None, signed: bool = False
-) -> Callable[[Entry], str]:
-    """A function that writes values (internal units) of one sort; words pass, None becomes a dash.
-
-    An empty dimension stands for counts and words. inf means that nothing loads the place.
-    """
-    if not dimension_name:
-        return lambda value: NOTHING if value is None else str(value)
-    unit = dimension(dimension_name).unit(system)
-    form = f"{'+' if signed else ''},.{unit.decimals if decimals is None else decimals}f"
-    factor, zero = unit.factor, unit.zero
-
-    def write(value: Entry) -> str:
-        if value is None or isinstance(value, str):
-            return NOTHING if value is None else value
-        if not math.isfinite(value):
-            return UNLOADED if value > 0 else NOTHING
-        text = _set(format(value / factor + zero, form))
-        # a margin that fails by a hair keeps its minus; a length of minus nought does not
-        return text if signed or text[0] != "−" or text.strip("−0.") else text[1:]
-
-    return write
-
-
-def _set(text: str) -> str:
-    """Digits of `text` grouped from five on, and a true minus sign."""
-    if "," in text:
-        whole = text.partition(".")[0].lstrip("+-")
-        text = text.replace(",", GROUP if len(whole) > 5 else "")
-    return "−" + text[1:] if text[0] == "-" else text
-
-
-def shown(value: Entry, dimension_name: str, system: System, decimals: int | None = None, signed: bool = False) -> str:
-    """A value (internal units) as it stands in a table, without its unit."""
-    return writer(dimension_name, system, decimals, signed)(value)
-
-
-def with_unit(value: Entry, dimension_name: str, system: System, decimals: int | None = None) -> str:
-    """A value with its unit, as it stands in running text."""
-    text = shown(value, dimension_name, system, decimals)
-    symbol = unit_symbol(dimension_name, system)
-    bare = not symbol or text in (UNLOADED, NOTHING) or isinstance(value, str)
-    return text if bare else f"{text}\u00a0{symbol}"
-
-
-def unit_symbol(dimension_name: str, system: System) -> str:
-    return dimension(dimension_name).unit(system).symbol if dimension_name else ""
-
-
-def editable(value: float | None, declaration: Quantity, system: System) -> str:
-    """A value as it stands in a field: as it was typed, or six digits where a conversion left a long tail.
-
-    The field holds the full value beside its text, so nothing is rounded away unless it is typed anew.
-    """
-    if value is None:
-        return ""
-    text = f"{declaration.dimension.unit(system).shown(value):.12g}"
-    if sum(map(str.isdigit, text.partition("e")[0].lstrip("-0."))) > 9:
-        text = f"{float(text):.6g}"
-    return text.replace("-", "−")
-
-
-# reading --------------------------------------------------------------------------------------
 
 
 def parse(text: str, declaration: Quantity, system: System) -> float:
