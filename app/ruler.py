@@ -11,6 +11,10 @@ TALLEST_SHARE = 0.42
 """Share of the bench's height the largest diameter may take; the rest is for loads, words and marks."""
 
 
+LEFT_IN_SIGHT = 40.0
+"""Pixels of the shaft's length that stay in sight however the view is moved."""
+
+
 class Ruler(QObject):
     """Where x lies on the screen. Bench and traces stand in one column, so one width serves both."""
 
@@ -22,6 +26,8 @@ class Ruler(QObject):
         self.scale = 1.0
         self.width = 800.0
         self.fitted = True
+        self.length = 0.0
+        """Of the shaft that is shown (mm); the view does not leave it. 0 leaves the view free."""
         self._length = 500.0
         self._tallest = 100.0
         self._height = 300.0
@@ -56,11 +62,15 @@ class Ruler(QObject):
         fixed = self.to_mm(at_px)
         widest = (self.width - LEFT_MARGIN - RIGHT_MARGIN) / CLOSEST_MM
         self.scale = min(max(self.scale * factor, 1e-3), widest)
-        self.begin = fixed - (at_px - LEFT_MARGIN) / self.scale
-        self.fitted = False
-        self.moved.emit()
+        self._move_to(fixed - (at_px - LEFT_MARGIN) / self.scale)
 
     def pan(self, px: float) -> None:
-        self.begin -= px / self.scale
-        self.fitted = False
+        self._move_to(self.begin - px / self.scale)
+
+    def _move_to(self, begin: float) -> None:
+        """Begin the view there, or as near as leaves some of the shaft in sight."""
+        if self.length > 0:
+            seen = min(LEFT_IN_SIGHT / self.scale, self.length)
+            begin = min(max(begin, self.to_mm(LEFT_MARGIN) - self.end + seen), self.length - seen)
+        self.begin, self.fitted = begin, False
         self.moved.emit()

@@ -120,6 +120,7 @@ def _size(letters: Type, words: list[str], bold: bool) -> QSizeF:
 
 def draw_callouts(painter: QPainter, stage: Stage, letters: Type, callouts: list[Callout]) -> None:
     """Leaders and words, the chosen thing's in the accent colour and bold."""
+    painter.setRenderHint(QPainter.RenderHint.Antialiasing, False)
     for chosen in (False, True):
         these = [callout for callout in callouts if callout.chosen is chosen]
         colour = stage.theme.accent if chosen else stage.theme.ink

@@ -55,6 +55,7 @@ def glyphs_of(stage: Stage) -> list[Glyph]:
 
 def draw_glyphs(painter: QPainter, stage: Stage, glyphs: list[Glyph]) -> None:
     """All glyphs, the chosen one last, in the accent colour and heavier."""
+    painter.setRenderHint(QPainter.RenderHint.Antialiasing, True)
     painter.setPen(hairline(stage.theme.faint))
     painter.drawLines([glyph.stem for glyph in glyphs if glyph.stem is not None])
     chosen = [glyph for glyph in glyphs if stage.chosen(glyph.thing)]

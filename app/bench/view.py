@@ -37,6 +37,8 @@ PAN_PER_NOTCH = 60.0
 NOTCH = 120.0
 """One click of a wheel, in Qt's eighths of a degree."""
 POINTER_ALPHA = 90
+LEFT_IN_SIGHT = 40.0
+"""Pixels of the shaft's height that stay on the bench however it is moved."""
 
 
 class Hand(Protocol):
@@ -125,11 +127,27 @@ class BenchView(QWidget):
         """Zoom so that the place under `pos` stays put, along and across."""
         _, height = self.to_shaft(pos)
         self.ruler.zoom(factor, pos.x())
-        self._lift += pos.y() - self.frame.y(height)
+        self._lift_by(pos.y() - self.frame.y(height))
+
+    def pan_by(self, dx: float, dy: float) -> None:
+        """Move the picture by pixels, along and across."""
+        self.ruler.pan(dx)
+        self._lift_by(dy)
+
+    def _lift_by(self, dy: float) -> None:
+        """Move the centre line, but never so far that the shaft leaves the bench above or below."""
+        frame, plan = self.frame, self._plan
+        inside = [x for x in plan.faces if 0.0 < frame.x(x) < frame.width] if plan.shaft.segments else []
+        ends = (min(max(frame.to_shaft(QPointF(px, 0.0))[0], 0.0), plan.shaft.length) for px in (0.0, frame.width))
+        reach = max(plan.radius_at(x) for x in (*inside, *ends)) * frame.scale
+        middle = (self.height() - FOOT) / 2
+        most = max(middle + reach - LEFT_IN_SIGHT, 0.0)
+        self._lift = min(max(self._lift + dy, -most), most)
         self._redraw()
 
     @guarded
     def _show(self, scene: Scene) -> None:
+        self.ruler.length = scene.shaft.length
         may_fit = self.ruler.fitted and not (scene.live or self.keep_view)
         if may_fit and scene.shaft.segments and _size(scene.shaft) != self._fitted_size:
             self.fit()
@@ -162,7 +180,7 @@ class BenchView(QWidget):
     def _ruler_moved(self) -> None:
         if self.ruler.fitted:
             self._lift = 0.0
-        self._redraw()
+        self._lift_by(0.0)
 
     # picture --------------------------------------------------------------------------------------
 
@@ -268,11 +286,9 @@ class BenchView(QWidget):
         if event.modifiers() & Qt.KeyboardModifier.ControlModifier:
             self.zoom_about(ZOOM_PER_NOTCH ** (turned.y() / NOTCH), event.position())
         elif event.modifiers() & Qt.KeyboardModifier.ShiftModifier:
-            self.ruler.fitted = False
-            self._lift += (turned.y() or turned.x()) / NOTCH * PAN_PER_NOTCH
-            self._redraw()
+            self.pan_by(0.0, (turned.y() or turned.x()) / NOTCH * PAN_PER_NOTCH)
         else:
-            self.ruler.pan((turned.y() or turned.x()) / NOTCH * PAN_PER_NOTCH)
+            self.pan_by((turned.y() or turned.x()) / NOTCH * PAN_PER_NOTCH, 0.0)
         event.accept()
 
     @guarded

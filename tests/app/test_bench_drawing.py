@@ -1,6 +1,7 @@
 """The drawing on the bench: where things lie, what is shown, that nothing lies on anything else."""
 
 import itertools
+from dataclasses import replace
 
 import matplotlib
 import numpy as np
@@ -14,7 +15,7 @@ from app.bench.colour_scale import TABLE, TOP, colours_of
 from app.bench.drawing import Drawing
 from app.bench.foot import mark_step, shown_stations
 from app.bench.labels import Board, Wanted
-from app.bench.stage import Plan, Stage, Type
+from app.bench.stage import FOOT, Plan, Stage, Type
 from app.bench.symbols import glyphs_of
 from app.bench.utilisation_band import LEAST_STRETCH, failing_places, utilisation_columns
 from app.bench.view import BenchView
@@ -22,6 +23,7 @@ from app.bench.words import description, load_words
 from app.document import Document
 from app.ruler import Ruler
 from app.theme import DARK, LIGHT
+from shaftcore.notches._contract import Array
 from shaftcore.notches.groove import Groove
 from shaftcore.notches.shoulder import Shoulder
 from shaftcore.shaft import AxialForce, RadialForce, Segment, Shaft, Support, Torque
@@ -108,6 +110,36 @@ def test_the_users_own_zoom_stays_after_a_change(bench: BenchView) -> None:
     longer = Shaft(segments=(*shaft.segments, Segment("e", 300, 36)), supports=shaft.supports)
     assert bench.document.change(longer, "lengthen")
     assert bench.ruler.scale == scale
+
+
+@pytest.mark.parametrize("sense", [1.0, -1.0])
+def test_however_the_view_is_moved_some_of_the_shaft_stays_in_sight(bench: BenchView, sense: float) -> None:
+    bench.document.load(stepped(), None)
+    foot = bench.height() - FOOT
+    for zoom in (1.0, 8.0):
+        bench.zoom_about(zoom, QPointF(700.0, 5.0))
+        for _ in range(80):
+            bench.pan_by(sense * 60.0, 0.0)
+        left, right = bench.to_screen(0, 0).x(), bench.to_screen(bench.document.shaft.length, 0).x()
+        assert right > 40.0
+        assert left < bench.width() - 40.0
+        for _ in range(80):
+            bench.pan_by(0.0, sense * 60.0)
+        seen = [x for x in np.linspace(0.0, 340.0, 200) if 0 <= bench.to_screen(float(x), 0).x() <= bench.width()]
+        radius = max(Plan(bench.document.shaft).radius_at(float(x)) for x in seen)
+        assert bench.to_screen(0, radius).y() < foot - 30.0
+        assert bench.to_screen(0, -radius).y() > 30.0
+
+
+def test_the_foot_stands_over_a_shaft_larger_than_the_bench(bench: BenchView) -> None:
+    bench.document.load(stepped(), None)
+    bench.zoom_about(20.0, bench.to_screen(40.0, 0.0))
+    image = bench.grab().toImage()
+    stage = stage_of(bench)
+    assert bench.to_screen(0.0, -20.0).y() > bench.height(), "the shaft reaches beyond the foot"
+    rows = range(round(stage.foot) + 1, bench.height())
+    assert all(image.pixelColor(2, y).name() == LIGHT.paper for y in rows)
+    assert image.pixelColor(2, round(stage.foot) - 2).name() == LIGHT.metal
 
 
 # colour and band ------------------------------------------------------------------------------
@@ -264,6 +296,15 @@ def test_crowded_station_numbers_are_thinned_but_never_the_chosen_or_governing(b
     assert all(a + half < b - other for (a, half), (b, other) in itertools.pairwise(spans))
 
 
+def test_a_support_without_a_name_goes_by_its_id(bench: BenchView) -> None:
+    bench.resize(1400, 420)
+    shaft = stepped()
+    bench.document.load(replace(shaft, supports=(Support("A", 25, locating=True), Support("B", 315, "Far"))), None)
+    lines = [line for callout in Drawing(stage_of(bench), Type()).callouts for line in callout.lines]
+    assert "A, locating" in lines
+    assert "Far, floating" in lines
+
+
 # pixels ---------------------------------------------------------------------------------------
 
 
@@ -308,6 +349,55 @@ def test_choosing_shows_and_hover_costs_no_new_layout(bench: BenchView) -> None:
     bench.document.point_at(100.0)
     bench.grab()
     assert bench._drawing is laid_out
+
+
+def live_shafts() -> list[tuple[tuple[str, str], Shaft]]:
+    """What is chosen, and the shaft a pull on it shows: fillet, groove, diameter, length, bore, load, support."""
+    shaft = stepped()
+    a, b, c, d = shaft.segments
+    down, *loads = shaft.loads
+    left, right = shaft.supports
+    return [
+        (("shoulder", "a"), replace(shaft, segments=(replace(a, shoulder=Shoulder(1.0, bearing_corner=2.0)), b, c, d))),
+        (("shoulder", "a"), replace(shaft, segments=(replace(a, shoulder=Shoulder(1.5, bearing_corner=4.0)), b, c, d))),
+        (("groove", "g"), replace(shaft, raisers=(Groove("g", 130, 1.5, 1.2),))),
+        (("segment", "b"), replace(shaft, segments=(a, replace(b, diameter=70), replace(c, diameter=70), d))),
+        (("segment", "a"), replace(shaft, segments=(replace(a, length=50), replace(b, length=150), c, d))),
+        (("segment", "b"), replace(shaft, segments=(a, replace(b, bore=30), c, d))),
+        (("radial force", "down"), replace(shaft, loads=(replace(down, force=9000.0, x=180.0), *loads))),
+        (("support", "A"), replace(shaft, supports=(replace(left, x=35.0), right))),
+    ]
+
+
+@pytest.mark.parametrize("theme", [LIGHT, DARK])
+@pytest.mark.parametrize(("chosen", "shaft"), live_shafts())
+def test_what_is_shown_live_is_the_whole_picture(bench: BenchView, theme, chosen, shaft: Shaft) -> None:  # type: ignore[no-untyped-def]
+    """The bench that lived through the gesture beside one that drew the last scene from nothing."""
+    bench.set_theme(theme)
+    bench.document.load(stepped(), None)
+    bench.document.choose(chosen)
+    bench.grab()
+    assert bench._drawing is not None
+    kept = bench._drawing.standings
+    for shown in (shaft, replace(stepped(), raisers=()), shaft):
+        assert bench.document.preview(shown)
+        live = pixels(bench.grab().toImage())
+    image = QImage(bench.size(), QImage.Format.Format_RGB32)
+    image.fill(theme.paper)
+    with QPainter(image) as painter:
+        Drawing(stage_of(bench), Type(), kept).paint(painter)
+    assert np.abs(live - pixels(image)).max() <= 3, "but for the rounding of half covered pixels"
+    bench.document.commit("pulled")
+    bench.grab()
+    words = {callout.key: callout.lines for callout in bench._drawing.callouts}
+    assert words == {callout.key: callout.lines for callout in Drawing(stage_of(bench), Type()).callouts}
+
+
+def pixels(image: QImage) -> Array:
+    """Red, green and blue of an image, (height, width, 3)."""
+    image = image.convertToFormat(QImage.Format.Format_RGB32)
+    rows = np.frombuffer(image.constBits(), np.uint8).reshape(image.height(), image.bytesPerLine())
+    return rows[:, : 4 * image.width()].reshape(image.height(), -1, 4)[..., :3].astype(float)
 
 
 # events ---------------------------------------------------------------------------------------
