@@ -13,6 +13,8 @@ from shaftcore.notch_sites import Seating
 from shaftcore.notches._contract import LOAD_SORTS
 from shaftcore.notches.arc import largest_arc_radius
 from shaftcore.notches.kinds import KINDS
+from shaftcore.notches.shoulder import LARGEST_RADIUS
+from shaftcore.phrase import Phrase
 from shaftcore.records import Notice
 from shaftcore.results import Judged, SeatLimit
 from shaftcore.shaft import Shaft, Torque
@@ -31,7 +33,8 @@ LOW_WORTH_SAYING = 0.03
 
 
 def seat_limits(shaft: Shaft, seated: Sequence[Seating]) -> tuple[SeatLimit, ...]:
-    """What caps each shoulder's fillet: room on the thin side; where a bearing seats, its corner and the step, too."""
+    """What caps each shoulder's fillet: what may be entered and the room on the thin side; where a bearing
+    seats, its corner and the step, too."""
     faces = faces_of(shaft)
     neighbours: dict[int, list[tuple[float, float]]] = {}
     for seating in seated:
@@ -48,11 +51,14 @@ def _seat_limit(seating: Seating, faces: Sequence[float], spans: Sequence[tuple[
         room = face - max([low, *(end for begin, end in spans if (begin, end) != own)])
     else:
         room = min([high, *(begin for begin, end in spans if (begin, end) != own)]) - face
-    caps = [(largest_arc_radius(room, step), "room on the thinner segment")]
+    caps = [
+        (LARGEST_RADIUS, Phrase("the largest radius that may be entered")),
+        (largest_arc_radius(room, step), Phrase("{:length} free along the thinner segment", (room,))),
+    ]
     corner = seating.record.bearing_corner
     if corner:
-        caps.append((step, f"step height {step:g} mm, or nothing is left to seat on"))
-        caps.append((largest_fillet(corner), f"bearing corner r_s,min {corner:g} mm"))
+        caps.append((step, Phrase("step height {:length}, or nothing is left to seat on", (step,))))
+        caps.append((largest_fillet(corner), Phrase("bearing corner r_s,min {:length}", (corner,))))
     allowed, reason = min(reversed(caps), key=lambda cap: cap[0])
     return SeatLimit(seating.place, allowed, reason)
 
@@ -86,8 +92,11 @@ def _balance(shaft: Shaft, loads: BeamLoads) -> Iterator[Notice]:
             side = "more goes in than comes out" if left_over > 0 else "more comes out than goes in"
             yield Notice(
                 "unbalanced torque",
-                f"The {word} do not balance by {abs(left_over) / 1e3:.4g} N·m ({side}); every margin is provisional "
-                "until a torque elsewhere makes up for it.",
+                Phrase(
+                    f"The {word} do not balance by {{:torque}} ({side}); every margin is provisional "
+                    "until a torque elsewhere makes up for it.",
+                    (abs(left_over),),
+                ),
                 provisional=True,
             )
 
@@ -95,17 +104,21 @@ def _balance(shaft: Shaft, loads: BeamLoads) -> Iterator[Notice]:
 def _shaft_wide(shaft: Shaft) -> Iterator[Notice]:
     tensile = shaft.material.tensile_strength
     if not shaft.loads:
-        yield Notice("no load", "No load is set on the shaft yet, so no station is stressed.", provisional=True)
+        words = Phrase("No load is set on the shaft yet, so no station is stressed.")
+        yield Notice("no load", words, provisional=True)
     if shaft.judgement.sensitivity == "neuber":
         for sort, limits in NEUBER_RANGE.items():
             if not limits.low <= tensile <= limits.high:
                 yield Notice(
                     "outside a fit",
-                    f"Neuber's constant in {sort} is fitted for {limits} MPa; S_ut {tensile:g} MPa is held at the "
-                    "nearer end.",
+                    Phrase(
+                        f"Neuber's constant in {sort} is fitted for {limits.symbol} from {{:stress}} to {{:stress}}; "
+                        "{:stress} is held at the nearer end.",
+                        (limits.low, limits.high, tensile),
+                    ),
                 )
     if shaft.judgement.user_factor != 1 and not shaft.judgement.user_factor_reason:
-        yield Notice("reason missing", "The own factor on the endurance limit has no reason beside it.")
+        yield Notice("reason missing", Phrase("The own factor on the endurance limit has no reason beside it."))
 
 
 def _seats(shaft: Shaft, seated: Sequence[Seating], stations: Sequence[Station]) -> Iterator[Notice]:
@@ -119,16 +132,22 @@ def _seats(shaft: Shaft, seated: Sequence[Seating], stations: Sequence[Station])
         if r > largest_fillet(corner):
             yield Notice(
                 "fillet too large for its bearing",
-                f"Fillet r {r:g} mm is larger than {largest_fillet(corner):g} mm, the most a bearing corner "
-                f"r_s,min {corner:g} mm lets seat (DIN 5418): the ring would ride on the fillet.",
+                Phrase(
+                    "Fillet r {:length} is larger than {:length}, the most a bearing corner r_s,min {:length} "
+                    "lets seat (DIN 5418): the ring would ride on the fillet.",
+                    (r, largest_fillet(corner), corner),
+                ),
                 seating.place,
                 where,
             )
         if step < least_abutment(corner):
             yield Notice(
                 "low abutment",
-                f"Step height {step:g} mm is below {least_abutment(corner):g} mm, the usual least abutment for a "
-                f"bearing corner r_s,min {corner:g} mm (catalogue value).",
+                Phrase(
+                    "Step height {:length} is below {:length}, the usual least abutment for a bearing corner "
+                    "r_s,min {:length} (catalogue value).",
+                    (step, least_abutment(corner), corner),
+                ),
                 seating.place,
                 where,
             )
@@ -141,8 +160,11 @@ def _bore_steps(shaft: Shaft, stations: Sequence[Station]) -> Iterator[Notice]:
     for one, other, face in steps:
         yield Notice(
             "bore step",
-            f"The bore steps from {one:g} to {other:g} mm; its inner corner is judged without a stress concentration "
-            "of its own.",
+            Phrase(
+                "The bore steps from {:length} to {:length}; its inner corner is judged without a stress "
+                "concentration of its own.",
+                (one, other),
+            ),
             stations[where[face]].place,
             where[face],
         )
@@ -157,8 +179,11 @@ def _fillets_on_tapers(shaft: Shaft, seated: Sequence[Seating], stations: Sequen
         if rise > TAPER_WORTH_SAYING * site.sizes["h"]:
             yield Notice(
                 "fillet on a taper",
-                f"Kt is that of a step between cylinders; here the thinner side changes its radius by {rise:.2g} mm "
-                "under the fillet.",
+                Phrase(
+                    "Kt is that of a step between cylinders; here the thinner side changes its radius by {:length} "
+                    "under the fillet.",
+                    (rise,),
+                ),
                 seating.place,
                 where[seating.place],
             )
@@ -175,8 +200,11 @@ def _station_flags(
         if too_small_or_large[i]:
             yield Notice(
                 "outside a fit",
-                f"The size factor is fitted for {SIZE_LOW:g} to {SIZE_HIGH:g} mm; for {size[i]:.4g} mm "
-                f"{'it is 1' if size[i] < SIZE_LOW else 'its power is carried on'}.",
+                Phrase(
+                    "The size factor is fitted for {:length} to {:length}; for {:length} "
+                    + ("it is 1." if size[i] < SIZE_LOW else "its power is carried on."),
+                    (SIZE_LOW, SIZE_HIGH, float(size[i])),
+                ),
                 station.place,
                 i,
             )
@@ -184,7 +212,7 @@ def _station_flags(
             continue
         kind = KINDS[station.kind]
         for key, words in kind.remarks(station.site):
-            yield Notice(key, words[0].upper() + words[1:] + ".", station.place, i)
+            yield Notice(key, words, station.place, i)
         fits = kind.fits[source]
         outside = [sort for sort, is_outside in zip(LOAD_SORTS, outsides[i], strict=True) if is_outside]
         if outside:
@@ -196,8 +224,10 @@ def _station_flags(
             )
             yield Notice(
                 "outside a fit",
-                f"Kt after {SOURCES[fits[outside[0]].source].short} is used outside its range ({ranges}); here {have}. "
-                "The value is carried on from the nearest end.",
+                Phrase(
+                    f"Kt after {SOURCES[fits[outside[0]].source].short} is used outside its range ({ranges}); "
+                    f"here {have}. The value is carried on from the nearest end."
+                ),
                 station.place,
                 i,
             )
@@ -207,23 +237,27 @@ def _station_flags(
         if low:
             yield Notice(
                 "fit below finite elements",
-                f"For a root this sharp finite elements give more than {SOURCES[fits['bending'].source].short}: "
-                f"up to {', '.join(low)} more Kt.",
+                Phrase(
+                    f"For a root this sharp finite elements give more than {SOURCES[fits['bending'].source].short}: "
+                    f"up to {', '.join(low)} more Kt."
+                ),
                 station.place,
                 i,
             )
         if held[i]:
             yield Notice(
                 "Kf held",
-                "For a root this sharp the formulas would let Kf fall again; it is held at its peak.",
+                Phrase("For a root this sharp the formulas would let Kf fall again; it is held at its peak."),
                 station.place,
                 i,
             )
         if station.site.bore > 0:
             yield Notice(
                 "bored section",
-                f"Kt is that of a solid shaft; the section is bored d_i/d = {station.site.bore / station.site.d:.2f}. "
-                "The nominal stress counts the bore.",
+                Phrase(
+                    f"Kt is that of a solid shaft; the section is bored d_i/d = "
+                    f"{station.site.bore / station.site.d:.2f}. The nominal stress counts the bore."
+                ),
                 station.place,
                 i,
             )

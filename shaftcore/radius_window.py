@@ -10,6 +10,7 @@ from shaftcore.margins import judge
 from shaftcore.notch_factors import LOAD_ROWS, factors_of
 from shaftcore.notches._contract import Array, Site
 from shaftcore.notches.kinds import KINDS
+from shaftcore.phrase import Phrase
 from shaftcore.results import Results
 
 SMALLEST, USUAL = 0.05, 0.3
@@ -25,7 +26,7 @@ BESIDE = 1e-9
 
 @dataclass(frozen=True)
 class RadiusWindow:
-    """What a fillet may be, in mm. `place` as in its station, `limited_by` in words.
+    """What a fillet may be, in mm. `place` as in its station, `limited_by` in the reader's units.
 
     `needed` is the smallest radius with which the station reaches both asked factors, None where
     none that was tried does. Where the smallest radius tried suffices, it is that.
@@ -34,7 +35,7 @@ class RadiusWindow:
     place: str
     needed: float | None
     allowed: float
-    limited_by: str
+    limited_by: Phrase
 
     @property
     def empty(self) -> bool:

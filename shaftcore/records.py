@@ -4,6 +4,8 @@ import math
 from dataclasses import dataclass
 from typing import Literal
 
+from shaftcore.phrase import Phrase
+
 
 @dataclass(frozen=True)
 class Problem:
@@ -30,16 +32,21 @@ class Problem:
 class Notice:
     """Something the user must see although the number beside it was computed.
 
-    `key` is a short stable word for the sort of notice, `place` the id of the thing on the shaft
-    it belongs to ("" for the whole shaft), `station` the index of the station or None.
-    A `provisional` notice makes every margin of the shaft provisional.
+    `key` is a short stable word for the sort of notice, `words` say it in the reader's units, `place`
+    is the id of the thing on the shaft it belongs to ("" for the whole shaft), `station` the index
+    of the station or None. A `provisional` notice makes every margin of the shaft provisional.
     """
 
     key: str
-    text: str
+    words: Phrase
     place: str = ""
     station: int | None = None
     provisional: bool = False
+
+    @property
+    def text(self) -> str:
+        """The words in SI."""
+        return str(self.words)
 
 
 @dataclass(frozen=True)

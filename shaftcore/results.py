@@ -9,6 +9,7 @@ from shaftcore.beam_loads import BeamLoads
 from shaftcore.equivalent_stress import Nominal
 from shaftcore.notch_factors import NotchFactors
 from shaftcore.notches._contract import Array
+from shaftcore.phrase import Phrase
 from shaftcore.records import Notice
 from shaftcore.shaft import Shaft
 from shaftcore.stations import Station
@@ -59,11 +60,11 @@ class Judged:
 
 @dataclass(frozen=True, eq=False)
 class SeatLimit:
-    """What caps a shoulder's fillet: `place` as in its station, mm; `reason` in words."""
+    """What caps a shoulder's fillet: `place` as in its station, mm; `reason` in the reader's units."""
 
     place: str
     allowed: float
-    reason: str
+    reason: Phrase
 
 
 @dataclass(frozen=True, eq=False)

@@ -11,7 +11,7 @@ from app.bench.sketch import FIELDS, Sketch
 from app.document import Scene, Selection
 from app.theme import Theme, text_font
 from shaftcore.nomenclature import BY_KEY
-from shaftcore.number_text import shown
+from shaftcore.number_text import with_unit
 from shaftcore.radius_window import SMALLEST, RadiusWindow
 from shaftcore.results import Results
 
@@ -43,8 +43,8 @@ def drag_lines(scene: Scene, size: Size, value: float | None, typed: str, window
     if index is not None:
         lines += [("symbols", row) for row in _station_rows(scene, scene.results, index)]
     worst = scene.results.governing
-    margin = shown(scene.results.least_margin, "share", scene.system, 1, signed=True)
-    lines.append(("plain", f"worst: {scene.results.stations[worst].label}   margin {margin} %"))
+    margin = with_unit(scene.results.least_margin, "share", scene.system, 1, signed=True)
+    lines.append(("plain", f"worst: {scene.results.stations[worst].label}   margin {margin}"))
     if window is not None:
         lines.append(("symbols", _window_words(scene, size, window)))
     return lines
@@ -118,9 +118,8 @@ def _station_rows(scene: Scene, results: Results, index: int) -> list[str]:
             if value is None or (key.startswith("kt") and results.stations[index].site is None):
                 continue
             signed = column.dimension == "share"
-            text = shown(value, column.dimension, scene.system, 1 if signed else 2, signed=signed)
-            unit = " %" if signed and text[-1].isdigit() else ""
-            entries.append(f"{column.symbol} {text}{unit}")
+            text = with_unit(value, column.dimension, scene.system, 1 if signed else 2, signed)
+            entries.append(f"{column.symbol} {text}")
         if entries:
             rows.append("   ".join(entries))
     return rows
@@ -128,7 +127,7 @@ def _station_rows(scene: Scene, results: Results, index: int) -> list[str]:
 
 def _window_words(scene: Scene, size: Size, window: RadiusWindow) -> str:
     unit = size.declaration.dimension.unit(scene.system)
-    allowed = f"{size.shown(window.allowed, scene.system)} allowed ({window.limited_by})"
+    allowed = f"{size.shown(window.allowed, scene.system)} allowed ({window.limited_by.written(scene.system)})"
     if window.needed is None:
         return f"no radius reaches the asked factors; {allowed}"
     if window.needed <= SMALLEST:

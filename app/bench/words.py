@@ -5,10 +5,10 @@ from collections.abc import Callable
 from typing import Any
 
 from app.document import Scene
-from shaftcore.number_text import shown, with_unit
+from shaftcore.number_text import beside_unit, brief, with_unit
 from shaftcore.results import Results
 from shaftcore.shaft import AxialForce, RadialForce, Shaft, Support, Torque
-from shaftcore.units import System, dimension
+from shaftcore.units import System
 
 PLUS_MINUS = " ± "
 NEXT_STEP = {
@@ -21,16 +21,9 @@ NEXT_STEP = {
 """By the field that is missing: heading ("" for the problem's own remedy) and how it is done here."""
 
 
-def number(value: float, dimension_name: str, system: System) -> str:
-    """A number in the user's unit without the noughts at its end and without the unit."""
-    text = shown(value, dimension_name, system)
-    return text.rstrip("0").rstrip(".") if "." in text else text
-
-
 def quantity(value: float, dimension_name: str, system: System) -> str:
-    symbol = dimension(dimension_name).unit(system).symbol
-    gap = "" if symbol == "°" else "\u00a0"
-    return f"{number(value, dimension_name, system)}{gap}{symbol}".rstrip()
+    """A number with its unit, without the noughts at its end."""
+    return beside_unit(brief(value, dimension_name, system), dimension_name, system)
 
 
 def load_words(load: Any, system: System) -> str:
@@ -62,7 +55,7 @@ _LOAD_WORDS: dict[type, Callable[[Any, System], str]] = {RadialForce: _radial, T
 
 
 def _pulsation(amplitude: float, dimension_name: str, system: System) -> str:
-    return PLUS_MINUS + number(abs(amplitude), dimension_name, system) if amplitude else ""
+    return PLUS_MINUS + brief(abs(amplitude), dimension_name, system) if amplitude else ""
 
 
 def support_words(support: Support) -> str:

@@ -127,7 +127,7 @@ class LedgerModel(QAbstractTableModel):
         said: list[list[str]] = [[] for _ in results.stations]
         for notice in results.notices:
             if notice.station is not None:
-                said[notice.station].append(notice.text)
+                said[notice.station].append(notice.words.written(self._scene.system))
         governing = results.governing
         self.marks = [
             Mark(fails, i == governing, tuple(texts))

@@ -52,7 +52,7 @@ def entries_of(scene: Scene) -> tuple[Entry, ...]:
             head = f"{head} · No. {station.number}  {station.label}"
         if notice.provisional:
             head = f"Provisional · {head}"
-        found.append(Entry(head, notice.text, notice.station, notice.place, notice.provisional))
+        found.append(Entry(head, notice.words.written(scene.system), notice.station, notice.place, notice.provisional))
     return (*missing, *found) or (Entry("", NOTHING),)
 
 

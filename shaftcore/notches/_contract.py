@@ -12,6 +12,7 @@ import numpy as np
 from numpy.typing import NDArray
 
 from shaftcore.calculation_lines import Line
+from shaftcore.phrase import Phrase
 from shaftcore.records import ValidRange
 
 Array = NDArray[np.float64]
@@ -91,7 +92,8 @@ class RaiserKind:
     """Everything the program knows about one kind of raiser.
 
     `size_symbols` and `size_labels` name the sizes of its sites; `derived` holds, for each size that
-    follows from others, its formula in words and as a template of a calculation line.
+    follows from others, its formula in words and as a template of a calculation line. `remarks`
+    gives key and words of what must be noticed about a site.
     """
 
     key: str
@@ -107,4 +109,4 @@ class RaiserKind:
     fits: Mapping[str, Mapping[LoadSort, Fit]]
     outline: Callable[[Any, Around], Array]
     handles: Callable[[Any, Around], tuple[Handle, ...]]
-    remarks: Callable[[Site], tuple[tuple[str, str], ...]] = field(default=lambda site: ())
+    remarks: Callable[[Site], tuple[tuple[str, Phrase], ...]] = field(default=lambda site: ())

@@ -15,6 +15,7 @@ from shaftcore.notches._contract import Around, Array, Fit, Handle, LoadSort, Ra
 from shaftcore.notches.arc import DIN_RANGES, SIZE_LABELS, SIZE_SYMBOLS, arc_along, arc_turn, parameters
 from shaftcore.notches.chart_polynomial import CORNER_IN_SHEAR, Piece, chart_fit
 from shaftcore.notches.din_form import FormConstants, din_fit
+from shaftcore.phrase import Phrase
 from shaftcore.surface import FINISHES
 
 BENDING: tuple[Piece, ...] = (
@@ -57,12 +58,16 @@ FITS: dict[str, dict[LoadSort, Fit]] = {
 }
 
 
+LARGEST_RADIUS = 1000.0
+"""The largest fillet (mm) that may be entered."""
+
+
 @dataclass(frozen=True)
 class Shoulder:
     """The fillet where the diameter steps at a segment's right-hand face, and what seats there."""
 
     label: ClassVar[str] = "Shoulder"
-    radius: float = quantity("Fillet radius", "length", 0.001, 1000.0, symbol="r")
+    radius: float = quantity("Fillet radius", "length", 0.001, LARGEST_RADIUS, symbol="r")
     finish: str | None = choice(
         "Finish of the fillet", FINISHES, default=None, optional=True, none_words="as the thinner segment"
     )
@@ -124,11 +129,12 @@ def _handles(shoulder: Shoulder, around: Around) -> tuple[Handle, ...]:
     return (Handle("radius", x, d / 2 + r * (1 - math.cos(turn)), (sense * slant, slant)),)
 
 
-def _remarks(site: Site) -> tuple[tuple[str, str], ...]:
+def _remarks(site: Site) -> tuple[tuple[str, Phrase], ...]:
     if site.sizes["r"] > site.sizes["h"]:
-        words = (
-            f"fillet r {site.sizes['r']:g} mm is larger than the step height {site.sizes['h']:g} mm: "
-            "the arc is cut by the step and leaves no seating face"
+        words = Phrase(
+            "Fillet r {:length} is larger than the step height {:length}: "
+            "the arc is cut by the step and leaves no seating face.",
+            (site.sizes["r"], site.sizes["h"]),
         )
         return (("no seating face", words),)
     return ()

@@ -55,7 +55,7 @@ def notices(edition: Edition) -> list[Flowable]:
     fields = [
         Field("Station", [_where(edition, notice) for notice in found], False),
         Field("Sort", [notice.key + (", provisional" if notice.provisional else "") for notice in found], False),
-        Field("Notice", [notice.text for notice in found], False, 60 * mm, symbols=True),
+        Field("Notice", [notice.words.written(edition.system) for notice in found], False, 60 * mm, symbols=True),
     ]
     return [*story, ruled_table(fields, papers(edition.system)[UPRIGHT].width)]
 

@@ -113,7 +113,8 @@ def _shoulders(edition: Edition) -> list[Field]:
         found = [limits.get(s.place) for s in sites]
         allowed = [shown(limit.allowed if limit else None, "length", system) for limit in found]
         fields.append(Field(f"Largest fillet<br/>{unit}", allowed))
-        fields.append(Field("limited by", [limit.reason if limit else NOTHING for limit in found], False, symbols=True))
+        reasons = [limit.reason.written(system) if limit else NOTHING for limit in found]
+        fields.append(Field("limited by", reasons, False, symbols=True))
     return fields
 
 

@@ -70,7 +70,7 @@ def _entry(label: str, text: str) -> list[Flowable]:
 
 
 def _provisional(edition: Edition) -> list[str]:
-    return [notice.text for notice in edition.results.notices if notice.provisional]
+    return [notice.words.written(edition.system) for notice in edition.results.notices if notice.provisional]
 
 
 def _statement(edition: Edition) -> list[str]:

@@ -230,6 +230,16 @@ def test_an_unfinished_shaft_empties_the_ledger_and_says_what_is_missing(ledger:
     assert ledger.model.rowCount() > 0
 
 
+def test_notices_beside_the_rows_are_in_the_units_that_are_read(ledger: Ledger, document: Document) -> None:
+    """The fillet of 0.6 mm at a bearing corner of 0.3 mm: 0.6/25.4 and 0.3/25.4 in."""
+    row = _column(ledger, "place").index("Shoulder s2|s3")
+    assert "Fillet r 0.6\u00a0mm is larger" in ledger.model.mark(row).words()
+    document.set_system("US")
+    row = _column(ledger, "place").index("Shoulder s2|s3")
+    assert "Fillet r 0.02362\u00a0in is larger than 0.01181\u00a0in" in ledger.model.mark(row).words()
+    assert " mm" not in ledger.model.mark(row).words().replace("\u00a0", " ")
+
+
 # workings -------------------------------------------------------------------------------------------
 
 

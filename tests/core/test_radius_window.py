@@ -6,8 +6,11 @@ import numpy as np
 import pytest
 
 from shaftcore.abutment import largest_fillet
+from shaftcore.declared import declared
+from shaftcore.errors import UnsoundShaftError
 from shaftcore.evaluation import evaluate
 from shaftcore.notches.shoulder import Shoulder
+from shaftcore.phrase import Phrase
 from shaftcore.radius_window import SMALLEST, RadiusWindow, radius_window
 from shaftcore.shaft import Duty, Judgement, Material, RadialForce, Segment, Shaft, Support, Torque
 
@@ -92,10 +95,10 @@ def test_the_bearing_corner_closes_the_window():
     results = evaluate(shaft(Judgement(), 9500.0, bearing_corner=1.0))
     window = radius_window(results, "a")
     assert window.allowed == largest_fillet(1.0)
-    assert "corner" in window.limited_by
+    assert "corner" in str(window.limited_by)
     assert window.needed > window.allowed
     assert window.empty
-    assert not RadiusWindow("a", 0.8, 1.0, "").empty
+    assert not RadiusWindow("a", 0.8, 1.0, Phrase("")).empty
 
 
 def test_a_low_step_limits_the_fillet_where_something_seats():
@@ -103,7 +106,29 @@ def test_a_low_step_limits_the_fillet_where_something_seats():
     low = replace(one, segments=(one.segments[0], replace(one.segments[1], diameter=49.0)))
     window = radius_window(evaluate(low), "a")
     assert window.allowed == pytest.approx(2.0)
-    assert "step" in window.limited_by
+    assert "step" in str(window.limited_by)
+
+
+def test_no_more_is_allowed_than_may_be_entered():
+    """The arc of a low step runs far out; beyond what the field takes its room says nothing."""
+    one = shaft(Judgement(), 1000.0)
+    low = replace(one, segments=(one.segments[0], replace(one.segments[1], diameter=45.02)))
+    window = radius_window(evaluate(low), "a")
+    assert window.allowed == declared(Shoulder)["radius"].high
+    assert least_margin(with_radius(low, window.allowed)) > 0
+    with pytest.raises(UnsoundShaftError):
+        evaluate(with_radius(low, window.allowed * 1.001))
+
+
+def test_the_room_that_limits_a_fillet_is_the_free_length_of_the_thinner_segment():
+    """Largest radius whose arc still ends on it: a chord of height h over the free length, (l²/h + h)/2."""
+    one = shaft(Judgement(), 1000.0)
+    thin, thick = one.segments[0], replace(one.segments[1], diameter=75.0)
+    window = radius_window(evaluate(replace(one, segments=(thin, thick))), "a")
+    h = (thick.diameter - thin.diameter) / 2
+    assert window.allowed == pytest.approx((thin.length**2 / h + h) / 2)
+    assert str(window.limited_by) == f"{thin.length:g} mm free along the thinner segment"
+    assert window.limited_by.written("US") == "4.724\u00a0in free along the thinner segment"
 
 
 def test_needed_radius_does_not_depend_on_the_radius_now():
