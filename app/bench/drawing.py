@@ -8,6 +8,7 @@ from PySide6.QtGui import QPainter
 
 from app.bench.body import draw_edges, draw_metal, part_of_outline
 from app.bench.callouts import Callout, Kept, draw_callouts, place_callouts
+from app.bench.colour_scale import colours_of
 from app.bench.dimensions import chosen_raiser, chosen_segment, draw_segment_dimensions
 from app.bench.foot import draw_foot, station_numbers
 from app.bench.polygons import chain_line, draw_weighted, hairline
@@ -54,6 +55,7 @@ class Drawing:
             self.words = [callout for callout in callouts if callout.key in keys]
             self.marks = Marks(glyphs, [callout for callout in callouts if callout.key not in keys])
         self.columns = utilisation_columns(stage)
+        self.colours = colours_of(np.nan_to_num(self.columns))
         self.numbers = station_numbers(stage, letters)
 
     @property
@@ -65,6 +67,12 @@ class Drawing:
         """Where the words stand, to keep them there during a gesture."""
         stood = {callout.key: callout.standing for callout in self.callouts}
         return {key: stood.get(key) for key in self.wanted}
+
+    @property
+    def station_x(self) -> float | None:
+        """Where the chosen station lies, px."""
+        results, index = self.stage.scene.results, self.stage.scene.station
+        return None if results is None or index is None else self.stage.frame.x(results.stations[index].x)
 
     def same_over(self, other: "Drawing") -> bool:
         """Whether `paint_over` of both gives the same picture: the same marks over the same numbers."""
@@ -84,7 +92,7 @@ class Drawing:
         self._paint_station_line(painter)
         draw_metal(painter, stage)
         if stage.scene.results is not None:
-            draw_band(painter, stage, self.columns)
+            draw_band(painter, stage, self.colours)
         draw_edges(painter, stage)
         if stage.scene.results is not None:
             draw_ticks(painter, stage, self.columns)
@@ -107,11 +115,9 @@ class Drawing:
 
     def _paint_station_line(self, painter: QPainter) -> None:
         """From the chosen station down to its number."""
-        stage = self.stage
-        results, index = stage.scene.results, stage.scene.station
-        if results is None or index is None:
+        stage, x = self.stage, self.station_x
+        if x is None:
             return
-        x = stage.frame.x(results.stations[index].x)
         painter.setRenderHint(QPainter.RenderHint.Antialiasing, False)
         painter.setPen(hairline(stage.theme.accent))
         painter.drawLine(QLineF(x, stage.frame.axis, x, stage.foot))
@@ -151,8 +157,8 @@ class Drawing:
 
 
 def _hung_on(stage: Stage) -> tuple[object, ...]:
-    """All that marks, their words and dimensions are laid out from; raisers and fillets are not among it."""
+    """View, choice, plain sizes, loads and supports: marks and words hang on these, not on raisers and fillets."""
     scene, shaft = stage.scene, stage.shaft
-    plain = tuple((s.id, s.length, s.diameter, s.right_diameter) for s in shaft.segments)
+    plain = tuple((s.id, s.length, s.diameter, s.right_diameter, s.bore) for s in shaft.segments)
     look = stage.frame, stage.theme, stage.pixel_ratio, scene.system, scene.live
     return look, plain, shaft.supports, shaft.loads, scene.chosen, scene.missing, scene.results is None

@@ -5,7 +5,6 @@ from numpy.typing import NDArray
 from PySide6.QtCore import QLineF, Qt
 from PySide6.QtGui import QBrush, QImage, QPainter, QTransform
 
-from app.bench.colour_scale import colours_of
 from app.bench.polygons import hairline, polygon
 from app.bench.stage import Stage
 from shaftcore.notches._contract import Array
@@ -42,9 +41,9 @@ def _columns_of(stage: Stage, span: tuple[float, float]) -> tuple[int, int]:
     return max(round((begin - spare) * ratio), 0), max(round((end + spare) * ratio), 0)
 
 
-def draw_band(painter: QPainter, stage: Stage, columns: Array) -> None:
+def draw_band(painter: QPainter, stage: Stage, colours: NDArray[np.uint32]) -> None:
     """The coloured band just inside the outline, above and below."""
-    brush = row_brush(colours_of(np.nan_to_num(columns)), stage.pixel_ratio)
+    brush = row_brush(colours, stage.pixel_ratio)
     painter.setRenderHint(QPainter.RenderHint.Antialiasing, False)
     painter.setPen(Qt.PenStyle.NoPen)
     painter.setBrush(brush)

@@ -21,6 +21,7 @@ from PySide6.QtGui import (
 from PySide6.QtWidgets import QWidget
 
 from app.bench.callouts import Kept
+from app.bench.changes import changed_columns
 from app.bench.drawing import Drawing
 from app.bench.frame import Frame
 from app.bench.stage import FOOT, Plan, Stage, Type
@@ -80,6 +81,7 @@ class BenchView(QWidget):
         self._outdated = True
         self._standings: Kept = {}
         self._over: tuple[Drawing, QPixmap] | None = None
+        self._picture: tuple[Drawing, QPixmap] | None = None
         self.setMinimumHeight(LEAST_HEIGHT)
         self.setMouseTracking(True)
         self.setAcceptDrops(True)
@@ -202,20 +204,35 @@ class BenchView(QWidget):
     def _over_of(self, drawing: Drawing) -> QPixmap:
         """Marks and foot on clear ground, kept while they stay the same: they cost more than the shaft."""
         if self._over is None or not drawing.same_over(self._over[0]):
-            ratio = drawing.stage.pixel_ratio
-            over = QPixmap(self.size() * ratio)
-            over.setDevicePixelRatio(ratio)
+            over = self._sheet(drawing)
             over.fill(Qt.GlobalColor.transparent)
             with QPainter(over) as painter:
                 drawing.paint_over(painter)
             self._over = drawing, over
         return self._over[1]
 
-    def _paint_picture(self, painter: QPainter, drawing: Drawing) -> None:
-        painter.fillRect(self.rect(), QColor(self.theme.paper))
-        drawing.paint_shaft(painter)
-        painter.drawPixmap(0, 0, self._over_of(drawing))
-        drawing.paint_words(painter)
+    def _picture_of(self, drawing: Drawing) -> QPixmap:
+        """The picture without the chosen raiser's words, kept; only columns that changed are painted anew."""
+        before, columns = self._picture, None
+        if before is not None and before[0] is drawing:
+            return before[1]
+        if before is not None:
+            columns = changed_columns(drawing, before[0])
+        picture = self._sheet(drawing) if before is None or columns is None else before[1]
+        begin, end = columns or (0, self.width())
+        with QPainter(picture) as painter:
+            painter.setClipRect(begin, 0, end - begin, self.height())
+            painter.fillRect(self.rect(), QColor(self.theme.paper))
+            drawing.paint_shaft(painter)
+            painter.drawPixmap(0, 0, self._over_of(drawing))
+        self._picture = drawing, picture
+        return picture
+
+    def _sheet(self, drawing: Drawing) -> QPixmap:
+        ratio = drawing.stage.pixel_ratio
+        sheet = QPixmap(self.size() * ratio)
+        sheet.setDevicePixelRatio(ratio)
+        return sheet
 
     def _paint_pointer(self, painter: QPainter) -> None:
         """A faint line through bench and traces; a gesture has the pointer for itself."""
@@ -233,7 +250,9 @@ class BenchView(QWidget):
     def paintEvent(self, event: QPaintEvent) -> None:  # noqa: N802 (Qt's name)
         # nothing may be left painting when something goes wrong: Qt would end the process
         with QPainter(self) as painter:
-            self._paint_picture(painter, self._laid_out())
+            drawing = self._laid_out()
+            painter.drawPixmap(0, 0, self._picture_of(drawing))
+            drawing.paint_words(painter)
             self._paint_pointer(painter)
             if self.hand is not None:
                 self.hand.overlay(painter)
