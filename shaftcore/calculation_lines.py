@@ -8,6 +8,9 @@ import re
 from dataclasses import dataclass
 from decimal import Decimal
 
+from shaftcore.number_text import unit_symbol, with_unit
+from shaftcore.units import System, readable_units
+
 DIGITS = 6
 """Significant digits of every printed number."""
 
@@ -33,6 +36,22 @@ class Line:
     source: str
     flag: str = ""
 
+    @property
+    def result(self) -> str:
+        """The value with the unit it was calculated in."""
+        return f"{_bare(self.value)}\u00a0{self._unit}" if self._unit else _bare(self.value)
+
+    def restated(self, system: System) -> str:
+        """The value as the reader's system has it, "" where that is what `result` says."""
+        if not self.dimension or unit_symbol(self.dimension, system) == self._unit:
+            return ""
+        return with_unit(self.value, self.dimension, system)
+
+    @property
+    def _unit(self) -> str:
+        units = readable_units(self.dimension) if self.dimension else ()
+        return next((unit.symbol for unit in units if unit.factor == 1 and not unit.zero), "")
+
 
 def written(value: float) -> str:
     """A number with six significant digits, in parentheses where negative, tiny ones by a power of ten."""
@@ -43,6 +62,11 @@ def written(value: float) -> str:
         exponent = f"{int(power)}".replace("-", "−")
         return f"({Decimal(digits).normalize():f} × 10^{exponent})"
     return f"{Decimal(f'{value:.{DIGITS}g}'):f}" if value else "0"
+
+
+def _bare(value: float) -> str:
+    """The same where it stands alone: a minus needs no parentheses there."""
+    return "−" * (value < 0) + written(abs(value)).strip("()")
 
 
 def line(

@@ -67,11 +67,7 @@ def _strength(field: str) -> Callable[[Results], Sequence[float]]:
 
 
 def _flags(results: Results) -> Sequence[str]:
-    found: list[list[str]] = [[] for _ in results.stations]
-    for notice in results.notices:
-        if notice.station is not None and notice.key not in found[notice.station]:
-            found[notice.station].append(notice.key)
-    return ["; ".join(keys) for keys in found]
+    return ["; ".join(dict.fromkeys(notice.key for notice in said)) for said in results.notices_by_station()]
 
 
 COLUMNS: tuple[Column, ...] = (

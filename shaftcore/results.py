@@ -107,6 +107,14 @@ class Results:
         """True while loads do not balance."""
         return any(notice.provisional for notice in self.notices)
 
+    def notices_by_station(self) -> list[list[Notice]]:
+        """The notices of every station; those for the whole shaft are in none."""
+        found: list[list[Notice]] = [[] for _ in self.stations]
+        for notice in self.notices:
+            if notice.station is not None:
+                found[notice.station].append(notice)
+        return found
+
     @property
     def sound(self) -> bool:
         """True where every station reaches both asked factors."""

@@ -1,6 +1,7 @@
 """How the panels are set: spacing, and the few colours that a palette has no role for."""
 
-from PySide6.QtWidgets import QLabel, QWidget
+from PySide6.QtCore import Qt
+from PySide6.QtWidgets import QLabel, QScrollArea, QVBoxLayout, QWidget
 
 from app.theme import Theme, text_font
 
@@ -33,3 +34,19 @@ def heading(text: str, parent: QWidget | None = None) -> QLabel:
     label = QLabel(text, parent)
     label.setObjectName("heading")
     return label
+
+
+def scrolled_column(panel: QWidget) -> QVBoxLayout:
+    """A column that fills the panel and scrolls upwards and down where it is too long for it."""
+    inside, scroll = QWidget(), QScrollArea()
+    column = QVBoxLayout(inside)
+    column.setContentsMargins(EDGE, EDGE, EDGE, EDGE)
+    column.setSpacing(GAP)
+    scroll.setWidget(inside)
+    scroll.setWidgetResizable(True)
+    scroll.setHorizontalScrollBarPolicy(Qt.ScrollBarPolicy.ScrollBarAlwaysOff)
+    scroll.setFocusPolicy(Qt.FocusPolicy.NoFocus)
+    whole = QVBoxLayout(panel)
+    whole.setContentsMargins(0, 0, 0, 0)
+    whole.addWidget(scroll)
+    return column

@@ -3,12 +3,11 @@
 from dataclasses import replace
 from typing import Any
 
-from PySide6.QtCore import Qt
-from PySide6.QtWidgets import QScrollArea, QVBoxLayout, QWidget
+from PySide6.QtWidgets import QVBoxLayout, QWidget
 
 from app.document import Document, Scene
 from app.error_messages import guarded
-from app.panels.dress import EDGE, GAP, heading, panel_style
+from app.panels.dress import EDGE, heading, panel_style, scrolled_column
 from app.panels.editors import ChoiceField
 from app.panels.record_form import Home, RecordForm
 from app.panels.steel_picker import SteelPicker
@@ -52,23 +51,12 @@ class Givens(QWidget):
         self.units.committed.connect(document.set_system)
         self.steel = SteelPicker(document)
         self.forms: dict[str, RecordForm] = {}
-        inside = QWidget()
-        column = QVBoxLayout(inside)
-        column.setContentsMargins(EDGE, EDGE, EDGE, EDGE)
-        column.setSpacing(GAP)
+        column = scrolled_column(self)
         column.addWidget(heading(UNITS.label))
         column.addWidget(self.units)
         for name, record in given_parts().items():
             self._add(column, theme, name, record)
         column.addStretch(1)
-        scroll = QScrollArea()
-        scroll.setWidget(inside)
-        scroll.setWidgetResizable(True)
-        scroll.setHorizontalScrollBarPolicy(Qt.ScrollBarPolicy.ScrollBarAlwaysOff)
-        scroll.setFocusPolicy(Qt.FocusPolicy.NoFocus)
-        whole = QVBoxLayout(self)
-        whole.setContentsMargins(0, 0, 0, 0)
-        whole.addWidget(scroll)
         self.set_theme(theme)
         document.shown.connect(self._shown)
         self._shown(document.scene)

@@ -124,14 +124,10 @@ class LedgerModel(QAbstractTableModel):
         self._values = [column.values(results) for column in self.columns]
         judged = results.judged
         self._fails = ((judged.margin < 0) | (judged.yield_margin < 0)).tolist()
-        said: list[list[str]] = [[] for _ in results.stations]
-        for notice in results.notices:
-            if notice.station is not None:
-                said[notice.station].append(notice.words.written(self._scene.system))
-        governing = results.governing
+        governing, system = results.governing, self._scene.system
         self.marks = [
-            Mark(fails, i == governing, tuple(texts))
-            for i, (fails, texts) in enumerate(zip(self._fails, said, strict=True))
+            Mark(fails, i == governing, tuple(notice.words.written(system) for notice in said))
+            for i, (fails, said) in enumerate(zip(self._fails, results.notices_by_station(), strict=True))
         ]
 
     def _sorted(self) -> list[int]:

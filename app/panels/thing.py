@@ -3,12 +3,11 @@
 from collections.abc import Callable
 from typing import Any
 
-from PySide6.QtCore import Qt
-from PySide6.QtWidgets import QScrollArea, QStackedWidget, QVBoxLayout, QWidget
+from PySide6.QtWidgets import QStackedWidget, QWidget
 
 from app.document import Document, Scene, Selection
 from app.error_messages import guarded
-from app.panels.dress import EDGE, GAP, heading, panel_style, quiet
+from app.panels.dress import heading, panel_style, quiet, scrolled_column
 from app.panels.record_form import Home, RecordForm
 from app.theme import Theme
 from shaftcore.declared import Part, declared
@@ -58,21 +57,10 @@ class ThingPanel(QWidget):
         self.title = heading("")
         self.nothing = quiet(NOTHING_CHOSEN)
         self._stack = QStackedWidget()
-        inside = QWidget()
-        column = QVBoxLayout(inside)
-        column.setContentsMargins(EDGE, EDGE, EDGE, EDGE)
-        column.setSpacing(GAP)
+        column = scrolled_column(self)
         for part in (self.title, self.nothing, self._stack):
             column.addWidget(part)
         column.addStretch(1)
-        scroll = QScrollArea()
-        scroll.setWidget(inside)
-        scroll.setWidgetResizable(True)
-        scroll.setHorizontalScrollBarPolicy(Qt.ScrollBarPolicy.ScrollBarAlwaysOff)
-        scroll.setFocusPolicy(Qt.FocusPolicy.NoFocus)
-        whole = QVBoxLayout(self)
-        whole.setContentsMargins(0, 0, 0, 0)
-        whole.addWidget(scroll)
         self.set_theme(theme)
         document.shown.connect(self._shown)
         self._shown(document.scene)

@@ -1,6 +1,5 @@
 """The workings of a station as rows of text: what stands on each line of the panel."""
 
-import math
 from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
 from typing import Literal
@@ -9,7 +8,7 @@ from shaftcore.calculation_lines import written
 from shaftcore.number_text import with_unit
 from shaftcore.results import Results
 from shaftcore.sources import SOURCES
-from shaftcore.units import System, dimension, readable_units
+from shaftcore.units import System
 from shaftcore.workings import Chapter, Line
 
 Sort = Literal["title", "quiet", "head", "name", "formula", "value", "flag"]
@@ -42,7 +41,8 @@ def rows_of(results: Results, station: int, chapters: Sequence[Chapter], system:
 
 def _line_rows(line: Line, system: System) -> Iterator[Row]:
     source = SOURCES[line.source].short if line.source in SOURCES else line.source
-    strong, also = _result(line, system)
+    strong, also = line.result, line.restated(system)
+    also = f"   {also}" if also else ""
     if line.numbers.strip("()") == written(line.value).strip("()"):
         # nothing was put in: one row says it all
         yield Row("name", f"{line.label} = ", line.symbol, strong, f"{also}   {line.formula} ·\u00a0{source}")
@@ -53,15 +53,3 @@ def _line_rows(line: Line, system: System) -> Iterator[Row]:
         yield Row("value", "= ", "", strong, also)
     if line.flag:
         yield Row("flag", line.flag[0].upper() + line.flag[1:])
-
-
-def _result(line: Line, system: System) -> tuple[str, str]:
-    """The result as the numbers give it, and behind it the same in the unit the user reads."""
-    number = written(line.value) if line.value >= 0 else "−" + written(-line.value)
-    if not line.dimension or not math.isfinite(line.value):
-        return number, ""
-    unit = dimension(line.dimension).unit(system)
-    symbol = next((u.symbol for u in readable_units(line.dimension) if u.factor == 1 and not u.zero), "")
-    same = unit.symbol == symbol or (unit.factor == 1 and not unit.zero)
-    strong = f"{number}\u00a0{symbol}" if symbol else number
-    return strong, "" if same else f"   {with_unit(line.value, line.dimension, system)}"

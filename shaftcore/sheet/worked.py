@@ -3,15 +3,12 @@
 from reportlab.lib.colors import HexColor
 from reportlab.platypus import Flowable, Table
 
-from shaftcore.calculation_lines import written
-from shaftcore.number_text import with_unit
 from shaftcore.sheet.edition import Edition
 from shaftcore.sheet.lettering import para, safe, typeset
 from shaftcore.sheet.pages import UPRIGHT, Heading, papers, section
 from shaftcore.sheet.palette import FAINT, INK, RULE
 from shaftcore.sheet.tables import PAD, plain_table
 from shaftcore.sources import SOURCES
-from shaftcore.units import dimension, readable_units
 from shaftcore.workings import Chapter, Line, workings_of
 
 SHARES = (0.24, 0.43, 0.2, 0.13)
@@ -71,11 +68,5 @@ def _row(edition: Edition, line: Line) -> list[list[Flowable]]:
 
 def _result(edition: Edition, line: Line) -> list[tuple[str, str]]:
     """The result as calculated and, where the reader's unit is another, in that one."""
-    value = written(line.value).strip("()")
-    if not line.dimension:
-        return [(value, "cell")]
-    inside = next((u.symbol for u in readable_units(line.dimension) if u.factor == 1 and u.zero == 0), "")
-    found = [(f"{value}\u00a0{inside}".rstrip("\u00a0"), "cell")]
-    if dimension(line.dimension).unit(edition.system).symbol != inside:
-        found.append((with_unit(line.value, line.dimension, edition.system), "cell_faint"))
-    return found
+    also = line.restated(edition.system)
+    return [(typeset(line.result), "cell"), *([(safe(also), "cell_faint")] if also else [])]

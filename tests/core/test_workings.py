@@ -190,3 +190,21 @@ def test_signs_read_well() -> None:
 def test_a_line_without_a_finite_value_is_refused() -> None:
     with pytest.raises(ValueError, match="no finite value"):
         line("n", "factor", "1/0", "1/0", math.inf, "", "practice")
+
+
+@pytest.mark.parametrize(
+    ("value", "dimension", "result", "restated"),
+    [
+        (-2.5e5, "torque", "−250000\u00a0N·mm", "−250.0\u00a0N·m"),
+        (-2e20, "stress", "−2 × 10^20\u00a0MPa", ""),
+        (0.125, "share", "0.125", "12.500\u00a0%"),
+        (1.5, "ratio", "1.5", ""),
+    ],
+)
+def test_a_result_stands_in_the_unit_it_was_worked_in_and_in_the_readers(
+    value: float, dimension: str, result: str, restated: str
+) -> None:
+    entry = line("y", "value", "x", "{x}", value, dimension, "practice", x=value)
+    assert entry.result == result
+    assert entry.restated("SI") == restated
+    assert line("l", "length", "l", "{x}", 25.4, "length", "practice", x=25.4).restated("US") == "1.0000\u00a0in"
