@@ -48,24 +48,17 @@ def draw_edges(painter: QPainter, stage: Stage) -> None:
 def _visible_edges(stage: Stage) -> list[QLineF]:
     """Vertical edges: the larger side of each step, both rims of each raiser that lies on a diameter."""
     frame, profile = stage.frame, stage.plan.profile
-    at = [
-        (float(x), max(a, b) / 2)
-        for x, a, b in zip(profile.faces[1:-1], profile.right[:-1], profile.left[1:], strict=True)
-        if a != b
-    ]
-    for seating in stage.plan.seated:
-        if seating.kind.goes == "on a diameter":
-            at += [(x, stage.plan.radius_at(x)) for x in seating.site.span]
-    hollow = [(profile.faces[first], profile.faces[last + 1]) for first, last in _hollow_runs(stage)]
-    return [
-        QLineF(
-            frame.x(x),
-            frame.y(radius),
-            frame.x(x),
-            frame.axis if any(begin <= x <= end for begin, end in hollow) else frame.y(-radius),
-        )
-        for x, radius in at
-    ]
+    larger, steps = np.maximum(profile.right[:-1], profile.left[1:]) / 2, profile.right[:-1] != profile.left[1:]
+    on_diameter = (seating for seating in stage.plan.seated if seating.kind.goes == "on a diameter")
+    rims = np.array([x for seating in on_diameter for x in seating.site.span])
+    places = np.concatenate([profile.faces[1:-1][steps], rims])
+    radii = np.concatenate([larger[steps], stage.plan.radii_at(rims)]) * frame.scale
+    laid_open = np.zeros(len(places), dtype=bool)
+    for first, last in _hollow_runs(stage):
+        laid_open |= (places >= profile.faces[first]) & (places <= profile.faces[last + 1])
+    lower = np.where(laid_open, frame.axis, frame.axis + radii)
+    rows = zip((frame.origin + places * frame.scale).tolist(), radii.tolist(), lower.tolist(), strict=True)
+    return [QLineF(x, frame.axis - radius, x, low) for x, radius, low in rows]
 
 
 def _seating_faces(stage: Stage) -> list[QLineF]:

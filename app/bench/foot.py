@@ -119,12 +119,13 @@ def _draw_stations(painter: QPainter, stage: Stage, letters: Type, numbers: tupl
     painter.setRenderHint(QPainter.RenderHint.Antialiasing, False)
     painter.setPen(hairline(stage.theme.faint))
     painter.drawLines([QLineF(number.x, y + 3, number.x, y + 7) for number in numbers])
-    for stressed in (False, True):
-        painter.setFont(letters.font(stressed))
+    for colour in dict.fromkeys((None, *(number.stressed for number in numbers))):
+        bold = colour is not None
+        painter.setFont(letters.font(bold))
+        painter.setPen(hairline(colour or stage.theme.faint))
         for number in numbers:
-            if (number.stressed is not None) is stressed:
-                painter.setPen(hairline(number.stressed or stage.theme.faint))
-                painter.drawText(QPointF(number.x - letters.width(number.text, stressed) / 2, y), number.text)
+            if number.stressed == colour:
+                painter.drawText(QPointF(number.x - letters.width(number.text, bold) / 2, y), number.text)
     _draw_head(painter, stage, letters, "station", STATION_LINE)
 
 

@@ -45,6 +45,17 @@ class Plan:
         sides = bisect_left(self.faces, x) - 1, bisect_right(self.faces, x) - 1
         return max(self._radius_within(min(max(i, 0), last), x) for i in sides)
 
+    def radii_at(self, x: Array) -> Array:
+        """`radius_at` of many places (n,) at once."""
+        profile, last = self.profile, len(self.shaft.segments) - 1
+        sides = []
+        for side in ("left", "right"):
+            i = np.clip(np.searchsorted(profile.faces, x, side) - 1, 0, last)
+            share = np.clip((x - profile.faces[i]) / np.diff(profile.faces)[i], 0.0, 1.0)
+            sides.append(profile.left[i] + share * (profile.right[i] - profile.left[i]))
+        radii: Array = np.maximum(*sides) / 2
+        return radii
+
     def _radius_within(self, index: int, x: float) -> float:
         segment = self.shaft.segments[index]
         share = min(max((x - self.faces[index]) / segment.length, 0.0), 1.0)

@@ -80,6 +80,7 @@ class BenchView(QWidget):
         self._drawing: Drawing | None = None
         self._outdated = True
         self._standings: Kept = {}
+        self._painted: Drawing | None = None
         self._over: tuple[Drawing, QPixmap] | None = None
         self._picture: tuple[Drawing, QPixmap] | None = None
         self.setMinimumHeight(LEAST_HEIGHT)
@@ -201,6 +202,39 @@ class BenchView(QWidget):
         self._drawing, self._outdated = drawing, False
         return drawing
 
+    def _paint_drawing(self, painter: QPainter, drawing: Drawing) -> None:
+        """A picture whose marks move at every step is painted straight away, any other from what is kept."""
+        before, self._painted = self._painted, drawing
+        if drawing.stage.scene.live and not (before is not None and drawing.same_over(before)):
+            painter.fillRect(self.rect(), QColor(self.theme.paper))
+            drawing.paint_shaft(painter)
+            drawing.paint_over(painter)
+        else:
+            painter.drawPixmap(0, 0, self._picture_of(drawing))
+        drawing.paint_words(painter)
+
+    def _picture_of(self, drawing: Drawing) -> QPixmap:
+        """The picture without the chosen raiser's words, kept; only columns that changed are painted anew."""
+        before = self._picture
+        if before is not None and before[0] is drawing:
+            return before[1]
+        columns = changed_columns(drawing, before[0]) if before is not None else None
+        if before is None or columns is None:
+            picture = self._sheet(drawing)
+            with QPainter(picture) as painter:
+                painter.fillRect(self.rect(), QColor(self.theme.paper))
+                drawing.paint_shaft(painter)
+                drawing.paint_over(painter)
+        else:
+            picture = before[1]
+            with QPainter(picture) as painter:
+                painter.setClipRect(columns[0], 0, columns[1] - columns[0], self.height())
+                painter.fillRect(self.rect(), QColor(self.theme.paper))
+                drawing.paint_shaft(painter)
+                painter.drawPixmap(0, 0, self._over_of(drawing))
+        self._picture = drawing, picture
+        return picture
+
     def _over_of(self, drawing: Drawing) -> QPixmap:
         """Marks and foot on clear ground, kept while they stay the same: they cost more than the shaft."""
         if self._over is None or not drawing.same_over(self._over[0]):
@@ -210,23 +244,6 @@ class BenchView(QWidget):
                 drawing.paint_over(painter)
             self._over = drawing, over
         return self._over[1]
-
-    def _picture_of(self, drawing: Drawing) -> QPixmap:
-        """The picture without the chosen raiser's words, kept; only columns that changed are painted anew."""
-        before, columns = self._picture, None
-        if before is not None and before[0] is drawing:
-            return before[1]
-        if before is not None:
-            columns = changed_columns(drawing, before[0])
-        picture = self._sheet(drawing) if before is None or columns is None else before[1]
-        begin, end = columns or (0, self.width())
-        with QPainter(picture) as painter:
-            painter.setClipRect(begin, 0, end - begin, self.height())
-            painter.fillRect(self.rect(), QColor(self.theme.paper))
-            drawing.paint_shaft(painter)
-            painter.drawPixmap(0, 0, self._over_of(drawing))
-        self._picture = drawing, picture
-        return picture
 
     def _sheet(self, drawing: Drawing) -> QPixmap:
         ratio = drawing.stage.pixel_ratio
@@ -250,9 +267,7 @@ class BenchView(QWidget):
     def paintEvent(self, event: QPaintEvent) -> None:  # noqa: N802 (Qt's name)
         # nothing may be left painting when something goes wrong: Qt would end the process
         with QPainter(self) as painter:
-            drawing = self._laid_out()
-            painter.drawPixmap(0, 0, self._picture_of(drawing))
-            drawing.paint_words(painter)
+            self._paint_drawing(painter, self._laid_out())
             self._paint_pointer(painter)
             if self.hand is not None:
                 self.hand.overlay(painter)

@@ -78,6 +78,12 @@ def test_places_go_to_the_screen_and_back(bench: BenchView) -> None:
     assert other.x() - one.x() == pytest.approx(one.y() - other.y()), "one scale along and across"
 
 
+def test_radii_of_many_places_are_those_of_each() -> None:
+    plan = Plan(stepped())
+    places = np.concatenate([np.linspace(-5.0, 345.0, 141), plan.faces])
+    assert plan.radii_at(places).tolist() == pytest.approx([plan.radius_at(float(x)) for x in places])
+
+
 def test_zoom_keeps_the_place_under_the_pointer(bench: BenchView) -> None:
     bench.document.load(stepped(), None)
     pos = QPointF(300.0, 90.0)
