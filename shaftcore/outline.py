@@ -1,5 +1,7 @@
 """The shaft's outline as points, for everything that draws it."""
 
+import math
+from dataclasses import replace
 from functools import lru_cache
 from itertools import pairwise
 from typing import Any
@@ -11,6 +13,9 @@ from shaftcore.notch_sites import Seating, seatings
 from shaftcore.notches._contract import Around, Array
 from shaftcore.notches.kinds import KINDS
 from shaftcore.shaft import Shaft
+
+RING_SHOWN = 12.0
+"""How much of a ring is drawn along its seat and its face, in corner dimensions."""
 
 
 def upper_outline(shaft: Shaft, seated: tuple[Seating, ...] | None = None) -> Array:
@@ -34,6 +39,40 @@ def bore_outline(shaft: Shaft) -> Array:
     faces = faces_of(shaft)
     rows = [(x, segment.bore / 2) for segment, ends in zip(shaft.segments, pairwise(faces), strict=True) for x in ends]
     return np.array(rows, dtype=float).reshape(-1, 2)
+
+
+def outline_with(seating: Seating, name: str, value: float) -> Array:
+    """Points (n, 2) of a raiser's outline, mm, with another value for one of its sizes."""
+    return seating.kind.outline(replace(seating.record, **{name: value}), seating.around)
+
+
+def outline_between(shaft: Shaft, seating: Seating) -> Array:
+    """A raiser's outline, mm, with the plain edge left and right of it to the ends of its segments."""
+    faces, segments, around = faces_of(shaft), shaft.segments, seating.around
+    if seating.kind.goes == "at a step":
+        first = next(index for index, segment in enumerate(segments) if segment.id == seating.place)
+        last = first + 1
+    else:
+        first = last = seating.segment
+    begin = (faces[first], segments[first].diameter / 2)
+    end = (faces[last + 1], segments[last].right_diameter / 2)
+    return np.vstack([[begin], _piece(seating.kind.key, seating.record, around), [end]])
+
+
+def ring_corner(seating: Seating) -> Array | None:
+    """The corner (n, 2) mm of the ring that seats against a step; None where none is declared.
+
+    The arc that no ring's corner may project beyond has its corner dimension as radius (ISO 582).
+    From a place on the seat round the arc to a place on the face, both some radii away.
+    """
+    corner, around = getattr(seating.record, "bearing_corner", None), seating.around
+    if not corner:
+        return None
+    along = -1.0 if around.left_diameter <= around.right_diameter else 1.0
+    seat, turn = min(around.left_diameter, around.right_diameter) / 2, np.linspace(0.0, math.pi / 2, 13)
+    arc = np.column_stack([around.x + along * corner * (1 - np.sin(turn)), seat + corner * (1 - np.cos(turn))])
+    far = RING_SHOWN * corner
+    return np.vstack([[(around.x + along * far, seat)], arc, [(around.x, seat + far)]])
 
 
 def _corners(shaft: Shaft) -> list[tuple[float, Array]]:

@@ -8,12 +8,12 @@ from PySide6.QtGui import QDropEvent, QMouseEvent, QPainter
 
 from app.bench.gesture import Gesture, Holder, is_free
 from app.bench.hits import Grip
-from app.bench.overlay import draw_band, window_band
+from app.bench.lens_at import lens_on
+from app.bench.overlay import draw_band, window_band, window_of
 from app.bench.readout import drag_lines
-from app.bench.sizes import Size, at_step, size_of
+from app.bench.sizes import Size, size_of
 from shaftcore import edits
 from shaftcore.geometry import faces_of
-from shaftcore.radius_window import RadiusWindow, radius_window
 from shaftcore.shaft import Shaft
 from shaftcore.soundness import nearest_sound
 from shaftcore.typed_numbers import parse
@@ -38,8 +38,9 @@ class Drag(Gesture):
         self.value = size.value
         self._press, self._scale = press, self.view.ruler.scale
         self._limits: dict[bool, float] = {}
-        self.window = self._window()
+        self.window = window_of(self.document.scene.results, size)
         self._band = None if self.window is None else window_band(self.base, size, self.window)
+        self.lens = lens_on(self.view, self.document.scene, size, hand.grips, self.window, over_others=True)
 
     def move(self, event: QMouseEvent | QDropEvent) -> None:
         if self.hand.typed or self.size.value is None:
@@ -84,7 +85,11 @@ class Drag(Gesture):
         if window is not None and self._band is not None:
             draw_band(painter, self.view.frame, self._band, window.empty, self.view.theme)
         lines = drag_lines(scene, self.size, self.value, self.hand.typed, window)
-        self.hand.read_out(painter, lines, clear=None if self.grip.is_line else QPointF(self.grip.x, self.grip.y))
+        lens = self.lens
+        clear = None if self.grip.is_line else QPointF(self.grip.x, self.grip.y)
+        box = self.hand.read_out(painter, lines, None, clear, lens.room if lens else None)
+        if lens is not None and self.value is not None and not box.intersects(lens.room):
+            lens.paint(painter, self.value, self.view.theme, scene.system)
 
     def _at(self, pos: QPointF) -> float:
         """The size for a pointer at `pos`."""
@@ -107,13 +112,6 @@ class Drag(Gesture):
         if self.grip.law == "ratio":
             return abs(value) * TELLABLE / E_FOLD
         return self.grip.gain * TELLABLE / self._scale
-
-    def _window(self) -> RadiusWindow | None:
-        """The radius window of a fillet; it does not hang on the radius, so once for a drag will do."""
-        results = self.document.scene.results
-        if results is None or not at_step(self.size.chosen) or self.size.sort != "radius":
-            return None
-        return radius_window(results, self.size.chosen[1])
 
 
 def size_under(shaft: Shaft, grip: Grip) -> Size | None:

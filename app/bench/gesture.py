@@ -3,7 +3,7 @@
 from collections.abc import Callable
 from typing import Protocol
 
-from PySide6.QtCore import QPointF, Qt
+from PySide6.QtCore import QPointF, QRectF, Qt
 from PySide6.QtGui import QDropEvent, QMouseEvent, QPainter
 
 from app.bench.hits import Grip
@@ -43,8 +43,13 @@ class Holder(Protocol):
     def open_field(self, size: Size, at: QPointF, typed: str = "") -> None: ...
 
     def read_out(
-        self, painter: QPainter, lines: Lines, at: QPointF | None = None, clear: QPointF | None = None
-    ) -> None: ...
+        self,
+        painter: QPainter,
+        lines: Lines,
+        at: QPointF | None = None,
+        clear: QPointF | None = None,
+        taken: QRectF | None = None,
+    ) -> QRectF: ...
 
     def end(self) -> None: ...
 

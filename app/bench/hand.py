@@ -23,6 +23,7 @@ from app.bench.drags import Drag, size_under
 from app.bench.gesture import Gesture, has_shift, is_far
 from app.bench.hits import Grip, grips_of, pick, thing_at
 from app.bench.keys import Keys
+from app.bench.lens_at import LensAtRest
 from app.bench.number_field import NumberField
 from app.bench.overlay import GripStamps
 from app.bench.placing import Placing
@@ -56,7 +57,7 @@ class BenchHand(QObject):
         self._pointer = QPointF()
         self._hovered: Grip | None = None
         self._grips: tuple[Grip, ...] | None = None
-        self._stamps = GripStamps()
+        self._stamps, self.lens_at_rest = GripStamps(), LensAtRest(view)
         self._attempting = False
         document.shown.connect(self._shown)
         document.refused.connect(self._refused)
@@ -305,14 +306,29 @@ class BenchHand(QObject):
             self.gesture.paint(painter)
         elif not self.document.scene.live:
             self._stamps.draw(painter, self.grips, self._hovered, self.view.theme)
-            self.keys.paint(painter)
+            self._paint_at_rest(painter)
+
+    def _paint_at_rest(self, painter: QPainter) -> None:
+        """What the keys do beside its place, and the chosen raiser enlarged where there is room."""
+        scene, field = self.document.scene, self._field
+        self.lens_at_rest.seek(scene, self.keys.size, self.grips, field, self.keys.in_use)
+        lens = self.lens_at_rest.lens
+        box = self.keys.paint(painter, lens.room if lens else None)
+        if lens is not None and not box.intersects(lens.room):
+            self.lens_at_rest.paint(painter, scene, field)
 
     def read_out(
-        self, painter: QPainter, lines: Lines, at: QPointF | None = None, clear: QPointF | None = None
-    ) -> None:
-        """Lines beside the pointer or a place, and why a size was refused; `clear` is left open to sight."""
+        self,
+        painter: QPainter,
+        lines: Lines,
+        at: QPointF | None = None,
+        clear: QPointF | None = None,
+        taken: QRectF | None = None,
+    ) -> QRectF:
+        """Lines beside the pointer or a place, and why a size was refused; `clear` and `taken` are left open."""
         lines = [*lines, *([("refusal", self.refusal)] if self.refusal else [])]
-        draw_readout(painter, lines, at or self._pointer, QRectF(self.view.rect()), self.view.theme, clear)
+        room = QRectF(self.view.rect())
+        return draw_readout(painter, lines, at or self._pointer, room, self.view.theme, clear, taken)
 
 
 def make_hand(view: BenchView, document: Document) -> BenchHand:

@@ -1,6 +1,6 @@
 """The same edits without a pointer: arrows choose and change, Enter and digits open a number."""
 
-from PySide6.QtCore import QPointF, Qt
+from PySide6.QtCore import QPointF, QRectF, Qt
 from PySide6.QtGui import QKeyEvent, QPainter
 
 from app.bench.gesture import Holder
@@ -172,13 +172,13 @@ class Keys:
         x2, y2 = (grip.x, grip.y) if grip.x2 is None or grip.y2 is None else (grip.x2, grip.y2)
         return QPointF((grip.x + x2) / 2, (grip.y + y2) / 2)
 
-    def paint(self, painter: QPainter) -> None:
-        """While the keyboard is in use: the size in turn and what it does, beside its place."""
+    def paint(self, painter: QPainter, taken: QRectF | None) -> QRectF:
+        """While the keyboard is in use: the size in turn and what it does, beside its place; where it stands."""
         hand, size = self.hand, self.size
         if size is not None and self.in_use and hand.view.hasFocus():
-            hand.read_out(painter, drag_lines(hand.document.scene, size, size.value, "", None), self.anchor(size))
-        elif hand.refusal:
-            hand.read_out(painter, [])
+            lines = drag_lines(hand.document.scene, size, size.value, "", None)
+            return hand.read_out(painter, lines, self.anchor(size), taken=taken)
+        return hand.read_out(painter, [], taken=taken) if hand.refusal else QRectF()
 
 
 def _fine(event: QKeyEvent) -> bool:

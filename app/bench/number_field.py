@@ -9,6 +9,8 @@ from app.document import Document
 from app.error_messages import guarded
 from app.quantity_field import QuantityField
 from app.theme import Theme, text_font
+from shaftcore.errors import QuantityError
+from shaftcore.typed_numbers import parse
 
 EDGE, WIDTH = 6, 230
 
@@ -20,7 +22,7 @@ class NumberField(QFrame):
 
     def __init__(self, bench: QWidget, document: Document, size: Size, at: QPointF, theme: Theme, typed: str) -> None:
         super().__init__(bench)
-        self._document, self._size = document, size
+        self._document, self.shown_size = document, size
         self._refusal = ""
         self.field = QuantityField(size.declaration, self)
         self.field.set_theme(theme)
@@ -29,6 +31,7 @@ class NumberField(QFrame):
         self.field.setAccessibleName(f"{size.declaration.label} {size.place}")
         self.field.committed.connect(self._take)
         self.field.editingFinished.connect(self._finished)
+        self.field.textEdited.connect(self._typed)
         self._lay_out(theme)
         self.adjustSize()
         self._stand_at(at, bench)
@@ -42,7 +45,7 @@ class NumberField(QFrame):
         self.setAutoFillBackground(True)
         self.setObjectName("numberField")
         self.setStyleSheet(f"#numberField {{ background: {theme.raised}; border: 1px solid {theme.accent}; }}")
-        head = QLabel(f"{self._size.declaration.label} {self._size.place}")
+        head = QLabel(f"{self.shown_size.declaration.label} {self.shown_size.place}")
         head.setFont(text_font(9.0))
         head.setBuddy(self.field)
         grid = QGridLayout(self)
@@ -57,13 +60,28 @@ class NumberField(QFrame):
         y = min(max(at.y() - self.height() - 12, 2), max(bench.height() - self.height() - 2, 2))
         self.move(round(x), round(y))
 
+    @property
+    def typed(self) -> float | None:
+        """The number as it stands in the field, None where it is none."""
+        try:
+            return parse(self.field.text(), self.shown_size.declaration, self._document.scene.system)
+        except QuantityError:
+            return None
+
+    @guarded
+    def _typed(self, _: str) -> None:
+        """The bench shows what is being typed."""
+        parent = self.parentWidget()
+        if parent is not None:
+            parent.update()
+
     @guarded
     def _take(self, value: float | None) -> None:
         shaft, system = self._document.shaft, self._document.scene.system
         self._refusal = ""
         self._document.refused.connect(self._refused)
         try:
-            self._document.change(self._size.apply(shaft, value), self._size.step_words(value, system))
+            self._document.change(self.shown_size.apply(shaft, value), self.shown_size.step_words(value, system))
         finally:
             self._document.refused.disconnect(self._refused)
 

@@ -1,7 +1,5 @@
 """What the hand draws over the bench: grips, the radius window, and a thing about to be placed."""
 
-from dataclasses import replace
-
 import numpy as np
 from PySide6.QtCore import QPointF, Qt
 from PySide6.QtGui import QBrush, QColor, QPainter, QPen, QPixmap
@@ -9,11 +7,13 @@ from PySide6.QtGui import QBrush, QColor, QPainter, QPen, QPixmap
 from app.bench.frame import Frame
 from app.bench.hits import Grip
 from app.bench.polygons import hairline, polygon
-from app.bench.sizes import Size
+from app.bench.sizes import Size, at_step
 from app.theme import Theme, text_font
-from shaftcore.notch_sites import seatings
+from shaftcore.notch_sites import Seating, seatings
 from shaftcore.notches._contract import Array
-from shaftcore.radius_window import RadiusWindow
+from shaftcore.outline import outline_with
+from shaftcore.radius_window import RadiusWindow, radius_window
+from shaftcore.results import Results
 from shaftcore.shaft import Shaft
 
 GRIP_PX = 7.0
@@ -61,25 +61,36 @@ def _grip_pixmap(theme: Theme, ratio: float, hovered: bool) -> QPixmap:
     return made
 
 
+def seating_of(shaft: Shaft, size: Size) -> Seating | None:
+    """The raiser a size belongs to, as it sits on the shaft."""
+    return next((s for s in seatings(shaft) if (s.kind.key, s.place) == size.chosen), None)
+
+
+def window_of(results: Results | None, size: Size) -> RadiusWindow | None:
+    """The radius window of a fillet, None for any other size; it does not hang on the radius."""
+    if results is None or not at_step(size.chosen) or size.sort != "radius":
+        return None
+    return radius_window(results, size.chosen[1])
+
+
 def window_band(shaft: Shaft, size: Size, window: RadiusWindow) -> Array | None:
     """The ring (n, 2) in mm between the needed and the allowed outline; None where no radius is enough."""
-    seating = next((s for s in seatings(shaft) if (s.kind.key, s.place) == size.chosen), None)
+    seating = seating_of(shaft, size)
     if window.needed is None or seating is None:
         return None
-    edges = []
-    for radius in (window.needed, window.allowed):
-        record = replace(seating.record, **{size.name: max(radius, LEAST_RADIUS)})
-        edges.append(seating.kind.outline(record, seating.around))
+    edges = [outline_with(seating, size.name, max(r, LEAST_RADIUS)) for r in (window.needed, window.allowed)]
     return np.vstack([edges[0], edges[1][::-1]])
 
 
-def draw_band(painter: QPainter, frame: Frame, band: Array, empty: bool, theme: Theme) -> None:
+def draw_band(
+    painter: QPainter, frame: Frame, band: Array, empty: bool, theme: Theme, sides: tuple[bool, ...] = (False, True)
+) -> None:
     """The radius window, translucent, on both outlines; hatched where nothing lies between its ends."""
     colour = QColor(theme.caution if empty else theme.accent)
     painter.setPen(hairline(theme.caution if empty else theme.accent))
     colour.setAlpha(BAND_ALPHA)
     painter.setBrush(QBrush(colour, Qt.BrushStyle.BDiagPattern) if empty else QBrush(colour))
-    for mirrored in (False, True):
+    for mirrored in sides:
         painter.drawPolygon(polygon(frame.points(band, mirrored)))
     painter.setBrush(Qt.BrushStyle.NoBrush)
 

@@ -14,6 +14,7 @@ from shaftcore.nomenclature import BY_KEY
 from shaftcore.number_text import with_unit
 from shaftcore.radius_window import SMALLEST, RadiusWindow
 from shaftcore.results import Results
+from shaftcore.units import System
 
 Lines = list[tuple[str, str]]
 """(role, text): role is "size", "plain", "symbols" (set as in print) or "refusal"."""
@@ -66,15 +67,21 @@ def sketch_lines(scene: Scene, sketch: Sketch, typed: str) -> Lines:
 
 
 def draw_readout(
-    painter: QPainter, lines: Lines, pointer: QPointF, room: QRectF, theme: Theme, clear: QPointF | None = None
+    painter: QPainter,
+    lines: Lines,
+    pointer: QPointF,
+    room: QRectF,
+    theme: Theme,
+    clear: QPointF | None = None,
+    taken: QRectF | None = None,
 ) -> QRectF:
-    """Draw the lines in a quiet box beside the pointer and inside `room`, off `clear` where it can be."""
+    """Draw the lines in a quiet box beside the pointer and inside `room`, off `clear` and `taken` where it can be."""
     plain, strong = text_font(9.0), text_font(9.0, bold=True)
     height = QFontMetricsF(plain).height() + 2
-    lines = [(role, part) for role, text in lines for part in _wrapped(role, text, plain)]
+    lines = [(role, part) for role, text in lines for part in wrapped(role, text, plain)]
     wide = max(_width(role, text, strong if role == "size" else plain) for role, text in lines)
     size = QSizeF(wide + 2 * PADDING, len(lines) * height + 2 * PADDING)
-    box = _beside(pointer, size, room, clear)
+    box = _beside(pointer, size, room, clear, taken)
     painter.setPen(QPen(QColor(theme.rule)))
     painter.setBrush(QColor(theme.raised))
     painter.drawRect(box)
@@ -92,13 +99,14 @@ def draw_readout(
     return box
 
 
-def _beside(pointer: QPointF, size: QSizeF, room: QRectF, clear: QPointF | None) -> QRectF:
-    """A box below, above, right or left of the pointer that leaves `clear` open; below right if none does."""
+def _beside(pointer: QPointF, size: QSizeF, room: QRectF, clear: QPointF | None, other: QRectF | None) -> QRectF:
+    """A box below, above, right or left of the pointer that leaves both open; below right if none does."""
     right, below = pointer.x() + BESIDE, pointer.y() + BESIDE
     left, above = pointer.x() - BESIDE - size.width(), pointer.y() - BESIDE - size.height()
     corners = [QPointF(x, y) for x in (right, left) for y in (below, above)]
     boxes = [_kept_in(QRectF(corner, size), room) for corner in corners]
     taken = [QRectF(point - QPointF(CLEAR, CLEAR), QSizeF(2 * CLEAR, 2 * CLEAR)) for point in (clear, pointer) if point]
+    taken += [other] if other is not None else []
     return min(boxes, key=lambda box: sum(box.intersects(rect) for rect in taken))
 
 
@@ -126,30 +134,34 @@ def _station_rows(scene: Scene, results: Results, index: int) -> list[str]:
 
 
 def _window_words(scene: Scene, size: Size, window: RadiusWindow) -> str:
-    unit = size.declaration.dimension.unit(scene.system)
     allowed = f"{size.shown(window.allowed, scene.system)} allowed ({window.limited_by.written(scene.system)})"
     if window.needed is None:
         return f"no radius reaches the asked factors; {allowed}"
     if window.needed <= SMALLEST:
         return f"any radius reaches the asked factors; {allowed}"
-    # rounded up: the number shown must be one that lasts
-    needed = f"{math.ceil(unit.shown(window.needed) * 10**unit.decimals) / 10**unit.decimals:g} {unit.symbol}"
+    needed = needed_shown(size, window.needed, scene.system)
     head = "radius window is empty" if window.empty else "radius window"
     return f"{head}: {needed} needed, {allowed}"
+
+
+def needed_shown(size: Size, needed: float, system: System) -> str:
+    """The needed size rounded up: the number shown must be one that lasts."""
+    unit = size.declaration.dimension.unit(system)
+    return f"{math.ceil(unit.shown(needed) * 10**unit.decimals) / 10**unit.decimals:g} {unit.symbol}"
 
 
 def _width(role: str, text: str, font: QFont) -> float:
     return symbol_text.width(text, font) if role == "symbols" else QFontMetricsF(font).horizontalAdvance(text)
 
 
-def _wrapped(role: str, text: str, font: QFont) -> list[str]:
-    """The text in lines no wider than the readout may be."""
-    if _width(role, text, font) <= WIDEST:
+def wrapped(role: str, text: str, font: QFont, widest: float = WIDEST) -> list[str]:
+    """The text in lines no wider than they may be."""
+    if _width(role, text, font) <= widest:
         return [text]
     lines = [""]
     for word in text.split(" "):
         longer = f"{lines[-1]} {word}" if lines[-1] else word
-        if lines[-1] and _width(role, longer, font) > WIDEST:
+        if lines[-1] and _width(role, longer, font) > widest:
             lines.append(word)
         else:
             lines[-1] = longer

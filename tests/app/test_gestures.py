@@ -743,7 +743,7 @@ def test_the_readout_of_a_fillet_names_size_factors_worst_place_and_window(desk:
     assert window.needed <= shown < window.needed + 0.01
     assert "2 mm allowed (bearing corner" in lines[4]
     for needed, words in ((None, "no radius"), (SMALLEST, "any radius"), (3.001, "empty: 3.01 mm needed")):
-        other = RadiusWindow("s1", needed, 2.0, "bearing corner")
+        other = RadiusWindow("s1", needed, 2.0, window.limited_by)
         assert words in drag_lines(desk.document.scene, size, 0.6, "", other)[4][1]
     typed = drag_lines(desk.document.scene, size, 0.6, "1,", window)
     assert "1,▏" in typed[0][1]
