@@ -16,6 +16,7 @@ SHARES = np.array([0.5, 0.2, 0.8, 0.0, 1.0])
 """Where along its width a label may stand over its anchor."""
 Room = tuple[float, float, float, float]
 """Left, top, right, bottom."""
+FIRST_FEW = 16
 REACH = np.array([-GAP, 0.0, GAP, 0.0])
 
 
@@ -40,6 +41,7 @@ class Board:
     def __init__(self, width: float, top: float, bottom: float) -> None:
         self.width, self.top, self.bottom = width, top, bottom
         self._taken: list[Room] = []
+        self._taken_columns: Array | None = None
         self._labels: list[Room] = []
         self._left: dict[tuple[str, float, float, float, float], tuple[Array, Array]] = {}
 
@@ -47,6 +49,7 @@ class Board:
         """Room that is no label's."""
         self._taken.append((room.left(), room.top(), room.right(), room.bottom()))
         self._left.clear()
+        self._taken_columns = None
 
     def clear_labels(self) -> None:
         self._labels = []
@@ -54,10 +57,10 @@ class Board:
     def place(self, wanted: Wanted, row: float) -> QRectF | None:
         """The nearest free place, taken at once with its leader; None where there is none."""
         rooms, needed = self._choices_left(wanted, row)
-        free = np.flatnonzero(_clear(needed, self._labels))
-        if not len(free):
+        index = _first_clear(needed, _columns(self._labels))
+        if index is None:
             return None
-        left, top, right, bottom = rooms[free[0]].tolist()
+        left, top, right, bottom = rooms[index].tolist()
         found = QRectF(left, top, right - left, bottom - top)
         for taken in (found, *leader_rooms(found, wanted.anchor)):
             self._labels.append((taken.left(), taken.top(), taken.right(), taken.bottom()))
@@ -72,7 +75,9 @@ class Board:
             left, top, right, bottom = rooms.T
             rooms = rooms[(left >= EDGE) & (right <= self.width - EDGE) & (top >= self.top) & (bottom <= self.bottom)]
             needed = _needed(rooms, x, y)
-            free = _clear(needed, self._taken)
+            if self._taken_columns is None:
+                self._taken_columns = _columns(self._taken)
+            free = _clear(needed, _near(rooms, self._taken_columns))
             self._left[key] = rooms[free], needed[:, free]
         return self._left[key]
 
@@ -119,12 +124,32 @@ def leader_rooms(label: QRectF, anchor: QPointF) -> list[QRectF]:
     return []
 
 
-def _clear(needed: Array, taken: list[Room]) -> NDArray[np.bool_]:
-    """Which of n labels, with `needed` (4, n, 2), lie over nothing that is taken."""
-    if not (needed.size and taken):
+def _columns(rooms: list[Room]) -> Array:
+    """Rooms as (4, n)."""
+    return np.array(rooms).reshape(-1, 4).T.copy()
+
+
+def _first_clear(needed: Array, columns: Array) -> int | None:
+    """The first of n labels that is clear; the first few are looked at alone, as one of them mostly is."""
+    for begin, end in ((0, FIRST_FEW), (FIRST_FEW, needed.shape[1])):
+        clear = np.flatnonzero(_clear(needed[:, begin:end], columns))
+        if len(clear):
+            return begin + int(clear[0])
+    return None
+
+
+def _near(rooms: Array, columns: Array) -> Array:
+    """Of the rooms in `columns` (4, m) those above or below where any of `rooms` (n, 4) stands."""
+    if not len(rooms):
+        return columns
+    return columns[:, (columns[0] < rooms[:, 2].max() + GAP) & (columns[2] > rooms[:, 0].min() - GAP)]
+
+
+def _clear(needed: Array, columns: Array) -> NDArray[np.bool_]:
+    """Which of n labels, with `needed` (4, n, 2), lie over none of the rooms in `columns` (4, m)."""
+    if not (needed.size and columns.size):
         return np.ones(needed.shape[1], dtype=bool)
     left, top, right, bottom = needed[..., None]
-    columns = np.array(taken).T.copy()
     over = left < columns[2]
     over &= right > columns[0]
     over &= top < columns[3]

@@ -11,6 +11,7 @@ from PySide6.QtGui import QImage, QPainter, QWheelEvent
 from PySide6.QtWidgets import QApplication
 from pytestqt.qtbot import QtBot
 
+from app.bench.changes import changed_columns
 from app.bench.colour_scale import TABLE, TOP, colours_of
 from app.bench.drawing import Drawing
 from app.bench.foot import mark_step, shown_stations
@@ -235,6 +236,20 @@ def test_a_board_refuses_what_has_no_room() -> None:
     assert board.place(Wanted("b", 80, 14, QPointF(150, 40), True), 14) is None
 
 
+def test_a_board_cleared_of_labels_keeps_what_lies_on_it() -> None:
+    board = Board(300, 0, 200)
+    board.take(QRectF(0, 90, 300, 20))
+    wanted = Wanted("a", 80, 14, QPointF(150, 90), True)
+    first, second = board.place(wanted, 14), board.place(replace(wanted, key="b"), 14)
+    board.clear_labels()
+    again = board.place(replace(wanted, key="b"), 14)
+    assert first is not None
+    assert second is not None
+    assert again == first
+    assert not first.intersects(second)
+    assert first.bottom() <= 90
+
+
 def test_words_keep_their_place_during_a_gesture(bench: BenchView) -> None:
     bench.document.load(stepped(), None)
     still = Drawing(stage_of(bench), Type())
@@ -397,6 +412,30 @@ def test_what_is_shown_live_is_the_whole_picture(bench: BenchView, theme, chosen
     bench.grab()
     words = {callout.key: callout.lines for callout in bench._drawing.callouts}
     assert words == {callout.key: callout.lines for callout in Drawing(stage_of(bench), Type()).callouts}
+
+
+def test_a_pulled_fillet_is_painted_in_its_own_columns_only(bench: BenchView) -> None:
+    bench.document.load(stepped(), None)
+    bench.document.choose(("shoulder", "a"))
+    first, *others = stepped().segments
+    drawn = []
+    for radius in (1.0, 1.2, 1.4):
+        segments = (replace(first, shoulder=Shoulder(radius, bearing_corner=2.0)), *others)
+        assert bench.document.preview(replace(stepped(), segments=segments))
+        bench.grab()
+        drawn.append(bench._drawing)
+    one, other = drawn[-2:]
+    assert one is not None
+    assert other is not None
+    assert one.marks is other.marks
+    columns = changed_columns(other, one)
+    assert columns is not None
+    assert columns[0] < bench.to_screen(60.0, 0.0).x() < columns[1]
+    assert columns[1] - columns[0] < 60
+    bench.document.choose(("segment", "b"))
+    bench.grab()
+    assert bench._drawing is not None
+    assert changed_columns(bench._drawing, other) is None, "another choice changes the whole picture"
 
 
 def pixels(image: QImage) -> Array:
