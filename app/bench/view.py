@@ -14,16 +14,15 @@ from PySide6.QtGui import (
     QPainter,
     QPaintEvent,
     QPen,
-    QPixmap,
     QResizeEvent,
     QWheelEvent,
 )
 from PySide6.QtWidgets import QWidget
 
 from app.bench.callouts import Kept
-from app.bench.changes import changed_columns
 from app.bench.drawing import Drawing
 from app.bench.frame import Frame
+from app.bench.kept_picture import KeptPicture
 from app.bench.stage import FOOT, Plan, Stage, Type
 from app.bench.words import description
 from app.document import Document, Scene
@@ -80,9 +79,7 @@ class BenchView(QWidget):
         self._drawing: Drawing | None = None
         self._outdated = True
         self._standings: Kept = {}
-        self._painted: Drawing | None = None
-        self._over: tuple[Drawing, QPixmap] | None = None
-        self._picture: tuple[Drawing, QPixmap] | None = None
+        self._kept = KeptPicture()
         self.setMinimumHeight(LEAST_HEIGHT)
         self.setMouseTracking(True)
         self.setAcceptDrops(True)
@@ -202,55 +199,6 @@ class BenchView(QWidget):
         self._drawing, self._outdated = drawing, False
         return drawing
 
-    def _paint_drawing(self, painter: QPainter, drawing: Drawing) -> None:
-        """A picture whose marks move at every step is painted straight away, any other from what is kept."""
-        before, self._painted = self._painted, drawing
-        if drawing.stage.scene.live and not (before is not None and drawing.same_over(before)):
-            painter.fillRect(self.rect(), QColor(self.theme.paper))
-            drawing.paint_shaft(painter)
-            drawing.paint_over(painter)
-        else:
-            painter.drawPixmap(0, 0, self._picture_of(drawing))
-        drawing.paint_words(painter)
-
-    def _picture_of(self, drawing: Drawing) -> QPixmap:
-        """The picture without the chosen raiser's words, kept; only columns that changed are painted anew."""
-        before = self._picture
-        if before is not None and before[0] is drawing:
-            return before[1]
-        columns = changed_columns(drawing, before[0]) if before is not None else None
-        if before is None or columns is None:
-            picture = self._sheet(drawing)
-            with QPainter(picture) as painter:
-                painter.fillRect(self.rect(), QColor(self.theme.paper))
-                drawing.paint_shaft(painter)
-                drawing.paint_over(painter)
-        else:
-            picture = before[1]
-            with QPainter(picture) as painter:
-                painter.setClipRect(columns[0], 0, columns[1] - columns[0], self.height())
-                painter.fillRect(self.rect(), QColor(self.theme.paper))
-                drawing.paint_shaft(painter)
-                painter.drawPixmap(0, 0, self._over_of(drawing))
-        self._picture = drawing, picture
-        return picture
-
-    def _over_of(self, drawing: Drawing) -> QPixmap:
-        """Marks and foot on clear ground, kept while they stay the same: they cost more than the shaft."""
-        if self._over is None or not drawing.same_over(self._over[0]):
-            over = self._sheet(drawing)
-            over.fill(Qt.GlobalColor.transparent)
-            with QPainter(over) as painter:
-                drawing.paint_over(painter)
-            self._over = drawing, over
-        return self._over[1]
-
-    def _sheet(self, drawing: Drawing) -> QPixmap:
-        ratio = drawing.stage.pixel_ratio
-        sheet = QPixmap(self.size() * ratio)
-        sheet.setDevicePixelRatio(ratio)
-        return sheet
-
     def _paint_pointer(self, painter: QPainter) -> None:
         """A faint line through bench and traces; a gesture has the pointer for itself."""
         if self._hovered is not None and not self.document.scene.live:
@@ -267,7 +215,7 @@ class BenchView(QWidget):
     def paintEvent(self, event: QPaintEvent) -> None:  # noqa: N802 (Qt's name)
         # nothing may be left painting when something goes wrong: Qt would end the process
         with QPainter(self) as painter:
-            self._paint_drawing(painter, self._laid_out())
+            self._kept.paint(painter, self._laid_out())
             self._paint_pointer(painter)
             if self.hand is not None:
                 self.hand.overlay(painter)
