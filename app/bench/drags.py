@@ -2,6 +2,7 @@
 
 import math
 from dataclasses import replace
+from itertools import pairwise
 
 from PySide6.QtCore import QPointF
 from PySide6.QtGui import QDropEvent, QMouseEvent, QPainter
@@ -38,6 +39,7 @@ class Drag(Gesture):
         self.value = size.value
         self._press, self._scale = press, self.view.ruler.scale
         self._limits: dict[bool, float] = {}
+        self._least, self._most = self._pulled_between(whole)
         self.window = window_of(self.document.scene.results, size)
         self._band = None if self.window is None else window_band(self.base, size, self.window)
         self.lens = lens_on(self.view, self.document.scene, size, hand.grips, self.window, over_others=True)
@@ -45,9 +47,7 @@ class Drag(Gesture):
     def move(self, event: QMouseEvent | QDropEvent) -> None:
         if self.hand.typed or self.size.value is None:
             return
-        value = self.size.held(self._at(event.position()))
-        rest = self.size.freely if is_free(event) else self.size.rested
-        value = rest(value, self._resolution(value), self.document.scene.system)
+        value = self._rested(self.size.held(self._at(event.position())), is_free(event))
         self.hand.attempt(lambda: self.set(value) or self.set(self._limit(value)))
 
     def set(self, value: float) -> bool:
@@ -99,14 +99,37 @@ class Drag(Gesture):
             return start * math.exp(min(max(along / E_FOLD, -12.0), 12.0))
         return start + self.grip.gain * along / self._scale
 
+    def _pulled_between(self, whole: bool) -> tuple[float, float]:
+        """Nothing is pulled thinner than the hand can tell, nor a neighbour that gives way; numbers may be typed."""
+        tellable, now = self._resolution(self.size.value or 0.0), self.size.value or 0.0
+        if self.grip.law == "ratio" or self.size.declaration.low <= 0:
+            return -math.inf, math.inf
+        gives = next(
+            (after for before, after in pairwise(self.base.segments) if before.id == self.grip.chosen[1]), None
+        )
+        if not self.grip.face or whole or gives is None:
+            return min(now, tellable), math.inf
+        return min(now, tellable), now + gives.length - min(gives.length, tellable)
+
     def _limit(self, refused: float) -> float:
-        """Where the size must stop on its way to `refused`; sought once for each way it is pulled."""
+        """Where the size must stop on its way to `refused`; one that was found is kept while it lies on the way."""
         sound = self.value or 0.0
         up = refused > sound
-        if up not in self._limits:
-            unit = self.size.declaration.dimension.unit(self.document.scene.system).factor
-            self._limits[up] = nearest_sound(lambda value: self.size.apply(self.base, value), sound, refused, unit)
+        known = self._limits.get(up)
+        if known is not None and min(sound, refused) <= known <= max(sound, refused):
+            return known
+        unit = self.size.declaration.dimension.unit(self.document.scene.system).factor
+        self._limits[up] = nearest_sound(lambda value: self.size.apply(self.base, value), sound, refused, unit)
         return self._limits[up]
+
+    def _rested(self, value: float, free: bool) -> float:
+        """The value a pull comes to rest on."""
+        value, system = min(max(value, self._least), self._most), self.document.scene.system
+        free_value = self.size.freely(value, self._resolution(value), system)
+        if free:
+            return free_value
+        rest = self.size.rested(value, self._resolution(value), system)
+        return rest if self._least <= rest <= self._most else free_value
 
     def _resolution(self, value: float) -> float:
         if self.grip.law == "ratio":

@@ -10,7 +10,7 @@ from app.bench.drawing import Drawing
 from app.bench.stage import Stage
 from shaftcore.notches._contract import Array
 
-HEIGHTS = (168.0, 148.0, 128.0, 112.0, 98.0, 90.0, 84.0)
+HEIGHTS = (168.0, 148.0, 128.0, 112.0, 98.0, 90.0, 84.0, 72.0, 60.0)
 WIDE_OF_HIGH, WORDS = 1.3, 150.0
 """Width of the picture for its height, and of the words beside it."""
 EDGE, GAP, STRIDE = 8.0, 3.0, 8.0

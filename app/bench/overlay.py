@@ -8,7 +8,7 @@ from app.bench.frame import Frame
 from app.bench.hits import Grip
 from app.bench.polygons import hairline, polygon
 from app.bench.sizes import Size, at_step
-from app.theme import Theme, text_font
+from app.theme import Theme
 from shaftcore.notch_sites import Seating, seatings
 from shaftcore.notches._contract import Array
 from shaftcore.outline import outline_with
@@ -95,13 +95,10 @@ def draw_band(
     painter.setBrush(Qt.BrushStyle.NoBrush)
 
 
-def draw_ghost(painter: QPainter, frame: Frame, x: float, words: str, theme: Theme) -> None:
-    """A thing about to be placed: a fine line across the shaft with its name and place."""
+def draw_ghost(painter: QPainter, frame: Frame, x: float, theme: Theme) -> None:
+    """A thing about to be placed: a fine line across the shaft."""
     at = frame.x(x)
     pen = hairline(theme.accent)
     pen.setStyle(Qt.PenStyle.DashLine)
     painter.setPen(pen)
     painter.drawLine(QPointF(at, 8), QPointF(at, frame.height - 8))
-    painter.setPen(QColor(theme.accent))
-    painter.setFont(text_font(9.0, bold=True))
-    painter.drawText(QPointF(at + 6, 20), words)

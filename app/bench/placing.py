@@ -19,6 +19,9 @@ TELLABLE, PULL = 4.0, 8.0
 """Pixels the hand can tell apart, and within which a face or the middle of a segment draws things to it."""
 
 
+HINT = "click or Enter: put it here   Esc: put it back"
+
+
 class Placing(Gesture):
     """A tool in hand. `x` (mm) is where it would go, None while the pointer is elsewhere."""
 
@@ -74,13 +77,14 @@ class Placing(Gesture):
             hand.choose(chosen)
 
     def paint(self, painter: QPainter) -> None:
-        if self.x is not None:
-            unit = self._declaration.dimension.unit(self.document.scene.system)
-            number = self.hand.typed or f"{unit.shown(self.x):.6g}"
-            words = f"{self.tool.label} at {number} {unit.symbol}"
-            draw_ghost(painter, self.view.frame, self.x, words, self.view.theme)
-        if self.hand.refusal:
-            self.hand.read_out(painter, [])
+        if self.x is None:
+            self.hand.read_out(painter, [("size", self.tool.label), ("plain", HINT)])
+            return
+        frame, unit = self.view.frame, self._declaration.dimension.unit(self.document.scene.system)
+        number = f"{self.hand.typed}▏" if self.hand.typed else f"{unit.shown(self.x):.6g}"
+        words = f"{self.tool.label} at {number} {unit.symbol}"
+        draw_ghost(painter, frame, self.x, self.view.theme)
+        self.hand.read_out(painter, [("size", words), ("plain", HINT)], frame.to_screen(self.x, 0.0))
 
     def _point(self, event: QMouseEvent | QDropEvent) -> None:
         shaft = self.document.shaft

@@ -61,9 +61,14 @@ def sketch_lines(scene: Scene, sketch: Sketch, typed: str) -> Lines:
         value = sketch.sizes().get(name)
         text = f"{unit.shown(value):.6g}" if value is not None else "–"
         text = f"{typed}▏" if here and typed else text
-        fixed = "  typed" if name in sketch.fixed else ""
+        fixed = "  fixed" if name in sketch.fixed else ""
         lines.append(("size" if here else "plain", f"{declaration.label}  {text} {unit.symbol}{fixed}"))
-    return [*lines, ("plain", "Tab: the other   click or Enter: next step   Esc: done")]
+    other = sketch.declaration(FIELDS[1 - FIELDS.index(sketch.name)]).label.lower()
+    return [
+        *lines,
+        ("plain", f"a number fixes it   Tab: {other}"),
+        ("plain", "click or Enter: next step   Esc: done"),
+    ]
 
 
 def draw_readout(
@@ -101,13 +106,21 @@ def draw_readout(
 
 def _beside(pointer: QPointF, size: QSizeF, room: QRectF, clear: QPointF | None, other: QRectF | None) -> QRectF:
     """A box below, above, right or left of the pointer that leaves both open; below right if none does."""
-    right, below = pointer.x() + BESIDE, pointer.y() + BESIDE
-    left, above = pointer.x() - BESIDE - size.width(), pointer.y() - BESIDE - size.height()
-    corners = [QPointF(x, y) for x in (right, left) for y in (below, above)]
-    boxes = [_kept_in(QRectF(corner, size), room) for corner in corners]
-    taken = [QRectF(point - QPointF(CLEAR, CLEAR), QSizeF(2 * CLEAR, 2 * CLEAR)) for point in (clear, pointer) if point]
+    points = [point for point in (pointer, clear) if point is not None]
+    taken = [QRectF(point - QPointF(CLEAR, CLEAR), QSizeF(2 * CLEAR, 2 * CLEAR)) for point in points]
     taken += [other] if other is not None else []
+    boxes = [_kept_in(QRectF(corner, size), room) for corner in _corners(points, size)]
     return min(boxes, key=lambda box: sum(box.intersects(rect) for rect in taken))
+
+
+def _corners(points: list[QPointF], size: QSizeF) -> list[QPointF]:
+    """Upper left corners of boxes about the first point, then of such as stand off all of them."""
+    xs, ys = [point.x() for point in points], [point.y() for point in points]
+    found = []
+    for right, left, below, above in ((xs[0], xs[0], ys[0], ys[0]), (max(xs), min(xs), max(ys), min(ys))):
+        for x in (right + BESIDE, left - BESIDE - size.width()):
+            found += [QPointF(x, y) for y in (below + BESIDE, above - BESIDE - size.height())]
+    return found
 
 
 def _kept_in(box: QRectF, room: QRectF) -> QRectF:

@@ -1,6 +1,6 @@
 """The gesture of drawing a shaft: press on the axis, pull, click for the next step, Esc ends."""
 
-from PySide6.QtCore import QPointF
+from PySide6.QtCore import QPointF, QRectF
 from PySide6.QtGui import QDropEvent, QMouseEvent, QPainter
 
 from app.bench.gesture import Gesture, Holder, is_far, is_free
@@ -80,7 +80,15 @@ class Sketching(Gesture):
         self.view.fit()
 
     def paint(self, painter: QPainter) -> None:
-        self.hand.read_out(painter, sketch_lines(self.document.scene, self.sketch, self.hand.typed))
+        self.hand.read_out(painter, sketch_lines(self.document.scene, self.sketch, self.hand.typed), taken=self._step())
+
+    def _step(self) -> QRectF | None:
+        """Where the step being pulled stands on the screen, to keep the readout off it."""
+        if not self.sketch.has_step:
+            return None
+        sizes, begin = self.sketch.sizes(), self.sketch.begin
+        reach = sizes["diameter"] / 2
+        return QRectF(self.view.to_screen(begin, reach), self.view.to_screen(begin + sizes["length"], -reach))
 
     def _follow(self, event: QMouseEvent | QDropEvent) -> None:
         x, y = self.view.to_shaft(event.position())

@@ -317,29 +317,45 @@ def test_ctrl_leaves_preferred_radii_aside(desk: Desk) -> None:
     assert desk.radius(0) != free
 
 
-@pytest.mark.parametrize("way", [1.0, -1.0])
-def test_pulled_past_what_can_be_a_size_goes_to_its_limit_and_says_why(desk: Desk, way: float) -> None:
-    """The limit is where it can be and a thousandth further cannot, both seen by the whole analysis."""
-    start = desk.at("segment", "s1", "length")
+@pytest.mark.parametrize(("way", "limit"), [(1.0, 179.0), (-1.0, 61.0)])
+def test_pulled_past_what_can_be_a_thing_goes_to_its_limit_and_says_why(desk: Desk, way: float, limit: float) -> None:
+    """A groove 1 mm deep, r 1 mm, has its middle 1 mm or more from both ends of its segment, x 60 to 180 mm."""
+    desk.document.load(edits.add_raiser(loaded_shaft(), "groove", 100.0)[0], None)
+    start = desk.at("groove", "g1", "x")
     desk.pull(start, QPointF(20 * way, 0), let_go=False)
-    desk.move(start + QPointF(2000 * way, 0))
-    refusal, gesture = desk.hand.refusal, desk.hand.gesture
-    assert refusal
+    face = start + QPointF((limit + way - 100.0) * desk.ruler.scale, 0)
+    desk.move(face)
+    gesture = desk.hand.gesture
     assert isinstance(gesture, Drag)
-    assert gesture.value is not None
-    reached = gesture.value
-    assert desk.shaft.segments[0].length == reached
-    assert evaluate(desk.shaft)
+    assert gesture.value == pytest.approx(limit, abs=0.05)
+    assert 61.0 <= gesture.value <= 179.0
+    assert desk.hand.refusal
     with pytest.raises(UnsoundShaftError):
-        evaluate(gesture.size.apply(gesture.base, reached + 0.5 * way))
-    desk.move(start + QPointF(2100 * way, 0))
+        evaluate(gesture.size.apply(gesture.base, limit + 0.05 * way))
+    reached = gesture.value
+    desk.move(face + QPointF(0.5 * way, 0))
     assert gesture.value == reached
     assert desk.hand.refusal
-    desk.move(start + QPointF(30, 0))
+    desk.move(start + QPointF((120.0 - 59.0 * way - 100.0) * desk.ruler.scale, 0))
+    desk.move(start + QPointF((120.0 - 60.0 * way - 100.0) * desk.ruler.scale, 0))
+    assert gesture.value == pytest.approx(120.0 - 59.0 * way, abs=0.05)
+    beyond = face + QPointF(30 * way * desk.ruler.scale, 0)
+    desk.move(beyond)
     assert desk.hand.refusal == ""
-    desk.release(start + QPointF(30, 0))
+    desk.move(face)
+    assert gesture.value == pytest.approx(limit + 2 * way, abs=2.5)
+    desk.move(beyond)
+    desk.release(beyond)
     assert desk.document.undo_stack.count() == 1
     assert not desk.document.in_gesture
+
+
+@pytest.mark.parametrize("way", [1.0, -1.0])
+def test_no_segment_is_pulled_thinner_than_the_hand_can_tell(desk: Desk, way: float) -> None:
+    desk.pull(desk.at("segment", "s1", "length"), QPointF(2000 * way, 0))
+    thin = desk.shaft.segments[0 if way < 0 else 1]
+    assert thin.length == pytest.approx(4.0 / desk.ruler.scale, rel=0.2)
+    assert desk.shaft.length == loaded_shaft().length
 
 
 def test_a_fillet_jumps_to_the_radius_its_step_has_room_for(desk: Desk) -> None:
