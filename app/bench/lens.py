@@ -7,8 +7,19 @@ from PySide6.QtGui import QColor, QFontMetricsF, QPainter, QPen
 from app import symbol_text
 from app.bench.close_up import CloseUp, lens_frame
 from app.bench.frame import Frame
-from app.bench.lens_room import WORDS
-from app.bench.lens_words import ALLOWED, BEFORE, NEEDED, NOTE, NOW, RING, WITH_STROKE, Row, lens_rows, scale_words
+from app.bench.lens_words import (
+    ALLOWED,
+    BEFORE,
+    NEEDED,
+    NOTE,
+    NOW,
+    RING,
+    WITH_STROKE,
+    Row,
+    lens_rows,
+    scale_words,
+    words_width,
+)
 from app.bench.overlay import draw_band
 from app.bench.polygons import draw_weighted, hairline, polygon, stroke
 from app.theme import Theme, text_font
@@ -26,7 +37,7 @@ class Lens:
 
     def __init__(self, shown: CloseUp, room: QRectF, scale: float) -> None:
         self.room, self.shown = room, shown
-        self.picture = QRectF(room.left(), room.top(), room.width() - WORDS, room.height())
+        self.picture = QRectF(room.left(), room.top(), room.width() - words_width(shown), room.height())
         self._scale = scale
         self._found: tuple[Frame, float] | None = None
         self._font = text_font(POINTS)

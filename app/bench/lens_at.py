@@ -11,6 +11,7 @@ from app.bench.drawing import Drawing
 from app.bench.hits import Grip
 from app.bench.lens import Lens
 from app.bench.lens_room import lens_room, taken_of
+from app.bench.lens_words import words_width
 from app.bench.number_field import NumberField
 from app.bench.overlay import window_of
 from app.bench.sizes import Size, sizes_of
@@ -40,7 +41,7 @@ def lens_on(
     own = [QPointF(grip.x, grip.y) for grip in grips if grip.chosen == size.chosen and not grip.is_line]
     taken = taken_of(stage, Drawing(stage, Type()), own)
     taken.held.extend(held)
-    room = lens_room(stage, taken, own[0].x(), over_others)
+    room = lens_room(stage, taken, own[0].x(), words_width(shown), over_others)
     if room is None:
         return None
     lens = Lens(shown, room, stage.frame.scale)

@@ -11,8 +11,8 @@ from app.bench.stage import Stage
 from shaftcore.notches._contract import Array
 
 HEIGHTS = (168.0, 148.0, 128.0, 112.0, 98.0, 90.0, 84.0, 72.0, 60.0)
-WIDE_OF_HIGH, WORDS = 1.3, 150.0
-"""Width of the picture for its height, and of the words beside it."""
+WIDE_OF_HIGH = 1.3
+"""Width of a lens' picture for its height."""
 EDGE, GAP, STRIDE = 8.0, 3.0, 8.0
 NEAR = 400.0
 """Pixels beside the thing under the hand where its readout may stand."""
@@ -41,13 +41,14 @@ def taken_of(stage: Stage, drawing: Drawing, points: Sequence[QPointF]) -> Taken
     return Taken(own + _body(stage), others)
 
 
-def lens_room(stage: Stage, taken: Taken, hand: float, over_others: bool) -> QRectF | None:
+def lens_room(stage: Stage, taken: Taken, hand: float, words: float, over_others: bool) -> QRectF | None:
     """The largest free room; with `over_others` other things' words may be covered, few rather than many.
 
-    `hand` is the x (px) of the thing in hand: rooms away from it come first.
+    `hand` is the x (px) of the thing in hand: rooms away from it come first. `words` is the width
+    beside the picture.
     """
     for height in HEIGHTS:
-        width = height * WIDE_OF_HIGH + WORDS
+        width = height * WIDE_OF_HIGH + words
         top = stage.foot - EDGE / 2 - height
         lefts = np.arange(EDGE, stage.frame.width - EDGE - width, STRIDE)
         if top < EDGE or not len(lefts):

@@ -12,6 +12,14 @@ Row = tuple[str, str]
 """(which stroke of the picture it explains, or how it is said; the words)."""
 
 
+WIDE, NARROW = 150.0, 112.0
+"""Room in pixels for the lines of a raiser with limits, and of one without."""
+
+
+def words_width(shown: CloseUp) -> float:
+    return NARROW if shown.window is None and shown.ring is None else WIDE
+
+
 def scale_words(times: float) -> str:
     """How many times larger than on the bench."""
     return f"{times:g} : 1"

@@ -1,6 +1,7 @@
 """Putting a thing of the kit on the shaft: it follows the pointer, a click or Enter sets it down."""
 
 import itertools
+import math
 
 from PySide6.QtGui import QDropEvent, QMouseEvent, QPainter
 
@@ -90,15 +91,23 @@ class Placing(Gesture):
         shaft = self.document.shaft
         x = min(max(self.view.to_shaft(event.position())[0], 0.0), shaft.length)
         scale, system = self.view.ruler.scale, self.document.scene.system
-        self.x = rounded(x, TELLABLE / scale, system) if is_free(event) else rested_place(shaft, x, scale, system)
+        self.x = (
+            rounded(x, TELLABLE / scale, system)
+            if is_free(event)
+            else rested_place(shaft, x, scale, system, self.tool.goes == "on the axis")
+        )
         self.view.update()
 
 
-def rested_place(shaft: Shaft, x: float, scale: float, system: System) -> float:
-    """The face or middle of a segment near x (mm), else a round place, at a scale in px a mm."""
+def rested_place(shaft: Shaft, x: float, scale: float, system: System, at_faces: bool) -> float:
+    """The face or middle of a segment near x (mm), else a round place, at a scale in px a mm.
+
+    What is cut into a segment has no place at its faces: it rests `at_faces` no more than elsewhere.
+    """
     faces = faces_of(shaft)
     middles = [(begin + end) / 2 for begin, end in itertools.pairwise(faces)]
-    near = min((*faces, *middles), key=lambda place: abs(place - x))
+    near = min((*middles, *(faces if at_faces else ())), key=lambda place: abs(place - x), default=math.inf)
     if abs(near - x) * scale <= PULL:
         return near
-    return min(snapped(x, "place", TELLABLE / scale, system), shaft.length)
+    rest = min(snapped(x, "place", TELLABLE / scale, system), shaft.length)
+    return rest if at_faces or rest not in faces else rounded(x, TELLABLE / scale, system)

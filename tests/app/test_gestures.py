@@ -779,8 +779,9 @@ def test_the_readout_keeps_clear_of_what_is_pulled(desk: Desk) -> None:
 
 def test_things_come_to_rest_on_faces_and_middles_and_freely_with_ctrl(desk: Desk) -> None:
     near = 5.0 / desk.ruler.scale
-    assert rested_place(desk.shaft, 60.0 + near, desk.ruler.scale, "SI") == 60.0
-    assert rested_place(desk.shaft, 120.0 - near, desk.ruler.scale, "SI") == 120.0
+    assert rested_place(desk.shaft, 60.0 + near, desk.ruler.scale, "SI", True) == 60.0
+    assert rested_place(desk.shaft, 60.0 + near, desk.ruler.scale, "SI", False) > 60.0
+    assert rested_place(desk.shaft, 120.0 - near, desk.ruler.scale, "SI", False) == 120.0
     desk.document.change(edits.remove_thing(desk.shaft, "B"), "B taken off")
     desk.keys("S")
     desk.press(desk.bench.to_screen(60.0 + near, 0.0), CTRL)

@@ -142,17 +142,17 @@ def test_a_limit_far_off_does_not_shrink_the_picture() -> None:
 
 def test_a_lens_finds_the_largest_room_that_is_free(desk: Desk) -> None:
     stage = stage_of(desk)
-    free = lens_room(stage, Taken([], []), 0.0, False)
+    free = lens_room(stage, Taken([], []), 0.0, 150.0, False)
     assert free is not None
     assert free.left() >= NEAR
     right = QRectF(stage.frame.width / 2, 0, stage.frame.width, stage.frame.height)
-    moved = lens_room(stage, Taken([right], []), 0.0, False)
+    moved = lens_room(stage, Taken([right], []), 0.0, 150.0, False)
     assert moved is not None
     assert not moved.intersects(right)
     words = QRectF(0, stage.foot - 20, stage.frame.width, 15)
-    assert lens_room(stage, Taken([], [words]), 0.0, False) is None
-    assert lens_room(stage, Taken([], [words]), 0.0, True) is not None
-    assert lens_room(stage, Taken([words], []), 0.0, True) is None
+    assert lens_room(stage, Taken([], [words]), 0.0, 150.0, False) is None
+    assert lens_room(stage, Taken([], [words]), 0.0, 150.0, True) is not None
+    assert lens_room(stage, Taken([words], []), 0.0, 150.0, True) is None
 
 
 def test_at_rest_the_lens_covers_no_words_and_while_typing_shows_the_number(desk: Desk) -> None:
