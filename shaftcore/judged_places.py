@@ -48,7 +48,7 @@ def judge_places(
     with one section and one set of notch factors; where it is used most is kept.
     Along the shaft the section is the plain one.
     """
-    owner, point = _candidates(stations, loads.x)
+    owner, point = places_within(stations, loads.x)
     count = len(owner)
     every = taken(loads, np.concatenate([point, np.arange(len(loads.x))]))
     d, bore, finish = _sections(profile, every, stations, owner)
@@ -56,12 +56,12 @@ def judge_places(
     kf[:, :count] = factors.kf[:, owner]
     fatigue = Fatigue(kf[LOAD_ROWS["bending"]], kf[LOAD_ROWS["tension"]], kf[LOAD_ROWS["torsion"]])
     judged = judge(shaft, station_stresses(every, d, bore, shaft.duty.turning), fatigue, d, bore, finish)
-    worst = _worst_of_each(owner, judged.utilisation[:count], judged.greatest[:count])
+    worst = _worst_of_each(owner, judged.utilisation[:count], judged.n[:count], judged.greatest[:count])
     return taken(every, worst), taken(judged, worst), taken(judged, slice(count, None))
 
 
-def _candidates(stations: tuple[Station, ...], x: Array) -> tuple[Index, Index]:
-    """Station and point of everything that may govern a station: both sides of all its places."""
+def places_within(stations: tuple[Station, ...], x: Array) -> tuple[Index, Index]:
+    """Station and point (indices) of everything that may govern a station: both sides of all its places."""
     owner = np.array([i for i, station in enumerate(stations) for _ in (station.x, *station.also)], dtype=np.intp)
     at = np.array([place for station in stations for place in (station.x, *station.also)])
     left, right = np.searchsorted(x, at, "left"), np.searchsorted(x, at, "right") - 1
@@ -87,9 +87,10 @@ def _sections(
     return d, bore, finish
 
 
-def _worst_of_each(owner: Index, utilisation: Array, greatest: Array) -> Index:
-    """For each owner the entry with the largest utilisation; of those equal but for rounding, the largest stress."""
-    order = np.lexsort((greatest, utilisation.astype(np.float32), owner))
+def _worst_of_each(owner: Index, utilisation: Array, n: Array, greatest: Array) -> Index:
+    """For each owner the entry with the largest utilisation; of those equal but for rounding, the one with the
+    least n, then the largest stress."""
+    order = np.lexsort((greatest, *(values.astype(np.float32) for values in (-n, utilisation)), owner))
     return order[np.searchsorted(owner[order], np.arange(owner.max() + 1), "right") - 1]
 
 

@@ -160,3 +160,11 @@ def test_results_name_the_governing_station_and_the_runner_up():
     assert use[results.governing] == use.max()
     assert use[results.runner_up] == np.sort(use)[-2]
     assert results.sound == bool((use <= 1).all())
+
+
+def test_of_sides_alike_in_yield_the_one_in_tension_is_kept():
+    """20 kN pull at the left of the support, push at its right: yield is alike, only the pull has a mean stress."""
+    supports = (Support("A", 50.0, locating=True), Support("B", 200.0))
+    for force in (-20e3, 20e3):
+        results = evaluate(loaded(AxialForce("p", 0.0, force), AxialForce("q", 100.0, force), supports=supports))
+        assert results.judged.mean[results.station_of("A")] == pytest.approx(20e3 * 4 / (math.pi * 40**2))
