@@ -60,9 +60,23 @@ def factors_of(kind: RaiserKind, sizes: Sizes, judgement: Judgement, tensile_str
         _one_load(found, row, fit, sizes, judgement.sensitivity, tensile_strength)
         found.outside[row] = _outside(fit, measures)
         if fit.low_by:
-            sharpness, share = zip(*fit.low_by, strict=True)
-            found.low_by[row] = np.interp(measures["r/d"], sharpness, share)
+            found.low_by[row] = _shortfall(fit, sizes["r"] / sizes["d"], sizes["r"] / sizes["h"])
     return found
+
+
+def _shortfall(fit: Fit, sharpness: Array, cut: Array) -> Array:
+    """Share by which finite elements lie above a fit, for arrays of r/d and of r/h.
+
+    Sharper than the sharpest root known it goes on rising by the logarithm of r/d as between the last two.
+    """
+    known, share = (np.array(column) for column in zip(*fit.low_by, strict=True))
+    slope = max((share[0] - share[1]) / np.log(known[1] / known[0]), 0.0)
+    beyond = slope * np.log(np.maximum(known[0] / sharpness, 1.0))
+    low: Array = np.interp(sharpness, known, share) + beyond
+    if fit.low_when_cut:
+        arcs, shares = (np.array(column) for column in zip(*fit.low_when_cut, strict=True))
+        low = np.maximum(low, np.interp(cut, arcs, shares))
+    return low
 
 
 def _plain(count: int) -> NotchFactors:

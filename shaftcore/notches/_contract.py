@@ -75,7 +75,7 @@ class Fit:
     sizes, ending with Kt under the given symbol. `seams(sizes)` gives the root radii, one array
     each, at which pieces of the fit meet and may jump. `low_by` lists (r/d, share): how far finite
     elements lie above the fit at worst for fillets about that sharp, 0 where the fit is safe; ()
-    where nothing is known.
+    where nothing is known. `low_when_cut` lists the same over r/h for arcs larger than their step.
     """
 
     source: str
@@ -84,6 +84,7 @@ class Fit:
     formula: str
     steps: Callable[[Mapping[str, float], str], tuple[Line, ...]]
     low_by: tuple[tuple[float, float], ...] = ()
+    low_when_cut: tuple[tuple[float, float], ...] = ()
     seams: Callable[[Sizes], tuple[Array, ...]] = field(default=lambda sizes: ())
 
 

@@ -47,7 +47,10 @@ def din_steps(k: FormConstants, sizes: Mapping[str, float], symbol: str) -> tupl
 
 
 def din_fit(
-    constants: FormConstants, ranges: tuple[ValidRange, ...], low_by: tuple[tuple[float, float], ...] = ()
+    constants: FormConstants,
+    ranges: tuple[ValidRange, ...],
+    low_by: tuple[tuple[float, float], ...] = (),
+    low_when_cut: tuple[tuple[float, float], ...] = (),
 ) -> Fit:
     """The closed form with its constants as one `Fit`."""
     return Fit(
@@ -57,4 +60,5 @@ def din_fit(
         formula=f"alpha = 1 + 1/√({constants.under_root('r/t', 'r/d', 'd/D')})",
         steps=lambda sizes, symbol: din_steps(constants, sizes, symbol),
         low_by=low_by,
+        low_when_cut=low_when_cut,
     )

@@ -43,6 +43,7 @@ FITS: dict[str, dict[LoadSort, Fit]] = {
             FormConstants(0.62, 5.8, 0.2, 3),
             DIN_RANGES,
             low_by=((0.01, 0.185), (0.03, 0.12), (0.05, 0.086), (0.1, 0.047), (0.2, 0.024)),
+            low_when_cut=((1.0, 0.0), (1.5, 0.09), (2.0, 0.14), (3.0, 0.2), (4.0, 0.24), (5.0, 0.255)),
         ),
         "tension": din_fit(
             FormConstants(0.62, 3.5),
