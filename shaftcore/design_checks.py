@@ -17,6 +17,7 @@ from shaftcore.notches.shoulder import LARGEST_RADIUS
 from shaftcore.phrase import Phrase
 from shaftcore.records import Notice
 from shaftcore.results import Judged, SeatLimit
+from shaftcore.second_looks import second_looks
 from shaftcore.shaft import Shaft, Torque
 from shaftcore.sources import SOURCES
 from shaftcore.stations import Station
@@ -28,8 +29,8 @@ BALANCE = 1e-6
 TAPER_WORTH_SAYING = 0.1
 """Share of a step by which a taper may rise under its fillet before it is worth a notice."""
 
-LOW_WORTH_SAYING = 0.03
-"""Share by which finite elements must lie above a fit before it is worth a notice."""
+HOT = 200.0
+"""Service temperature (°C) above which the strengths of steel at room temperature say too little."""
 
 
 def seat_limits(shaft: Shaft, seated: Sequence[Seating]) -> tuple[SeatLimit, ...]:
@@ -78,6 +79,7 @@ def notices_of(
         *_seats(shaft, seated, stations),
         *_bore_steps(shaft, stations),
         *_fillets_on_tapers(shaft, seated, stations),
+        *second_looks(shaft, stations, loads, factors, judged),
         *_station_flags(shaft, stations, factors, judged),
     )
 
@@ -117,6 +119,15 @@ def _shaft_wide(shaft: Shaft) -> Iterator[Notice]:
                         (limits.low, limits.high, tensile),
                     ),
                 )
+    if shaft.duty.temperature > HOT:
+        yield Notice(
+            "hot service",
+            Phrase(
+                "At {:temperature} tensile and yield strength are taken as entered; only the endurance limit is "
+                "lowered (k_d). Enter strengths that hold at this temperature; creep is not judged.",
+                (shaft.duty.temperature,),
+            ),
+        )
     if shaft.judgement.user_factor != 1 and not shaft.judgement.user_factor_reason:
         yield Notice("reason missing", Phrase("The own factor on the endurance limit has no reason beside it."))
 
@@ -195,7 +206,7 @@ def _station_flags(
     source = shaft.judgement.kt_source
     size = judged.strength.size_diameter
     too_small_or_large = (size < SIZE_LOW) | (size > SIZE_HIGH)
-    outsides, lows, held = factors.outside.T.tolist(), factors.low_by.T.tolist(), np.any(factors.held, axis=0).tolist()
+    outsides, held = factors.outside.T.tolist(), np.any(factors.held, axis=0).tolist()
     for i, station in enumerate(stations):
         if too_small_or_large[i]:
             yield Notice(
@@ -227,19 +238,6 @@ def _station_flags(
                 Phrase(
                     f"Kt after {SOURCES[fits[outside[0]].source].short} is used outside its range ({ranges}); "
                     f"here {have}. The value is carried on from the nearest end."
-                ),
-                station.place,
-                i,
-            )
-        low = [
-            f"{sort} {share:.0%}" for sort, share in zip(LOAD_SORTS, lows[i], strict=True) if share > LOW_WORTH_SAYING
-        ]
-        if low:
-            yield Notice(
-                "fit below finite elements",
-                Phrase(
-                    f"For a root this sharp finite elements give more than {SOURCES[fits['bending'].source].short}: "
-                    f"up to {', '.join(low)} more Kt."
                 ),
                 station.place,
                 i,
