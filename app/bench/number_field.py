@@ -12,7 +12,7 @@ from app.theme import Theme, text_font
 from shaftcore.errors import QuantityError
 from shaftcore.typed_numbers import parse
 
-EDGE, WIDTH = 6, 230
+EDGE, WIDTH = 6, 270
 
 
 class NumberField(QFrame):
@@ -33,8 +33,8 @@ class NumberField(QFrame):
         self.field.editingFinished.connect(self._finished)
         self.field.textEdited.connect(self._typed)
         self._lay_out(theme)
-        self.adjustSize()
-        self._stand_at(at, bench)
+        self._at = at
+        self._stand()
         self.show()
         self.field.setFocus()
         self.field.selectAll()
@@ -55,9 +55,16 @@ class NumberField(QFrame):
             grid.addWidget(part, row, 0)
         self.setFixedWidth(WIDTH)
 
-    def _stand_at(self, at: QPointF, bench: QWidget) -> None:
-        x = min(max(at.x() + 12, 2), max(bench.width() - self.width() - 2, 2))
-        y = min(max(at.y() - self.height() - 12, 2), max(bench.height() - self.height() - 2, 2))
+    def _stand(self) -> None:
+        """Above its thing and inside the bench, as high as what it has to say."""
+        bench, layout = self.parentWidget(), self.layout()
+        if bench is None or layout is None:
+            return
+        # the words wrap: their height is known only for a width
+        layout.activate()
+        self.resize(WIDTH, layout.totalHeightForWidth(WIDTH))
+        x = min(max(self._at.x() + 12, 2), max(bench.width() - self.width() - 2, 2))
+        y = min(max(self._at.y() - self.height() - 12, 2), max(bench.height() - self.height() - 2, 2))
         self.move(round(x), round(y))
 
     @property
@@ -71,6 +78,7 @@ class NumberField(QFrame):
     @guarded
     def _typed(self, _: str) -> None:
         """The bench shows what is being typed."""
+        self._stand()
         parent = self.parentWidget()
         if parent is not None:
             parent.update()
@@ -97,7 +105,7 @@ class NumberField(QFrame):
             self._refusal = ""
         elif not self.field.problem:
             self.leave()
-        self.adjustSize()
+        self._stand()
 
     def leave(self) -> None:
         """Give the keyboard back to the bench and go."""

@@ -42,6 +42,9 @@ def drag_lines(scene: Scene, size: Size, value: float | None, typed: str, window
         return lines
     index = station_for(scene.results, size.chosen)
     if index is not None:
+        station = scene.results.stations[index]
+        if (station.kind, station.place) != size.chosen:
+            lines.append(("plain", f"at {station.label}:"))
         lines += [("symbols", row) for row in _station_rows(scene, scene.results, index)]
     worst = scene.results.governing
     margin = with_unit(scene.results.least_margin, "share", scene.system, 1, signed=True)

@@ -26,11 +26,9 @@ def thing_menu(hand: Holder, keys: Keys, x: float) -> QMenu | None:
     menu.addAction(label_of(scene.shaft, chosen)).setEnabled(False)
     menu.addSeparator()
     for size in sizes_of(scene.shaft, chosen):
-        _add(
-            menu,
-            f"{size.declaration.label} {size.place}: {size.shown(size.value, scene.system)}…",
-            _opener(hand, keys, size),
-        )
+        # the head of the menu names the thing: only sizes of its neighbours say whose they are
+        name = size.declaration.label if size.chosen == chosen else f"{size.declaration.label} {size.place}"
+        _add(menu, f"{name}: {size.shown(size.value, scene.system)}…", _opener(hand, keys, size))
     menu.addSeparator()
     if isinstance(record, Segment):
         _segment_entries(menu, hand, record, x)

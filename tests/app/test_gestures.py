@@ -593,6 +593,18 @@ def test_enter_opens_the_number_and_a_refusal_stays_beside_it(desk: Desk) -> Non
     assert desk.bench.hasFocus()
 
 
+def test_all_of_a_long_refusal_can_be_read_in_the_number_field(desk: Desk) -> None:
+    desk.mouse(QEvent.Type.MouseButtonDblClick, desk.at("shoulder", "s1", "radius"), LEFT, LEFT)
+    field = desk.hand.number_field
+    assert field is not None
+    desk.keys("999", Key.Key_Return)
+    words = field.field.words_label
+    assert words.text()
+    QApplication.processEvents()
+    assert words.height() >= words.heightForWidth(words.width())
+    assert desk.bench.rect().contains(field.geometry())
+
+
 def test_esc_leaves_the_number_as_it_was(desk: Desk) -> None:
     desk.click(desk.at("shoulder", "s1", "radius"))
     desk.keys(Key.Key_Return, "3", Key.Key_Escape, Key.Key_Escape)
@@ -726,7 +738,7 @@ def test_the_menu_of_a_thing_offers_its_sizes_and_changes(desk: Desk) -> None:
     menu = thing_menu(desk.hand, desk.hand.keys, 110.0)
     assert menu is not None
     by_text = {action.text().replace("&", ""): action for action in menu.actions()}
-    assert any(text.startswith("Bore s2") for text in by_text)
+    assert any(text.startswith("Bore: ") for text in by_text)
     by_text["Split here"].trigger()
     assert [segment.length for segment in desk.shaft.segments] == [60.0, 50.0, 70.0, 70.0]
 
@@ -775,6 +787,29 @@ def test_the_readout_keeps_clear_of_what_is_pulled(desk: Desk) -> None:
         assert not box.contains(pulled)
         assert not box.contains(pointer)
     painter.end()
+
+
+def test_the_readout_finds_a_place_off_the_handle_near_an_edge(qtbot: QtBot) -> None:
+    """Wider than what is left beside the handle, it goes above or below it, off a lens too."""
+    room, pulled, lens = QRectF(0, 0, 860, 325), QPointF(481, 116), QRectF(8, 180, 230, 80)
+    canvas = QPixmap(860, 325)
+    with QPainter(canvas) as painter:
+        for pointer in (QPointF(500, 60), QPointF(470, 130), QPointF(481, 116)):
+            box = draw_readout(painter, [("size", "r = 1 mm " * 7)], pointer, room, LIGHT, pulled, lens)
+            assert box.width() > 360
+            assert not box.contains(pulled)
+            assert not box.contains(pointer)
+            assert not box.intersects(lens)
+
+
+def test_the_readout_says_at_which_station_its_factors_are(desk: Desk) -> None:
+    size = size_of(desk.shaft, ("segment", "s1"), "diameter")
+    assert size is not None
+    lines = [text for _, text in drag_lines(desk.document.scene, size, 40.0, "", None)]
+    assert lines[1] == "at Shoulder s1|s2:"
+    own = size_of(desk.shaft, ("shoulder", "s1"), "radius")
+    assert own is not None
+    assert not any(text.startswith("at ") for _, text in drag_lines(desk.document.scene, own, 1.0, "", None))
 
 
 def test_things_come_to_rest_on_faces_and_middles_and_freely_with_ctrl(desk: Desk) -> None:
