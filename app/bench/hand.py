@@ -143,7 +143,9 @@ class BenchHand(QObject):
 
     @guarded
     def _refused(self, words: str) -> None:
-        self.refusal = words
+        """An open number field says it itself."""
+        if self._field is None:
+            self.refusal = words
 
     @guarded
     def _forget_grips(self) -> None:

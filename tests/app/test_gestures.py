@@ -603,6 +603,7 @@ def test_all_of_a_long_refusal_can_be_read_in_the_number_field(desk: Desk) -> No
     QApplication.processEvents()
     assert words.height() >= words.heightForWidth(words.width())
     assert desk.bench.rect().contains(field.geometry())
+    assert desk.hand.refusal == ""
 
 
 def test_esc_leaves_the_number_as_it_was(desk: Desk) -> None:
