@@ -135,6 +135,7 @@ class Ledger(QWidget):
     @guarded
     def _shown(self, scene: Scene) -> None:
         self.table.empty_words = " ".join([NOT_YET, *(f"Missing: {p.remedy}." for p in scene.missing)])
+        self.table.viewport().update()
         self._following = True
         try:
             self.model.show_scene(scene)
