@@ -2,7 +2,7 @@
 
 import numpy as np
 from PySide6.QtCore import QLineF, QPointF, QRectF, Qt
-from PySide6.QtGui import QColor, QFontMetricsF, QPainter, QPen
+from PySide6.QtGui import QColor, QFontMetricsF, QPainter, QPen, QPolygonF
 
 from app import symbol_text
 from app.bench.close_up import CloseUp, lens_frame
@@ -20,7 +20,7 @@ from app.bench.lens_words import (
     scale_words,
     words_width,
 )
-from app.bench.overlay import draw_band
+from app.bench.overlay import set_band_brush
 from app.bench.polygons import draw_weighted, hairline, polygon, stroke
 from app.theme import Theme, text_font
 from shaftcore.notches._contract import Array
@@ -40,6 +40,8 @@ class Lens:
         self.picture = QRectF(room.left(), room.top(), room.width() - words_width(shown), room.height())
         self._scale = scale
         self._found: tuple[Frame, float] | None = None
+        self._outlines: dict[str, QPolygonF] = {}
+        self._areas: dict[str, QPolygonF] = {}
         self._font = text_font(POINTS)
         self._line, self._ascent = (measure := QFontMetricsF(self._font)).height(), measure.ascent()
         self._scale_for(shown.size.value or 0.0)
@@ -73,9 +75,29 @@ class Lens:
     def _scale_for(self, value: float) -> None:
         self._scaled_for = max(value, 1e-9)
         self._found = lens_frame(self.shown, value, self.picture, self._scale)
+        if self._found is not None:
+            self._set_up(self._found[0])
+
+    def _set_up(self, frame: Frame) -> None:
+        """What keeps still while the size changes, in pixels: lines, ring and band between the limits."""
+        shown, before = self.shown, self.shown.size.value
+        outlines = {
+            RING: shown.ring,
+            BEFORE: None if before is None else shown.outline(before),
+            NEEDED: shown.needed,
+            ALLOWED: shown.allowed,
+        }
+        points = {style: frame.points(outline) for style, outline in outlines.items() if outline is not None}
+        self._outlines = {style: polygon(line) for style, line in points.items()}
+        self._areas = {}
+        if RING in points:
+            ring = points[RING]
+            self._areas[RING] = polygon(np.vstack([ring, [(ring[0, 0], ring[-1, 1])]]))
+        if NEEDED in points and ALLOWED in points:
+            self._areas[NEEDED] = polygon(np.vstack([points[NEEDED], points[ALLOWED][::-1]]))
 
     def _paint_picture(self, painter: QPainter, frame: Frame, value: float, theme: Theme) -> None:
-        shown, before = self.shown, self.shown.size.value
+        shown = self.shown
         painter.fillRect(self.picture, QColor(theme.paper))
         painter.setRenderHint(QPainter.RenderHint.Antialiasing, True)
         painter.setPen(Qt.PenStyle.NoPen)
@@ -83,22 +105,17 @@ class Lens:
         below = self.picture.bottom() + BEYOND
         painter.setBrush(QColor(theme.metal))
         painter.drawPolygon(polygon(np.vstack([edge, [(edge[-1, 0], below), (edge[0, 0], below)]])))
-        if shown.ring is not None:
-            ring = frame.points(shown.ring)
+        if RING in self._areas:
             painter.setBrush(QColor(theme.panel))
-            painter.drawPolygon(polygon(np.vstack([ring, [(ring[0, 0], ring[-1, 1])]])))
-        if shown.needed is not None and shown.allowed is not None and shown.window is not None:
-            band = np.vstack([shown.needed, shown.allowed[::-1]])
-            draw_band(painter, frame, band, shown.window.empty, theme, (False,))
-        for style, outline in (
-            (RING, shown.ring),
-            (BEFORE, shown.outline(before) if before not in (None, value) else None),
-            (NEEDED, shown.needed),
-            (ALLOWED, shown.allowed),
-        ):
-            if outline is not None:
+            painter.drawPolygon(self._areas[RING])
+        if NEEDED in self._areas and shown.window is not None:
+            set_band_brush(painter, shown.window.empty, theme)
+            painter.drawPolygon(self._areas[NEEDED])
+            painter.setBrush(Qt.BrushStyle.NoBrush)
+        for style, outline in self._outlines.items():
+            if style != BEFORE or value != shown.size.value:
                 painter.setPen(_pen(style, theme))
-                painter.drawPolyline(polygon(frame.points(outline)))
+                painter.drawPolyline(outline)
         draw_weighted(painter, [polygon(edge)], theme.ink, NOW_WEIGHT)
 
     def _write_scale(self, painter: QPainter, words: str, theme: Theme) -> None:

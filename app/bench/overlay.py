@@ -82,15 +82,18 @@ def window_band(shaft: Shaft, size: Size, window: RadiusWindow) -> Array | None:
     return np.vstack([edges[0], edges[1][::-1]])
 
 
-def draw_band(
-    painter: QPainter, frame: Frame, band: Array, empty: bool, theme: Theme, sides: tuple[bool, ...] = (False, True)
-) -> None:
-    """The radius window, translucent, on both outlines; hatched where nothing lies between its ends."""
+def set_band_brush(painter: QPainter, empty: bool, theme: Theme) -> None:
+    """The look of a radius window: translucent, hatched where nothing lies between its ends."""
     colour = QColor(theme.caution if empty else theme.accent)
     painter.setPen(hairline(theme.caution if empty else theme.accent))
     colour.setAlpha(BAND_ALPHA)
     painter.setBrush(QBrush(colour, Qt.BrushStyle.BDiagPattern) if empty else QBrush(colour))
-    for mirrored in sides:
+
+
+def draw_band(painter: QPainter, frame: Frame, band: Array, empty: bool, theme: Theme) -> None:
+    """The radius window on both outlines."""
+    set_band_brush(painter, empty, theme)
+    for mirrored in (False, True):
         painter.drawPolygon(polygon(frame.points(band, mirrored)))
     painter.setBrush(Qt.BrushStyle.NoBrush)
 

@@ -113,7 +113,8 @@ def _beside(pointer: QPointF, size: QSizeF, room: QRectF, clear: QPointF | None,
     taken = [QRectF(point - QPointF(CLEAR, CLEAR), QSizeF(2 * CLEAR, 2 * CLEAR)) for point in points]
     taken += [other] if other is not None else []
     boxes = [_kept_in(QRectF(corner, size), room) for corner in _corners(points, size)]
-    return min(boxes, key=lambda box: sum(box.intersects(rect) for rect in taken))
+    free = (box for box in boxes if not any(box.intersects(rect) for rect in taken))
+    return next(free, None) or min(boxes, key=lambda box: sum(box.intersects(rect) for rect in taken))
 
 
 def _corners(points: list[QPointF], size: QSizeF) -> list[QPointF]:
