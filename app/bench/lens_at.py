@@ -41,7 +41,10 @@ def lens_on(
     own = [QPointF(grip.x, grip.y) for grip in grips if grip.chosen == size.chosen and not grip.is_line]
     taken = taken_of(stage, Drawing(stage, Type()), own)
     taken.held.extend(held)
-    room = lens_room(stage, taken, own[0].x(), words_width(shown), over_others)
+    # at the same place as at rest where that can be, so that taking hold moves nothing
+    ways = (False, True) if over_others else (False,)
+    rooms = (lens_room(stage, taken, own[0].x(), words_width(shown), way) for way in ways)
+    room = next((found for found in rooms if found is not None), None)
     if room is None:
         return None
     lens = Lens(shown, room, stage.frame.scale)

@@ -165,6 +165,10 @@ def test_at_rest_the_lens_covers_no_words_and_while_typing_shows_the_number(desk
     assert lens is not None
     for callout in Drawing(stage_of(desk), Type()).callouts:
         assert not callout.room.intersects(lens.room)
+    gesture = dragged(desk)
+    assert gesture.lens is not None
+    assert gesture.lens.room == lens.room
+    desk.keys(Qt.Key.Key_Escape)
     desk.keys(Qt.Key.Key_Return)
     before = desk.bench.grab().toImage()
     lens = desk.hand.lens_at_rest.lens
