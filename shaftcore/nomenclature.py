@@ -112,8 +112,8 @@ COLUMNS: tuple[Column, ...] = (
     Column("amplitude", "σ_a'", "Equivalent amplitude", "stress", _judged("amplitude")),
     Column("mean", "σ_m'", "Equivalent mean", "stress", _judged("mean")),
     Column("greatest", "σ_max'", "Greatest equivalent stress", "stress", _judged("greatest")),
-    Column("deflection", "w", "Deflection", "deflection", lambda r: np.hypot(*r.at.deflection[0]).tolist()),
-    Column("slope", "φ", "Slope", "slope", lambda r: np.hypot(*r.at.slope[0]).tolist()),
+    Column("deflection", "w", "Deflection, mean loads", "deflection", lambda r: np.hypot(*r.at.deflection[0]).tolist()),
+    Column("slope", "φ", "Slope, mean loads", "slope", lambda r: np.hypot(*r.at.slope[0]).tolist()),
     Column("flags", "", "Notices", "", _flags),
 )
 BY_KEY: dict[str, Column] = {column.key: column for column in COLUMNS}

@@ -34,8 +34,10 @@ CAUTIONS = (
     "who must check loads, material, geometry and results before a shaft is made or run.",
     "All stress concentration factors are elastic; they suit smooth steels in high-cycle fatigue.",
     "Corrosion, fretting and very long lives take the endurance limit away.",
-    "A radius on the drawing is not the radius on the part: fatigue is judged at the smallest radius that can be made, "
-    "seating at the largest.",
+    "A radius on the drawing is not the radius on the part, and each is judged as entered: for fatigue the smallest "
+    "that can be made is the one to enter, for seating the largest.",
+    "The margins do not make up for the published fits; a notice names a station that passes by the fit alone.",
+    "Transverse shear and the shaft's own weight are not in the margins.",
     "Published fits hold in their ranges; values used outside are flagged in chapter 7. Near sharp roots finite "
     "elements can give higher factors than the published charts.",
     "Strengths are those entered; test pieces and large forgings can differ.",
