@@ -90,7 +90,8 @@ def _sections(
 def _worst_of_each(owner: Index, utilisation: Array, n: Array, greatest: Array) -> Index:
     """For each owner the entry with the largest utilisation; of those equal but for rounding, the one with the
     least n, then the largest stress."""
-    order = np.lexsort((greatest, *(values.astype(np.float32) for values in (-n, utilisation)), owner))
+    most_used, least_n = utilisation.astype(np.float32), -n.astype(np.float32)
+    order = np.lexsort((greatest, least_n, most_used, owner))
     return order[np.searchsorted(owner[order], np.arange(owner.max() + 1), "right") - 1]
 
 
