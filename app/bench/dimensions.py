@@ -30,13 +30,17 @@ def chosen_raiser(stage: Stage) -> Seating | None:
 
 
 def raiser_words(stage: Stage, seating: Seating) -> list[str]:
-    """Every size of the raiser that has a symbol, in the order it is declared."""
+    """Every size of the raiser in the order it is declared; a symbol with a subscript is said in words."""
     record: Any = seating.record
     return [
-        f"{declaration.symbol} {quantity(getattr(record, name), declaration.dimension_name, stage.scene.system)}"
+        f"{_name(declaration)} {quantity(getattr(record, name), declaration.dimension_name, stage.scene.system)}"
         for name, declaration in declared(record).items()
         if isinstance(declaration, Quantity) and name != "x" and getattr(record, name) is not None
     ]
+
+
+def _name(declaration: Quantity) -> str:
+    return declaration.symbol if declaration.symbol.isalpha() else declaration.label.lower()
 
 
 def raiser_anchor(stage: Stage, seating: Seating) -> QPointF:
