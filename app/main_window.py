@@ -14,6 +14,7 @@ from app.document import Document, Scene
 from app.error_messages import guarded, report, tell
 from app.file_dialogs import SHAFT_FILTER, SHAFT_SUFFIX, Unsaved, ask_open, ask_save, ask_unsaved
 from app.fold import Fold
+from app.fold_column import FoldColumn
 from app.kit import Kit
 from app.manual.view import ManualWindow
 from app.menus import Menus
@@ -94,10 +95,7 @@ class MainWindow(QMainWindow):
             "workings": Fold("Workings", self.workings),
             "notices": Fold("Notices", self.notices, opened=False),
         }
-        self.right = QSplitter(Qt.Orientation.Vertical)
-        for fold, share in zip(self.folds.values(), (5, 3, 5, 5, 2), strict=True):
-            self.right.addWidget(fold)
-            self.right.setStretchFactor(self.right.count() - 1, share)
+        self.right = FoldColumn(list(zip(self.folds.values(), (5, 3, 5, 5, 2), strict=True)))
         self.across = QSplitter(Qt.Orientation.Horizontal)
         self.across.addWidget(self.left)
         self.across.addWidget(self.right)

@@ -22,6 +22,9 @@ def _shares(lines: list[str]) -> dict[str, float]:
 def restore(window: "MainWindow") -> None:
     """Bring back sizes, units, traces, ledger columns and open parts."""
     kept = window.preferences
+    opened = kept.lines("opened parts", [key for key, fold in window.folds.items() if fold.opened])
+    for key, fold in window.folds.items():
+        fold.set_opened(key in opened)
     for key, splitter in _splitters(window).items():
         state = kept.state(f"split/{key}")
         if state is not None:
@@ -35,9 +38,6 @@ def restore(window: "MainWindow") -> None:
     window.traces.set_track_heights(_shares(kept.lines("track heights", [])))
     window.ledger.columns = kept.lines("ledger columns", list(window.ledger.columns))
     window.ledger.order = kept.words("ledger order", window.ledger.order)
-    opened = kept.lines("opened parts", [key for key, fold in window.folds.items() if fold.opened])
-    for key, fold in window.folds.items():
-        fold.set_opened(key in opened)
 
 
 def remember(window: "MainWindow") -> None:

@@ -166,6 +166,22 @@ def test_window_state_comes_back(window: MainWindow, qtbot: QtBot) -> None:
     assert not again.folds["workings"].opened
 
 
+def test_a_part_that_is_opened_can_be_read_at_once(window: MainWindow, qtbot: QtBot) -> None:
+    window.open_copy(MENDED)
+    heights = window.right.sizes()
+    for key in ("chosen", "givens", "notices"):
+        fold = window.folds[key]
+        fold.set_opened(True)
+        open_ones = [other for other in window.folds.values() if other.opened]
+        qtbot.waitUntil(lambda f=fold, o=open_ones: f.height() > 0.45 * sum(x.height() for x in o))
+        window.folds["workings"].set_opened(True)
+        fold.set_opened(False)
+        qtbot.waitUntil(lambda f=fold: f.height() == f.head.sizeHint().height())
+        assert sum(window.right.sizes()) == sum(heights)
+    left = [window.folds[key].height() for key in ("ledger", "workings")]
+    assert left == pytest.approx([heights[0], heights[3]], abs=4)  # closing gives back what opening took
+
+
 def test_every_command_has_an_action_and_no_shortcut_is_taken_twice(window: MainWindow) -> None:
     assert set(window.actions_by_key) == {command.key for command in COMMANDS}
     keys = [s.toString() for action in window.actions_by_key.values() for s in action.shortcuts() if s.toString()]
