@@ -17,7 +17,7 @@ from shaftcore.errors import UnsoundShaftError
 from shaftcore.evaluation import evaluate
 from shaftcore.records import Problem
 from shaftcore.results import Results
-from shaftcore.shaft import Shaft
+from shaftcore.shaft import Shaft, things
 from shaftcore.units import System
 
 Selection = tuple[str, str]
@@ -38,6 +38,23 @@ class Scene:
     station: int | None = None
     system: System = "SI"
     live: bool = False
+
+
+def station_for(results: Results | None, chosen: Selection | None) -> int | None:
+    """Index of a thing's station: one of its own kind, else any that bears its id, else the one it falls into."""
+    if results is None or chosen is None:
+        return None
+    own = (i for i, station in enumerate(results.stations) if (station.kind, station.place) == chosen)
+    index = next(own, None)
+    if index is None:
+        index = results.station_of(chosen[1])
+    return _station_shared_by(results, chosen[1]) if index is None else index
+
+
+def _station_shared_by(results: Results, id: str) -> int | None:
+    """Index of the station that is named after something else in the same spot."""
+    x = getattr(things(results.shaft).get(id), "x", None)
+    return next((i for i, station in enumerate(results.stations) if x in (station.x, *station.also)), None)
 
 
 class ChangeShaft(QUndoCommand):
@@ -107,8 +124,8 @@ class Document(QObject):
     def choose(self, chosen: Selection | None, station: int | None = None) -> None:
         """Choose a thing on the shaft, or a station; the one is found from the other."""
         results = self.scene.results
-        if station is None and chosen is not None and results is not None:
-            station = results.station_of(chosen[1])
+        if station is None:
+            station = station_for(results, chosen)
         if chosen is None and station is not None and results is not None:
             chosen = (results.stations[station].kind, results.stations[station].place)
         self._show(replace(self.scene, chosen=chosen, station=station))
@@ -215,6 +232,8 @@ def _with_choice_kept(scene: Scene, before: Scene) -> Scene:
     if before.station is None or before.results is None or scene.results is None:
         return replace(scene, station=None if scene.results is None else scene.station)
     old = before.results.stations[before.station]
+    if scene.chosen is not None and scene.chosen[1] != old.place:  # a guest in another's station
+        return replace(scene, station=station_for(scene.results, scene.chosen))
     same_old = [i for i, s in enumerate(before.results.stations) if (s.kind, s.place) == (old.kind, old.place)]
     same = [i for i, s in enumerate(scene.results.stations) if (s.kind, s.place) == (old.kind, old.place)]
     rank = same_old.index(before.station)

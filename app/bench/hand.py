@@ -27,7 +27,7 @@ from app.bench.lens_at import LensAtRest
 from app.bench.number_field import NumberField
 from app.bench.overlay import GripStamps
 from app.bench.placing import Placing
-from app.bench.readout import Lines, draw_readout, station_for
+from app.bench.readout import Lines, draw_readout
 from app.bench.sizes import Size
 from app.bench.sketching import Sketching
 from app.bench.stage import Plan, Stage
@@ -76,7 +76,7 @@ class BenchHand(QObject):
 
     def choose(self, chosen: Selection | None) -> None:
         """Choose a thing together with its own station."""
-        self.document.choose(chosen, station_for(self.document.scene.results, chosen))
+        self.document.choose(chosen)
 
     def begin(self, gesture: Gesture) -> None:
         self.end()

@@ -8,7 +8,7 @@ from PySide6.QtGui import QColor, QFont, QFontMetricsF, QPainter, QPen
 from app import symbol_text
 from app.bench.sizes import Size
 from app.bench.sketch import FIELDS, Sketch
-from app.document import Scene, Selection
+from app.document import Scene, station_for
 from app.theme import Theme, text_font
 from shaftcore.nomenclature import BY_KEY
 from shaftcore.number_text import with_unit
@@ -22,15 +22,6 @@ Lines = list[tuple[str, str]]
 AT_STATION = (("kt_bending", "kt_torsion"), ("n", "margin"))
 """Station quantities by row of the readout."""
 PADDING, BESIDE, WIDEST, CLEAR = 8.0, 16.0, 380.0, 15.0
-
-
-def station_for(results: Results | None, chosen: Selection | None) -> int | None:
-    """Index of the station of a thing: one of its own kind, else any that belongs to it."""
-    if results is None or chosen is None:
-        return None
-    own = (i for i, station in enumerate(results.stations) if (station.kind, station.place) == chosen)
-    index = next(own, None)
-    return results.station_of(chosen[1]) if index is None else index
 
 
 def drag_lines(scene: Scene, size: Size, value: float | None, typed: str, window: RadiusWindow | None) -> Lines:
