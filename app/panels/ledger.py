@@ -144,7 +144,7 @@ class Ledger(QWidget):
             self._following = False
         if not scene.live and scene.results is not self._fitted:
             self._fitted = scene.results
-            self.table.fit_columns(only_wider=True)
+            self.table.fit_columns(calmly=True)
             self.table.viewport().update()
 
     def _follow(self, scene: Scene) -> None:

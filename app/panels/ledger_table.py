@@ -116,8 +116,8 @@ class LedgerTable(QTableView):
         for part in (self.viewport(), self.heads.viewport(), self.gutter.viewport()):
             part.update()
 
-    def fit_columns(self, only_wider: bool = False) -> None:
-        """Columns as wide as head and numbers need; with `only_wider` none becomes narrower."""
+    def fit_columns(self, calmly: bool = False) -> None:
+        """Columns as wide as head and numbers need; `calmly`, none narrows that is not twice as wide as it must be."""
         bold = QFontMetrics(self._bold)
         for column, what in enumerate(self._ledger.columns):
             texts = self._ledger.texts(column, range(len(self._ledger.rows)))
@@ -127,7 +127,7 @@ class LedgerTable(QTableView):
             wide = round(max(need, head, unit)) + 2 * PAD
             if what.key in WORDS:
                 wide = min(wide, WIDEST_WORDS)
-            if not only_wider or wide > self.columnWidth(column):
+            if not calmly or not wide <= self.columnWidth(column) < 2 * wide:
                 self.setColumnWidth(column, wide)
 
     @guarded

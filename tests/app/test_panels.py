@@ -177,6 +177,27 @@ def test_choosing_a_row_chooses_the_station_everywhere_and_back(ledger: Ledger, 
     assert not ledger.table.selectionModel().hasSelection()
 
 
+def test_a_thing_in_the_station_of_another_is_shown_there_until_it_has_its_own(
+    ledger: Ledger, document: Document
+) -> None:
+    document.choose(("load", "T1"))  # stands where F1 does
+    assert document.scene.results is not None
+    assert ledger.model.rows[ledger.table.currentIndex().row()] == document.scene.station
+    assert document.scene.station == document.scene.results.station_of("F1")
+    document.change(replace_thing(document.shaft, "T1", x=200.0), "Torque")
+    assert document.scene.results.station_of("T1") == document.scene.station is not None
+
+
+def test_columns_widened_by_an_outsize_number_become_narrow_again(ledger: Ledger, document: Document) -> None:
+    widths = [ledger.table.columnWidth(column) for column in range(ledger.model.columnCount())]
+    sound = document.shaft
+    document.change(replace(sound, loads=(replace(sound.loads[0], force=1e-30),)), "Force")
+    assert ledger.table.heads.length() > 1.5 * sum(widths)
+    document.change(sound, "Force")
+    after = [ledger.table.columnWidth(column) for column in range(ledger.model.columnCount())]
+    assert all(new < 2 * old for new, old in zip(after, widths, strict=True))
+
+
 def test_a_drag_changes_numbers_without_reset_and_sorts_when_it_ends(ledger: Ledger, document: Document) -> None:
     resets: list[int] = []
     blocks: list[tuple[int, int]] = []
