@@ -74,6 +74,7 @@ class RecordForm(QWidget):
                 self._add_part(theme, name, declaration)
             else:
                 self._add_field(name, declaration)
+        self._column.addStretch(1)  # room to spare stays below, not between the fields
         self.set_theme(theme)
 
     def set_theme(self, theme: Theme) -> None:

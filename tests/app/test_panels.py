@@ -482,6 +482,21 @@ def test_a_typed_length_moves_what_lies_behind_it(thing: ThingPanel, document: D
     assert document.shaft.length == SHAFT.length + 10
 
 
+def test_fields_stand_as_close_under_each_other_after_a_longer_form_was_shown(
+    thing: ThingPanel, document: Document
+) -> None:
+    thing.resize(480, 900)
+    document.choose(("shoulder", "s1"))
+    QTest.qWait(20)
+    form = thing.forms[Shoulder]
+    editors = list(form.editors.values())
+    places = [editor.y() for editor in editors]
+    for chosen in (("segment", "s1"), ("load", "F1"), ("shoulder", "s1")):
+        document.choose(chosen)
+        QTest.qWait(20)
+    assert [editor.y() for editor in editors] == places
+
+
 def test_a_renamed_thing_stays_chosen(thing: ThingPanel, document: Document) -> None:
     document.choose(("segment", "s3"))
     _type(thing, Segment, "id", "seat")
