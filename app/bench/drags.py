@@ -54,15 +54,19 @@ class Drag(Gesture):
         """Show the shaft with this number unless it stands there already; False where it cannot be."""
         if value == self.value and self.document.in_gesture:
             return True
-        if not self.document.preview(self.size.apply(self.base, value)):
+        return self._show(self.size.apply(self.base, value), value)
+
+    def _show(self, shaft: Shaft, value: float) -> bool:
+        if not self.document.preview(shaft):
             return False
-        self.value = value
+        taken = size_of(self.document.shaft, self.size.chosen, self.size.name)  # a thing stops at the shaft's end
+        self.value = value if taken is None or taken.value is None else taken.value
         return True
 
     def read(self, text: str) -> None:
         if text:
             value = parse(text, self.size.declaration, self.document.scene.system)
-            self.hand.attempt(lambda: self.set(value))
+            self.hand.attempt(lambda: self._show(self.size.typed(self.base, value), value))
 
     def press(self, event: QMouseEvent) -> None:
         """A press while a refused number still stands gives it up."""

@@ -89,7 +89,7 @@ class NumberField(QFrame):
         self._refusal = ""
         self._document.refused.connect(self._refused)
         try:
-            self._document.change(self.shown_size.apply(shaft, value), self.shown_size.step_words(value, system))
+            self._document.change(self.shown_size.typed(shaft, value), self.shown_size.step_words(value, system))
         finally:
             self._document.refused.disconnect(self._refused)
 

@@ -46,6 +46,10 @@ class Size:
             return "none"
         return f"{editable(float(f'{value:.6g}'), self.declaration, system)} {self.unit(system)}".rstrip()
 
+    def typed(self, shaft: Shaft, value: float | None) -> Shaft:
+        """The shaft with a typed number, which is never bent to one that can be: off the shaft it is refused."""
+        return edits.replace_thing(shaft, self.chosen[1], x=value) if self.name == "x" else self.apply(shaft, value)
+
     def unit(self, system: System) -> str:
         return self.declaration.dimension.unit(system).symbol
 

@@ -475,6 +475,30 @@ def test_supports_and_loads_are_pulled_sideways(desk: Desk) -> None:
     assert things(desk.shaft)["F1"].x == pytest.approx(140.0, abs=2.0)  # type: ignore[union-attr]
 
 
+def test_a_support_pulled_beyond_the_end_stops_there_and_says_so(desk: Desk) -> None:
+    desk.pull(desk.at("support", "B", "x"), QPointF(60.0 * desk.ruler.scale, 0), let_go=False)
+    assert isinstance(desk.hand.gesture, Drag)
+    assert desk.hand.gesture.value == things(desk.shaft)["B"].x == desk.shaft.length  # type: ignore[union-attr]
+    desk.hand.gesture.enter()
+    assert desk.document.undo_stack.undoText() == "Position B to 250 mm"
+
+
+def test_a_place_typed_off_the_shaft_is_refused_not_bent(desk: Desk) -> None:
+    start = desk.at("support", "B", "x")
+    desk.pull(start, QPointF(-9.0, 0), let_go=False)
+    pulled = things(desk.shaft)["B"].x  # type: ignore[union-attr]
+    desk.keys("900", Key.Key_Return)
+    assert "900 mm" in desk.refusals[-1]
+    assert things(desk.shaft)["B"].x != desk.shaft.length  # type: ignore[union-attr]
+    desk.keys(Key.Key_Escape, Key.Key_Escape)
+    assert things(desk.shaft)["B"].x == 230.0 != pulled  # type: ignore[union-attr]
+    desk.document.choose(("support", "B"))
+    desk.hand.keys.open_number("x")
+    desk.keys("900", Key.Key_Return)
+    assert things(desk.shaft)["B"].x == 230.0  # type: ignore[union-attr]
+    assert "900 mm" in desk.refusals[-1]
+
+
 def test_the_free_end_of_an_arrow_pulls_the_force(desk: Desk) -> None:
     grip = desk.grip("radial force", "F1", "force")
     desk.pull(QPointF(grip.x, grip.y), QPointF(*grip.direction) * 83.0)
