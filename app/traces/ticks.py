@@ -9,6 +9,10 @@ from shaftcore.number_text import shown
 
 LEAST_APART = 17.0
 """Pixels between two numbers of a vertical axis."""
+LEAST_OF_TWO = 12.0
+"""The same where there would be one number only."""
+FINER = 4
+"""Numbers of steps that are tried for two that can be read."""
 UNDER_HEAD = 5.0
 """Pixels below the upper end that stay free of numbers, since the track's head stands above."""
 
@@ -22,12 +26,17 @@ def inner_ticks(limits: tuple[float, float], most: int) -> Array:
 
 def value_ticks(scale: Scale, height: float, apart: float = LEAST_APART) -> Array:
     """Round numbers of a vertical axis of that many pixels; a capped one is numbered at its end too."""
-    ticks = inner_ticks(scale.limits, max(1, int(height / apart)))
+    most = max(1, int(height / apart))
     if scale.cap is not None:
+        ticks = inner_ticks(scale.limits, most)
         step = ticks[1] - ticks[0] if len(ticks) > 1 else scale.cap
         return np.append(ticks[ticks < scale.cap - 0.4 * step], scale.cap)
     low, high = scale.limits
-    return ticks[ticks <= high - (high - low) * UNDER_HEAD / height]
+    top = high - (high - low) * UNDER_HEAD / height
+    choices = [found[found <= top] for found in (inner_ticks((low, high), most + more) for more in range(FINER))]
+    least = LEAST_OF_TWO * (high - low) / height
+    # one number alone gives no scale
+    return next((ticks for ticks in choices if len(ticks) > 1 and np.diff(ticks).min() >= least), choices[0])
 
 
 def labels(ticks: Array, cap: float | None = None) -> list[str]:

@@ -286,6 +286,8 @@ def test_numbers_at_the_axes_are_round_apart_and_told_apart() -> None:
         assert len(set(words)) == len(ticks)
         spaces = str.maketrans("−", "-", "\u202f")
         assert [float(text.translate(spaces)) for text in words] == pytest.approx(ticks.tolist(), rel=1e-6)
+    for low, high in ((-1900.0, 2000.0), (-1800.0, 2300.0), (-1500.0, 2000.0)):  # a step of 2000 leaves 0 alone
+        assert len(value_ticks(Scale("moment", (low, high)), 55.0)) >= 2
     capped = Scale("share", (-16.0, 330.0), 300.0)
     assert labels(value_ticks(capped, 80.0), 300.0)[-1] == "over 300"
 
