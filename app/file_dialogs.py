@@ -21,11 +21,24 @@ def ask_open(parent: QWidget, folder: str) -> Path | None:
 
 
 def ask_save(parent: QWidget, head: str, suggestion: Path, file_filter: str, suffix: str) -> Path | None:
-    """A name to write to, ending in `suffix`."""
+    """A name to write to, ending in `suffix`; None where nothing is to be written."""
     name, _ = QFileDialog.getSaveFileName(parent, head, str(suggestion), file_filter)
     if not name:
         return None
-    return Path(name) if name.endswith((suffix, Path(suffix).suffix)) else Path(name + suffix)
+    if name.endswith((suffix, suffix[suffix.rindex(".") :])):
+        return Path(name)
+    path = Path(name + suffix)
+    return path if not path.exists() or ask_replace(parent, path.name) else None  # Qt asked about another name
+
+
+def ask_replace(parent: QWidget, name: str) -> bool:
+    """May a file that stands there already be written over?"""
+    button = QMessageBox.StandardButton
+    box = QMessageBox(QMessageBox.Icon.NoIcon, "Filletwright", f"Write over {name}?", parent=parent)
+    box.setInformativeText("A file of this name stands there already.")
+    box.setStandardButtons(button.Yes | button.Cancel)
+    box.setDefaultButton(button.Cancel)
+    return int(box.exec()) == int(button.Yes)
 
 
 def ask_unsaved(parent: QWidget, name: str) -> Unsaved:

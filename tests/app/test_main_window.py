@@ -6,6 +6,7 @@ import pytest
 from PySide6.QtCore import Qt
 from pytestqt.qtbot import QtBot
 
+import app.file_dialogs as dialogs
 import app.main_window as frame
 import app.outputs as outputs
 from app.actions import COMMANDS
@@ -132,12 +133,33 @@ def test_ledger_and_picture(window: MainWindow, tmp_path: Path, monkeypatch: pyt
         assert (tmp_path / name).stat().st_size > 100
 
 
-def test_a_name_without_an_ending_gets_it(monkeypatch: pytest.MonkeyPatch) -> None:
-    import app.file_dialogs as dialogs
+@pytest.mark.parametrize(
+    ("suffix", "typed", "got"),
+    [
+        (".shaft.json", "a", "a.shaft.json"),
+        (".shaft.json", "a.json", "a.json"),
+        (".shaft.json", "a.shaft.json", "a.shaft.json"),
+        (".pdf", "a", "a.pdf"),
+        (".pdf", "a.pdf", "a.pdf"),
+        (".csv", "rev.2", "rev.2.csv"),
+    ],
+)
+def test_a_name_without_an_ending_gets_it(monkeypatch: pytest.MonkeyPatch, suffix: str, typed: str, got: str) -> None:
+    monkeypatch.setattr(dialogs.QFileDialog, "getSaveFileName", lambda *_: (typed, ""))
+    assert ask_save(None, "", Path("x"), "", suffix) == Path(got)  # type: ignore[arg-type]
 
-    for typed, got in (("a", "a.shaft.json"), ("a.json", "a.json"), ("a.shaft.json", "a.shaft.json")):
-        monkeypatch.setattr(dialogs.QFileDialog, "getSaveFileName", lambda *_, typed=typed: (typed, ""))
-        assert ask_save(None, "", Path("x"), "", ".shaft.json") == Path(got)  # type: ignore[arg-type]
+
+@pytest.mark.parametrize("yes", [True, False])
+def test_a_file_met_by_the_added_ending_is_asked_about(
+    monkeypatch: pytest.MonkeyPatch, tmp_path: Path, yes: bool
+) -> None:
+    (tmp_path / "a.shaft.json").write_text("mine")
+    asked = []
+    monkeypatch.setattr(dialogs.QFileDialog, "getSaveFileName", lambda *_: (str(tmp_path / "a"), ""))
+    monkeypatch.setattr(dialogs, "ask_replace", lambda _, name: asked.append(name) or yes)
+    path = ask_save(None, "", Path("x"), "", ".shaft.json")  # type: ignore[arg-type]
+    assert asked == ["a.shaft.json"]
+    assert path == (tmp_path / "a.shaft.json" if yes else None)
 
 
 def test_undo_and_redo_from_the_menu(window: MainWindow, qtbot: QtBot) -> None:
