@@ -12,6 +12,8 @@ from shaftcore.errors import FilletwrightError
 
 F = TypeVar("F", bound=Callable[..., Any])
 LOG = logging.getLogger("filletwright")
+WORDS_WIDTH = 360
+"""Pixels for the words of a message box; left to itself it breaks them after two or three."""
 _OPEN: dict[tuple[str, str], QMessageBox] = {}
 """Boxes on the screen, by their words; held here so that they live as long as they are shown."""
 
@@ -57,6 +59,7 @@ def tell(head: str, words: str, parent: QWidget | None = None) -> None:
     above = parent or QApplication.activeWindow()
     box = QMessageBox(QMessageBox.Icon.NoIcon, "Filletwright", head, QMessageBox.StandardButton.Ok, above)
     box.setInformativeText(words)
+    box.setStyleSheet(f"QLabel#qt_msgbox_informativelabel {{ min-width: {WORDS_WIDTH}px; }}")
     box.setAttribute(Qt.WidgetAttribute.WA_DeleteOnClose)
     _OPEN[head, words] = box
     box.finished.connect(lambda _: _OPEN.pop((head, words), None))
