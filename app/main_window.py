@@ -179,6 +179,7 @@ class MainWindow(QMainWindow):
     def begin_new(self) -> None:
         if self._may_leave():
             self.document.load(Shaft(), None)
+            self.bench.setFocus()
 
     def ask_open(self) -> None:
         path = ask_open(self, self.preferences.folder())
@@ -195,6 +196,7 @@ class MainWindow(QMainWindow):
         if not self._may_leave():
             return False
         self.document.load(shaft, path)
+        self.bench.setFocus()
         self._note_file(path)
         return True
 
@@ -202,6 +204,7 @@ class MainWindow(QMainWindow):
         """Open a demo shaft as an unnamed one, so that the demo itself stays as it is."""
         if self._may_leave():
             self.document.load(read_shaft(path), None)
+            self.bench.setFocus()
 
     def save(self) -> bool:
         return self._save_to(self.document.path) if self.document.path else self.save_as()
@@ -234,10 +237,10 @@ class MainWindow(QMainWindow):
         parts += [fold.content for fold in self.folds.values() if fold.opened]
         now = QApplication.focusWidget()
         at = next((i for i, part in enumerate(parts) if now and (part is now or part.isAncestorOf(now))), -1)
-        target = parts[(at + 1) % len(parts)]
-        inner = target if target.focusPolicy() & Qt.FocusPolicy.TabFocus else target.nextInFocusChain()
-        if inner is not None:
-            inner.setFocus(Qt.FocusReason.ShortcutFocusReason)
+        stops = map(_first_stop, parts[at + 1 :] + parts[: at + 1])
+        stop = next((stop for stop in stops if stop is not None), None)
+        if stop is not None:
+            stop.setFocus(Qt.FocusReason.ShortcutFocusReason)
 
     def open_manual(self, page: str) -> None:
         if self._manual is None:
@@ -283,3 +286,16 @@ class MainWindow(QMainWindow):
         files = [url.toLocalFile() for url in event.mimeData().urls() if url.isLocalFile()]
         if files:
             self.open_file(Path(files[0]))
+
+
+def _first_stop(part: QWidget) -> QWidget | None:
+    """The first widget of a part that takes the keyboard; None where there is none."""
+    inner: QWidget | None = part
+    while inner is not None:
+        at_home = inner is part or part.isAncestorOf(inner)
+        if at_home and inner.isVisible() and inner.isEnabled() and inner.focusPolicy() & Qt.FocusPolicy.TabFocus:
+            return inner
+        inner = inner.nextInFocusChain()
+        if inner is part:
+            return None
+    return None

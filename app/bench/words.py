@@ -4,6 +4,8 @@ import math
 from collections.abc import Callable
 from typing import Any
 
+from app.bench.tools import BY_KEY as TOOLS
+from app.bench.tools import DRAW
 from app.document import Scene
 from shaftcore.number_text import beside_unit, brief, with_unit
 from shaftcore.results import Results
@@ -14,9 +16,12 @@ PLUS_MINUS = " ± "
 NEXT_STEP = {
     "segments": (
         "Draw the first segment",
-        "Press on the centre line and pull out length and diameter; a typed number fixes each.",
+        f"Press on the centre line, or {DRAW.letter}, and pull out length and diameter; a typed number fixes each.",
     ),
-    "supports": ("", "Take a support from the kit, or press its key, and click where it goes."),
+    "supports": (
+        "",
+        f"Take a support from the kit, or press {TOOLS['support'].letter}, and click or type where it goes.",
+    ),
 }
 """By the field that is missing: heading ("" for the problem's own remedy) and how it is done here."""
 

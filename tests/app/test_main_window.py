@@ -223,6 +223,25 @@ def test_f6_goes_round_the_parts(window: MainWindow, qtbot: QtBot) -> None:
     assert len(seen) >= 4
 
 
+def test_f6_stops_only_where_the_keyboard_can_be_used(window: MainWindow) -> None:
+    """An empty shaft, nothing chosen: that part has nothing to give the keyboard to and is passed over."""
+    window.activateWindow()
+    window.folds["chosen"].set_opened(True)
+    window.begin_new()
+    assert window.focusWidget() is window.bench
+    parts = [window.bench, window.kit, window.traces, *(fold.content for fold in window.folds.values() if fold.opened)]
+    for _ in range(2 * len(parts)):
+        window.next_part()
+        focus = window.focusWidget()
+        assert focus is not None
+        assert focus.isVisible()
+        assert any(part is focus or part.isAncestorOf(focus) for part in parts)
+    for _ in parts:
+        if window.focusWidget() is not window.bench:
+            window.next_part()
+    assert window.focusWidget() is window.bench
+
+
 def test_themes_change_while_running(window: MainWindow) -> None:
     window.open_copy(MENDED)
     window.choose_theme("dark")
