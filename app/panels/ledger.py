@@ -134,8 +134,7 @@ class Ledger(QWidget):
 
     @guarded
     def _shown(self, scene: Scene) -> None:
-        self.table.empty_words = " ".join([NOT_YET, *(f"Missing: {p.remedy}." for p in scene.missing)])
-        self.table.viewport().update()
+        self._say_why_empty(scene)
         self._following = True
         try:
             self.model.show_scene(scene)
@@ -146,6 +145,12 @@ class Ledger(QWidget):
             self._fitted = scene.results
             self.table.fit_columns(calmly=True)
             self.table.viewport().update()
+
+    def _say_why_empty(self, scene: Scene) -> None:
+        missing = (f"Missing: {problem.remedy}." for problem in scene.missing)
+        unmatched = f"No station matches “{self.search.text()}”."
+        self.table.empty_words = " ".join([NOT_YET, *missing]) if scene.results is None else unmatched
+        self.table.viewport().update()
 
     def _follow(self, scene: Scene) -> None:
         """Make the chosen station's row the current one."""
@@ -173,7 +178,7 @@ class Ledger(QWidget):
     @guarded
     def _searched(self, text: str) -> None:
         self.model.set_search(text)
-        self.table.empty_words = f"No station matches “{text}”." if text else NOT_YET
+        self._say_why_empty(self._document.scene)
 
     @guarded
     def _ordered(self, index: int) -> None:

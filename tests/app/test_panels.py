@@ -119,7 +119,7 @@ def test_the_picker_ticks_columns(ledger: Ledger) -> None:
     ledger.picker.close()
 
 
-def test_search_keeps_what_matches_and_says_when_nothing_does(ledger: Ledger) -> None:
+def test_search_keeps_what_matches_and_says_when_nothing_does(ledger: Ledger, document: Document) -> None:
     everything = ledger.model.rowCount()
     QTest.keyClicks(ledger.search, "shoulder s1")
     assert _column(ledger, "place") == ["Shoulder s1|s2"]
@@ -129,6 +129,11 @@ def test_search_keeps_what_matches_and_says_when_nothing_does(ledger: Ledger) ->
     ledger.search.setText("no such place")
     assert (ledger.model.rowCount(), "no such place" in ledger.table.empty_words) == (0, True)
     ledger.table.grab()
+    document.change(replace_thing(document.shaft, "F1", force=6500.0), "Force")
+    assert (ledger.model.rowCount(), "no such place" in ledger.table.empty_words) == (0, True)
+    document.change(replace(document.shaft, supports=()), "Take the supports away")
+    assert "set two supports" in ledger.table.empty_words
+    document.undo_stack.undo()
     ledger.search.clear()
     assert ledger.model.rowCount() == everything
 
