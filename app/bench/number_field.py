@@ -60,9 +60,10 @@ class NumberField(QFrame):
         bench, layout = self.parentWidget(), self.layout()
         if bench is None or layout is None:
             return
-        # the words wrap: their height is known only for a width
         layout.activate()
-        self.resize(WIDTH, layout.totalHeightForWidth(WIDTH))
+        # words that wrap have a height for a width; without words there is none to ask for
+        wrapped = layout.hasHeightForWidth()
+        self.resize(WIDTH, layout.totalHeightForWidth(WIDTH) if wrapped else layout.totalSizeHint().height())
         x = min(max(self._at.x() + 12, 2), max(bench.width() - self.width() - 2, 2))
         y = min(max(self._at.y() - self.height() - 12, 2), max(bench.height() - self.height() - 2, 2))
         self.move(round(x), round(y))

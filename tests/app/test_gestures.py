@@ -617,6 +617,19 @@ def test_enter_opens_the_number_and_a_refusal_stays_beside_it(desk: Desk) -> Non
     assert desk.bench.hasFocus()
 
 
+def test_the_number_field_can_be_seen_while_nothing_is_wrong(desk: Desk) -> None:
+    desk.click(desk.at("shoulder", "s1", "radius"))
+    desk.keys(Key.Key_Return)
+    field = desk.hand.number_field
+    assert field is not None
+    for typed in ("2", Key.Key_Backspace, "3"):
+        desk.keys(typed)
+        QApplication.processEvents()
+        assert desk.bench.rect().contains(field.geometry())
+        assert field.rect().contains(field.field.geometry())
+        assert field.field.height() >= field.field.sizeHint().height()
+
+
 def test_all_of_a_long_refusal_can_be_read_in_the_number_field(desk: Desk) -> None:
     desk.mouse(QEvent.Type.MouseButtonDblClick, desk.at("shoulder", "s1", "radius"), LEFT, LEFT)
     field = desk.hand.number_field
