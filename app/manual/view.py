@@ -15,6 +15,10 @@ from PySide6.QtWidgets import (
 from app.error_messages import guarded
 from app.manual.book import BY_KEY, PAGES, Page, page_text, pages_with
 
+FRAME = 8
+"""Pixels around the titles of the pages."""
+NOTHING_FOUND = "No page has these words"
+
 
 class ManualWindow(QMainWindow):
     """Shows the pages of the book; links between pages are written ``[words](page:key)``."""
@@ -40,14 +44,15 @@ class ManualWindow(QMainWindow):
         across = QSplitter()
         across.addWidget(side)
         across.addWidget(self.browser)
-        across.setSizes([230, 690])
         across.setStretchFactor(1, 1)
         self.setCentralWidget(across)
-        self.resize(920, 640)
+        self.resize(960, 640)
         self.search.textChanged.connect(self._searched)
         self.contents.currentItemChanged.connect(self._picked)
         self.browser.anchorClicked.connect(self._followed)
         self._list(list(PAGES))
+        self.contents.setMinimumWidth(self.contents.sizeHintForColumn(0) + 2 * FRAME)
+        across.setSizes([0, self.width()])  # the titles as wide as they are, the rest for the page
 
     def open_page(self, key: str) -> None:
         """Show a page and bring the window to the front."""
@@ -67,15 +72,26 @@ class ManualWindow(QMainWindow):
 
     @guarded
     def _searched(self, words: str) -> None:
-        self._list(pages_with(words))
-        if words and self.contents.count():
+        found = pages_with(words)
+        self._list(found)
+        if not found:
+            nothing = QListWidgetItem(NOTHING_FOUND)
+            nothing.setFlags(Qt.ItemFlag.NoItemFlags)
+            self.contents.addItem(nothing)
+        elif words:
             self.contents.setCurrentRow(0)
-            self.browser.find(words.split()[0])
 
     @guarded
     def _picked(self, item: QListWidgetItem | None, _: QListWidgetItem | None) -> None:
         if item is not None:
             self.browser.setMarkdown(page_text(item.data(Qt.ItemDataRole.UserRole)))
+            self._mark(self.search.text())
+
+    def _mark(self, words: str) -> None:
+        """Go to the searched words, or to the first of them where they do not stand together."""
+        for sought in (words.strip(), *words.split()[:1]):
+            if sought and self.browser.find(sought):
+                return
 
     @guarded
     def _followed(self, url: QUrl) -> None:

@@ -13,6 +13,7 @@ from app.actions import COMMANDS
 from app.file_dialogs import Unsaved, ask_save
 from app.main_window import MainWindow
 from app.manual.book import PAGES, page_text, pages_with
+from app.manual.view import NOTHING_FOUND
 from app.preferences import Preferences
 from app.theme import DARK, LIGHT
 from shaftcore.demo import demo_shafts
@@ -275,6 +276,14 @@ def test_the_manual_has_every_page_and_finds_words(window: MainWindow) -> None:
     assert "licensed" in manual.browser.toPlainText()
     manual.search.setText("endurance")
     assert manual.contents.count() >= 2
+    manual.search.setText("bearing corner")  # the words stand together further down than the first of them
+    assert manual.browser.textCursor().selectedText().lower() == "bearing corner"
+    manual.search.setText("no such words anywhere")
+    assert [manual.contents.item(i).text() for i in range(manual.contents.count())] == [NOTHING_FOUND]
+    manual.search.clear()
+    assert manual.contents.count() == len(PAGES)
+    manual.contents.setCurrentRow(1)
+    assert not manual.contents.horizontalScrollBar().isVisible()
 
 
 def test_links_of_the_manual_lead_somewhere() -> None:
