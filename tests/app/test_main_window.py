@@ -283,6 +283,8 @@ def test_the_manual_has_every_page_and_finds_words(window: MainWindow) -> None:
     manual.search.clear()
     assert manual.contents.count() == len(PAGES)
     manual.contents.setCurrentRow(1)
+    assert manual.contents.width() >= manual.contents.sizeHintForColumn(0)
+    assert not manual.contents.visibleRegion().isEmpty()
     assert not manual.contents.horizontalScrollBar().isVisible()
 
 
