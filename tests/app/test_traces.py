@@ -23,7 +23,7 @@ from app.traces.bands import GAP, bands_of, with_border_moved
 from app.traces.limits import Scale, scales_of
 from app.traces.live import FAR_OUT, Polyline, changed_tracks, strands, to_pixels
 from app.traces.pace import Pace
-from app.traces.reading import station_text, value_at
+from app.traces.reading import least_text, station_text, value_at
 from app.traces.ticks import labels, value_ticks
 from app.traces.tracks import BY_KEY, TRACKS, Curve, curves_of
 from app.traces.view import TraceView
@@ -504,3 +504,11 @@ def test_unloaded_shaft_is_drawn(view: TraceView, document: Document) -> None:
     document.point_at(33.0)
     assert not picture(view).isNull()
     assert "unloaded" in view.accessibleDescription()
+
+
+def test_a_shaft_without_stress_has_no_least_margin(document: Document) -> None:
+    document.load(a_shaft(), None)
+    for loads, words in ((document.shaft.loads, "at station"), ((), "no station is stressed")):
+        document.change(replace(document.shaft, loads=loads), "Loads")
+        assert document.scene.results is not None
+        assert words in least_text(document.scene.results, "SI")
