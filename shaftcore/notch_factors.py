@@ -1,13 +1,13 @@
 """Kt, q and Kf of every raiser under bending, tension and torsion, one call a kind."""
 
-from collections.abc import Callable, Sequence
+from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
 
 import numpy as np
 from numpy.typing import NDArray
 
 from shaftcore.notch_sensitivity import fatigue_factor, material_length, sensitivity
-from shaftcore.notches._contract import LOAD_SORTS, Array, Fit, RaiserKind, Site, Sizes
+from shaftcore.notches._contract import LOAD_SORTS, Array, Fit, Fits, RaiserKind, Site, Sizes
 from shaftcore.notches.kinds import KINDS
 from shaftcore.shaft import Judgement
 
@@ -16,6 +16,8 @@ PEAK_SHARES = np.geomspace(0.005, 2.2, 28)
 grows as r^-p, Peterson's Kf peaks at r = a (1 - p)/p and Neuber's, for p < 1/2, at a ((1/2 - p)/p)²."""
 
 JUST_ABOVE = 1 + 1e-9
+SLACK = 1e-9
+"""Shares by which a radius lies above a seam, and by which a size may miss the end of a range by rounding."""
 
 LOAD_ROWS = {sort: row for row, sort in enumerate(LOAD_SORTS)}
 
@@ -43,25 +45,52 @@ def notch_factors(sites: Sequence[Site | None], judgement: Judgement, tensile_st
     """Factors for one entry a station, None for a plain section."""
     every = _plain(len(sites))
     for key, kind in KINDS.items():
-        index = [i for i, site in enumerate(sites) if site is not None and site.kind == key]
-        if index:
-            chosen = [site.sizes for site in sites if site is not None and site.kind == key]
+        index, chosen = _of_kind(key, sites)
+        if chosen:
             sizes = {name: np.array([own[name] for own in chosen]) for name in kind.size_symbols}
             for name, values in vars(factors_of(kind, sizes, judgement, tensile_strength)).items():
                 getattr(every, name)[:, index] = values
     return every
 
 
+def _of_kind(key: str, sites: Sequence[Site | None]) -> tuple[NDArray[np.intp], list[Mapping[str, float]]]:
+    """Which of the sites are of one kind, and their sizes."""
+    chosen = [(i, site.sizes) for i, site in enumerate(sites) if site is not None and site.kind == key]
+    return np.array([i for i, _ in chosen], dtype=np.intp), [sizes for _, sizes in chosen]
+
+
 def factors_of(kind: RaiserKind, sizes: Sizes, judgement: Judgement, tensile_strength: float) -> NotchFactors:
     """Factors of raisers of one kind for arrays (n) of their sizes, in mm."""
-    found, measures = _plain(len(sizes["r"])), kind.parameters(sizes)
-    for sort, fit in kind.fits[judgement.kt_source].items():
-        row = LOAD_ROWS[sort]
-        _one_load(found, row, fit, sizes, judgement.sensitivity, tensile_strength)
-        found.outside[row] = _outside(fit, measures)
+    fits, rule, own = kind.fits[judgement.kt_source], judgement.sensitivity, sizes["r"]
+    seams = fits.seams(sizes)
+    radii = np.empty((*seams.shape[:2], 1 + seams.shape[2]))
+    radii[..., 0], radii[..., 1:] = own, seams * JUST_ABOVE
+    kt = np.maximum(fits.kt({**_upright(sizes), "r": radii}), 1.0)
+    q = np.empty_like(kt)
+    for rows, torsion in ((slice(0, -1), False), (slice(-1, None), True)):
+        q[rows] = sensitivity(rule, radii[rows], tensile_strength, torsion)
+    kf, radius = _highest(own, radii, fatigue_factor(kt, q))
+    for row, (sort, fit) in enumerate(fits.items()):
+        _raise_to_peak(kf[row], radius[row], fit, sizes, rule, tensile_strength, sort == "torsion")
+    outside, low_by = _reservations(fits, kind.parameters(sizes), sizes)
+    return NotchFactors(kt[..., 0], q[..., 0], kf, radius > own, radius, outside, low_by)
+
+
+def _upright(sizes: Sizes) -> dict[str, Array]:
+    """Sizes (n) as (n, 1), for several radii each."""
+    return {name: values[:, None] for name, values in sizes.items()}
+
+
+def _reservations(fits: Fits, measures: Sizes, sizes: Sizes) -> tuple[NDArray[np.bool_], Array]:
+    """Where each fit is used outside its range, and the share by which finite elements lie above it (3, n)."""
+    sharpness, cut = sizes["r"] / sizes["d"], sizes["r"] / sizes["h"]
+    outside, low_by = np.zeros((len(fits), len(cut)), dtype=bool), np.zeros((len(fits), len(cut)))
+    for row, fit in enumerate(fits.values()):
+        for r in fit.ranges:
+            outside[row] |= (measures[r.symbol] < r.low * (1 - SLACK)) | (measures[r.symbol] > r.high * (1 + SLACK))
         if fit.low_by:
-            found.low_by[row] = _shortfall(fit, sizes["r"] / sizes["d"], sizes["r"] / sizes["h"])
-    return found
+            low_by[row] = _shortfall(fit, sharpness, cut)
+    return outside, low_by
 
 
 def _shortfall(fit: Fit, sharpness: Array, cut: Array) -> Array:
@@ -69,10 +98,10 @@ def _shortfall(fit: Fit, sharpness: Array, cut: Array) -> Array:
 
     Sharper than the sharpest root known it goes on rising by the logarithm of r/d as between the last two.
     """
-    known, share = (np.array(column) for column in zip(*fit.low_by, strict=True))
-    slope = max((share[0] - share[1]) / np.log(known[1] / known[0]), 0.0)
-    beyond = slope * np.log(np.maximum(known[0] / sharpness, 1.0))
-    low: Array = np.interp(sharpness, known, share) + beyond
+    known, share, growth = fit.low_knots
+    low: Array = np.interp(sharpness, known, share)
+    if growth and sharpness.min() < known[0]:
+        low += growth * np.log(np.maximum(known[0] / sharpness, 1.0))
     if fit.low_when_cut:
         arcs, shares = (np.array(column) for column in zip(*fit.low_when_cut, strict=True))
         low = np.maximum(low, np.interp(cut, arcs, shares))
@@ -92,44 +121,39 @@ def kf_of(fit: Fit, sizes: Sizes, rule: str, tensile_strength: float, torsion: b
     return kt, q, fatigue_factor(kt, q)
 
 
-def _one_load(found: NotchFactors, row: int, fit: Fit, sizes: Sizes, rule: str, tensile_strength: float) -> None:
-    torsion, own = row == LOAD_ROWS["torsion"], sizes["r"]
-
-    def factors_at(chosen: Sizes, radii: Array) -> tuple[Array, Array, Array]:
-        grid = {name: values[:, None] for name, values in chosen.items()}
-        return kf_of(fit, {**grid, "r": radii}, rule, tensile_strength, torsion)
-
-    radii = np.column_stack([own, *(seam * JUST_ABOVE for seam in fit.seams(sizes))])
-    kt, q, every = factors_at(sizes, radii)
-    kf, radius = _highest(own, radii, every)
-    tried = material_length(rule, tensile_strength, torsion) * PEAK_SHARES
-    small = own < tried[-1]
-    if small.any():
-        chosen = {name: values[small] for name, values in sizes.items()}
-        peak, at = _peak_above(chosen, np.tile(tried, (len(chosen["r"]), 1)), lambda *grid: factors_at(*grid)[2])
-        higher = peak > kf[small]
-        kf[small], radius[small] = np.where(higher, peak, kf[small]), np.where(higher, at, radius[small])
-    found.kt[row], found.q[row], found.kf[row], found.radius[row] = kt[:, 0], q[:, 0], kf, radius
-    found.held[row] = radius > own
-
-
-def _peak_above(sizes: Sizes, radii: Array, kf_at: Callable[[Sizes, Array], Array]) -> tuple[Array, Array]:
-    """Largest Kf of the radii tried (n, m) that are not below the raiser's own, and its radius; 0 where none is.
+def _raise_to_peak(
+    kf: Array, radius: Array, fit: Fit, sizes: Sizes, rule: str, tensile_strength: float, torsion: bool
+) -> None:
+    """Put the peak of Kf, and its radius, in the place of what sharper roots have.
 
     Kt grows as r^-½ at most while q falls in proportion to √r or r, so Kf can pass a peak and would
     fall to 1 for a sharp corner; no real corner does, so below the peak Kf stays at it. The same
     holds at the seams of a fit, where Kt may jump.
     """
-    kf = kf_at(sizes, radii)
-    finer = _vertex(radii, kf, radii >= sizes["r"][:, None])[:, None]
-    return _highest(sizes["r"], np.hstack([radii, finer]), np.hstack([kf, kf_at(sizes, finer)]))
+    length = material_length(rule, tensile_strength, torsion)
+    small = np.flatnonzero(sizes["r"] < length * PEAK_SHARES[-1])
+    if not len(small):
+        return
+    chosen = {name: values[small] for name, values in sizes.items()}
+    radii = np.tile(length * PEAK_SHARES, (len(small), 1))
+
+    def kf_at(radii: Array) -> Array:
+        return kf_of(fit, {**_upright(chosen), "r": radii}, rule, tensile_strength, torsion)[2]
+
+    every = kf_at(radii)
+    finer = _vertex(radii, every, radii >= chosen["r"][:, None])[:, None]
+    radii, every = np.hstack([radii, finer]), np.hstack([every, kf_at(finer)])
+    peak, at = _highest(chosen["r"], radii, every)
+    higher = peak > kf[small]
+    kf[small[higher]], radius[small[higher]] = peak[higher], at[higher]
 
 
 def _highest(own: Array, radii: Array, kf: Array) -> tuple[Array, Array]:
-    """Largest Kf (n) among radii (n, m) not below `own`, the first on a tie, and its radius."""
-    allowed = np.where(radii >= own[:, None], kf, 0.0)
-    top, rows = allowed.argmax(axis=1), np.arange(len(kf))
-    return allowed[rows, top], radii[rows, top]
+    """Largest Kf (..., n) among radii (..., n, m) not below `own` (n), the first on a tie, and its radius."""
+    allowed = np.where(radii >= own[:, None], kf, 0.0).reshape(-1, radii.shape[-1])
+    top, rows = allowed.argmax(axis=1), np.arange(len(allowed))
+    shape = radii.shape[:-1]
+    return allowed[rows, top].reshape(shape), radii.reshape(allowed.shape)[rows, top].reshape(shape)
 
 
 def _vertex(radii: Array, kf: Array, allowed: NDArray[np.bool_]) -> Array:
@@ -140,11 +164,3 @@ def _vertex(radii: Array, kf: Array, allowed: NDArray[np.bool_]) -> Array:
     bend = np.minimum(before - 2 * at + after, -1e-12)
     shift = np.clip((before - after) / (2 * bend), -1.0, 1.0)
     return radii[rows, middle] * (radii[rows, 1] / radii[rows, 0]) ** shift
-
-
-def _outside(fit: Fit, measures: Sizes) -> NDArray[np.bool_]:
-    slack = 1e-9
-    return np.any(
-        [(measures[r.symbol] < r.low * (1 - slack)) | (measures[r.symbol] > r.high * (1 + slack)) for r in fit.ranges],
-        axis=0,
-    )

@@ -77,7 +77,7 @@ def test_stepped_shafts_bend_as_the_frame_does(shaft: Shaft, plane: int):
     forces = [load for load in shaft.loads if isinstance(load, RadialForce)]
     x = nodes_of(shaft, forces)
     assume(any(abs(upward(f, plane)) > 1 for f in forces))
-    assume(np.diff(x).min() > 0.001 * shaft.length)  # stiffness goes by the cube of the length: the frame loses digits
+    assume(np.diff(x).min() > 0.005 * shaft.length)  # stiffness goes by the cube of the length: the frame loses digits
     loads, model = evaluate(shaft).along, frame(shaft, x, forces, plane)
     rows = np.searchsorted(loads.x, x, "right") - 1
     nodes = [model.nodes[f"N{i}"] for i in range(len(x))]
