@@ -228,7 +228,14 @@ class Shaft:
     judgement: Judgement = part("Judgement", Judgement, default=Judgement())
     segments: tuple[Segment, ...] = part("Segments, left to right", Segment, default=(), many=True)
     raisers: tuple[Raiser, ...] = part("Raisers on the segments", *RAISER_RECORDS, default=(), many=True)
-    supports: tuple[Support, ...] = part("Supports", Support, default=(), many=True, most=2)
+    supports: tuple[Support, ...] = part(
+        "Supports",
+        Support,
+        default=(),
+        many=True,
+        most=2,
+        too_many="remove one: this version carries a shaft on two supports",
+    )
     loads: tuple[Load, ...] = part("Loads", *LOAD_RECORDS, default=(), many=True)
 
     @property

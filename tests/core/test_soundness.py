@@ -121,6 +121,12 @@ def test_what_cannot_be_is_named(case: str):
         evaluate(shaft)
 
 
+def test_a_third_support_is_refused_with_what_to_do() -> None:
+    (problem,) = problems_of(replace(SOUND, supports=(*SOUND.supports, Support("C", 60.0))))
+    assert (problem.path, problem.value, problem.allowed) == ("supports", "3 entries", "2 at most")
+    assert problem.remedy == "remove one: this version carries a shaft on two supports"
+
+
 @pytest.mark.parametrize("case", MISSING)
 def test_what_is_missing_is_named(case: str):
     shaft, path = MISSING[case]
