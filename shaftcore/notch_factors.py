@@ -65,20 +65,27 @@ def factors_of(kind: RaiserKind, sizes: Sizes, judgement: Judgement, tensile_str
     seams = fits.seams(sizes)
     radii = np.empty((*seams.shape[:2], 1 + seams.shape[2]))
     radii[..., 0], radii[..., 1:] = own, seams * JUST_ABOVE
-    kt = np.maximum(fits.kt({**_upright(sizes), "r": radii}), 1.0)
-    q = np.empty_like(kt)
-    for rows, torsion in ((slice(0, -1), False), (slice(-1, None), True)):
-        q[rows] = sensitivity(rule, radii[rows], tensile_strength, torsion)
-    kf, radius = _highest(own, radii, fatigue_factor(kt, q))
-    for row, (sort, fit) in enumerate(fits.items()):
-        _raise_to_peak(kf[row], radius[row], fit, sizes, rule, tensile_strength, sort == "torsion")
+    kt, q, every = _kf_over(fits, sizes, radii, rule, tensile_strength)
+    kf, radius = _highest(own, radii, every)
+    lengths = np.array([material_length(rule, tensile_strength, sort == "torsion") for sort in fits])
+    small = np.flatnonzero(own < lengths.max() * PEAK_SHARES[-1])
+    if len(small):
+        chosen = {name: values[small] for name, values in sizes.items()}
+        peak, at = _peaks_above(fits, chosen, lengths, rule, tensile_strength)
+        higher = peak > kf[:, small]
+        kf[:, small], radius[:, small] = np.where(higher, (peak, at), (kf[:, small], radius[:, small]))
     outside, low_by = _reservations(fits, kind.parameters(sizes), sizes)
     return NotchFactors(kt[..., 0], q[..., 0], kf, radius > own, radius, outside, low_by)
 
 
-def _upright(sizes: Sizes) -> dict[str, Array]:
-    """Sizes (n) as (n, 1), for several radii each."""
-    return {name: values[:, None] for name, values in sizes.items()}
+def _kf_over(fits: Fits, sizes: Sizes, radii: Array, rule: str, tensile_strength: float) -> tuple[Array, Array, Array]:
+    """Kt, q and Kf for root radii (3 loads, n, m) on raisers of n sizes, as the formulas give them."""
+    kt = np.maximum(fits.kt({**{name: values[:, None] for name, values in sizes.items()}, "r": radii}), 1.0)
+    twist = LOAD_ROWS["torsion"]
+    q = np.empty_like(kt)
+    q[:twist] = sensitivity(rule, radii[:twist], tensile_strength)
+    q[twist] = sensitivity(rule, radii[twist], tensile_strength, torsion=True)
+    return kt, q, fatigue_factor(kt, q)
 
 
 def _reservations(fits: Fits, measures: Sizes, sizes: Sizes) -> tuple[NDArray[np.bool_], Array]:
@@ -114,53 +121,40 @@ def _plain(count: int) -> NotchFactors:
     return NotchFactors(np.ones(shape), none, np.ones(shape), no, none.copy(), no.copy(), none.copy())
 
 
-def kf_of(fit: Fit, sizes: Sizes, rule: str, tensile_strength: float, torsion: bool) -> tuple[Array, Array, Array]:
-    """Kt, q and Kf of one fit for arrays of sizes, as the formulas give them."""
-    kt = np.maximum(fit.value(sizes), 1.0)
-    q = sensitivity(rule, sizes["r"], tensile_strength, torsion)
-    return kt, q, fatigue_factor(kt, q)
-
-
-def _raise_to_peak(
-    kf: Array, radius: Array, fit: Fit, sizes: Sizes, rule: str, tensile_strength: float, torsion: bool
-) -> None:
-    """Put the peak of Kf, and its radius, in the place of what sharper roots have.
+def _peaks_above(fits: Fits, sizes: Sizes, lengths: Array, rule: str, tensile_strength: float) -> tuple[Array, Array]:
+    """Largest Kf (3, n) of radii that are not below the raiser's own, and its radius; 0 where none is.
 
     Kt grows as r^-½ at most while q falls in proportion to √r or r, so Kf can pass a peak and would
     fall to 1 for a sharp corner; no real corner does, so below the peak Kf stays at it. The same
     holds at the seams of a fit, where Kt may jump.
     """
-    length = material_length(rule, tensile_strength, torsion)
-    small = np.flatnonzero(sizes["r"] < length * PEAK_SHARES[-1])
-    if not len(small):
-        return
-    chosen = {name: values[small] for name, values in sizes.items()}
-    radii = np.tile(length * PEAK_SHARES, (len(small), 1))
-
-    def kf_at(radii: Array) -> Array:
-        return kf_of(fit, {**_upright(chosen), "r": radii}, rule, tensile_strength, torsion)[2]
-
-    every = kf_at(radii)
-    finer = _vertex(radii, every, radii >= chosen["r"][:, None])[:, None]
-    radii, every = np.hstack([radii, finer]), np.hstack([every, kf_at(finer)])
-    peak, at = _highest(chosen["r"], radii, every)
-    higher = peak > kf[small]
-    kf[small[higher]], radius[small[higher]] = peak[higher], at[higher]
+    own = sizes["r"]
+    tried = lengths[:, None, None] * PEAK_SHARES
+    radii = np.repeat(tried, len(own), axis=1)
+    kf = _kf_over(fits, sizes, radii, rule, tensile_strength)[2]
+    finer = _vertex(radii, kf, radii >= own[:, None])[..., None]
+    finest = _kf_over(fits, sizes, finer, rule, tensile_strength)[2]
+    return _highest(own, np.concatenate([radii, finer], axis=-1), np.concatenate([kf, finest], axis=-1))
 
 
 def _highest(own: Array, radii: Array, kf: Array) -> tuple[Array, Array]:
-    """Largest Kf (..., n) among radii (..., n, m) not below `own` (n), the first on a tie, and its radius."""
-    allowed = np.where(radii >= own[:, None], kf, 0.0).reshape(-1, radii.shape[-1])
-    top, rows = allowed.argmax(axis=1), np.arange(len(allowed))
-    shape = radii.shape[:-1]
-    return allowed[rows, top].reshape(shape), radii.reshape(allowed.shape)[rows, top].reshape(shape)
+    """Largest Kf (3, n) among radii (3, n, m) not below `own` (n), the first on a tie, and its radius."""
+    rows, columns, top = _top(kf, radii >= own[:, None])
+    kept = radii[rows, columns, top]
+    return np.where(kept >= own, kf[rows, columns, top], 0.0), kept
 
 
 def _vertex(radii: Array, kf: Array, allowed: NDArray[np.bool_]) -> Array:
     """Radius at the top of the parabola, over log r, through the largest allowed Kf and its neighbours."""
-    top, rows = np.where(allowed, kf, 0.0).argmax(axis=1), np.arange(len(kf))
-    middle = np.clip(top, 1, kf.shape[1] - 2)
-    before, at, after = (kf[rows, middle + step] for step in (-1, 0, 1))
+    rows, columns, top = _top(kf, allowed)
+    middle = np.clip(top, 1, kf.shape[-1] - 2)
+    before, at, after = (kf[rows, columns, middle + step] for step in (-1, 0, 1))
     bend = np.minimum(before - 2 * at + after, -1e-12)
     shift = np.clip((before - after) / (2 * bend), -1.0, 1.0)
-    return radii[rows, middle] * (radii[rows, 1] / radii[rows, 0]) ** shift
+    return radii[rows, columns, middle] * (radii[..., 1] / radii[..., 0]) ** shift
+
+
+def _top(kf: Array, allowed: NDArray[np.bool_]) -> tuple[NDArray[np.intp], NDArray[np.intp], NDArray[np.intp]]:
+    """Indices of the largest allowed Kf along the last axis."""
+    rows, columns = np.ogrid[: kf.shape[0], : kf.shape[1]]
+    return rows, columns, np.where(allowed, kf, 0.0).argmax(axis=-1)

@@ -18,11 +18,14 @@ SMALLEST, USUAL = 0.05, 0.3
 """Radii (mm): below the first none is tried, no drawing asks for a sharper fillet; those below the
 second, where Kf must be held at its peak at some cost, only where the second is enough."""
 
-TRIED, REFINED = 12, 32
+TRIED, SPREAD = 48, 16
 """How many radii are tried over a whole range, and again between the last too small and the first enough."""
 
-BEYOND = np.array([0.0, 1e-9, 1e-7, 1e-6, *np.geomspace(3e-6, 1e-3, 12), np.inf])
-"""Shares by which radii beyond the estimated one are tried, so that the one taken is surely enough."""
+ABOUT = np.concatenate([-np.geomspace(1e-2, 1e-6, 24), [0.0], np.geomspace(1e-6, 1e-2, 24)])
+"""Shares by which radii about the estimated one are tried beside those."""
+
+PRECISE = 5e-4
+"""Share by which the radius found may be too large."""
 
 ENOUGH = 1 - 1e-12
 """Utilisation that is enough: 1, but for rounding in the analysis of the shaft with the radius found."""
@@ -36,7 +39,7 @@ class RadiusWindow:
     """What a fillet may be, in mm. `place` as in its station, `limited_by` in the reader's units.
 
     `needed` is the smallest radius with which the station reaches both asked factors, never too small
-    and too large by a share of 1e-3 at most; None where none that was tried does. Where the smallest
+    and too large by a share of `PRECISE` at most; None where none that was tried does. Where the smallest
     radius tried suffices, it is that.
     """
 
@@ -80,9 +83,11 @@ def _least(results: Results, index: int, site: Site, low: float, high: float) ->
     enough = int(np.argmax(use <= ENOUGH))
     if enough == 0:
         return low
-    radii = _spread(radii[enough - 1], radii[enough], REFINED)
-    radii = _about_the_crossing(radii, _utilisation(results, index, site, radii))
-    return float(radii[np.argmax(_utilisation(results, index, site, radii) <= ENOUGH)])
+    while radii[enough] > radii[enough - 1] * (1 + PRECISE):
+        radii = _between(radii[enough - 1 : enough + 1], use[enough - 1 : enough + 1])
+        use = _utilisation(results, index, site, radii)
+        enough = int(np.argmax(use <= ENOUGH))
+    return float(radii[enough])
 
 
 def _tried(results: Results, site: Site, low: float, high: float) -> Array:
@@ -112,10 +117,9 @@ def _utilisation(results: Results, index: int, site: Site, radii: Array) -> Arra
     ).utilisation
 
 
-def _about_the_crossing(radii: Array, use: Array) -> Array:
-    """Where the utilisation, falling over the radii, passes 1, by logarithms between two of them; then radii
-    little larger, up to the next one that was tried and is enough."""
-    after = max(int(np.argmax(use <= ENOUGH)), 1)
-    (x0, x1), (y0, y1) = np.log(radii[after - 1 : after + 1]), np.log(use[after - 1 : after + 1])
-    crossing = math.exp(x1 if y0 == y1 else x0 + (x1 - x0) * y0 / (y0 - y1))
-    return np.minimum(crossing * (1 + BEYOND), radii[after])
+def _between(ends: Array, use: Array) -> Array:
+    """Radii between two of which the second is enough, close about the one at which the utilisation would pass 1
+    along a line by logarithms."""
+    (x0, x1), (y0, y1) = np.log(ends), np.log(use)
+    crossing = math.exp(x0 + (x1 - x0) * y0 / (y0 - y1))
+    return np.sort(np.concatenate([_spread(ends[0], ends[1], SPREAD), np.clip(crossing * (1 + ABOUT), *ends)]))
