@@ -29,8 +29,9 @@ def window(qtbot: QtBot, preferences: Preferences) -> MainWindow:
     made = MainWindow(preferences, LIGHT)
     qtbot.addWidget(made, before_close_func=lambda w: w.document.undo_stack.setClean())
     made.resize(1366, 768)
-    with qtbot.waitExposed(made):
+    with qtbot.waitActive(made):  # without a window manager a window must ask for the keyboard
         made.show()
+        made.activateWindow()
     return made
 
 

@@ -11,8 +11,8 @@ from pathlib import Path
 
 import numpy as np
 import pytest
-from PySide6.QtCore import QPoint, QPointF, Qt
-from PySide6.QtGui import QImage, QWheelEvent
+from PySide6.QtCore import QEvent, QPoint, QPointF, Qt
+from PySide6.QtGui import QImage, QMouseEvent, QWheelEvent
 from PySide6.QtWidgets import QApplication
 
 import app.traces.frame as frame_module
@@ -409,7 +409,9 @@ def test_pointer_reads_and_chooses(view: TraceView, document: Document, qtbot) -
     heard: list[float | None] = []
     document.hovered.connect(heard.append)
     px = round(view.ruler.to_px(120.0))
-    qtbot.mouseMove(view, QPoint(px, 60))
+    at = QPointF(px, 60)
+    none, free = Qt.MouseButton.NoButton, Qt.KeyboardModifier.NoModifier
+    QApplication.sendEvent(view, QMouseEvent(QEvent.Type.MouseMove, at, view.mapToGlobal(at), none, none, free))
     assert heard[-1] == pytest.approx(view.ruler.to_mm(px))
     still = picture(view)
     document.point_at(200.0)
