@@ -34,8 +34,9 @@ def test_without_a_display_the_command_that_needs_none_is_named(
     for name in ("DISPLAY", "WAYLAND_DISPLAY", "QT_QPA_PLATFORM"):
         monkeypatch.delenv(name, raising=False)
     monkeypatch.setattr("sys.platform", "linux")
+    monkeypatch.setattr("sys.argv", ["/usr/bin/filletwright"])
     assert main([str(tmp_path / "a.json")]) == 2
-    assert "filletwright sheet" in capsys.readouterr().err
+    assert "/usr/bin/filletwright sheet" in capsys.readouterr().err
 
 
 def test_without_a_display_one_line_names_the_command_that_needs_none() -> None:
