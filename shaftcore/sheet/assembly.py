@@ -4,7 +4,7 @@ import io
 from collections.abc import Callable
 
 from reportlab.lib.units import mm
-from reportlab.platypus import Flowable, Spacer
+from reportlab.platypus import CondPageBreak, Flowable, Spacer
 
 from shaftcore.sheet.chart_page import lay_in, vector_pages
 from shaftcore.sheet.closing import limits_and_release, notices
@@ -30,6 +30,9 @@ ABOUT_DRAWING = (
 
 ABOUT_HEIGHT = 29.0
 """Height (mm) of the heading above the drawing and of the words below it."""
+
+ROOM_FOR_GIVENS = 80 * mm
+"""Material, duty and judgement stand side by side and are not parted from their heading."""
 
 
 def sheet_bytes(edition: Edition, say: Say, pause: Pause) -> bytes:
@@ -72,7 +75,7 @@ def _story(edition: Edition, rooms: dict[str, tuple[float, float]]) -> list[Flow
     room = {name: ChartRoom(name, width * mm, height * mm) for name, (width, height) in rooms.items()}
     return [
         *summary(edition),
-        *turn_to(UPRIGHT),
+        CondPageBreak(ROOM_FOR_GIVENS),
         *givens(edition),
         *turn_to(ACROSS),
         Heading("3 The shaft and its stations"),
