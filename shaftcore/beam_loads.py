@@ -60,7 +60,7 @@ class PointLoads:
 
 @dataclass(frozen=True, eq=False)
 class Bed:
-    """What the supports do to the beam: x, stiffness (N/mm, inf for rigid), offset (2 planes, mm)."""
+    """What the supports do to the beam: x, stiffness (N/mm, inf for rigid), offset (set, plane, support; mm)."""
 
     x: Array
     stiffness: Array
@@ -97,7 +97,7 @@ def beam_loads(shaft: Shaft, profile: Profile, x: Array, side: Array) -> BeamLoa
     supports leave the shaft free to move (checked before by `soundness`).
     """
     right = side > 0
-    radial, bed = _radial_loads(shaft), _bed(shaft)
+    radial, bed = _radial_loads(shaft), bed_of(shaft)
     flexure = Flexure(shaft, profile, np.unique(x))
     reactions, deflection, slope = borne(flexure, radial, bed)
     carried = PointLoads(np.concatenate([radial.x, bed.x]), np.concatenate([radial.size, reactions], axis=-1))
@@ -119,9 +119,13 @@ def beam_loads(shaft: Shaft, profile: Profile, x: Array, side: Array) -> BeamLoa
     )
 
 
-def _bed(shaft: Shaft) -> Bed:
-    count = len(shaft.supports)
-    return Bed(np.array([s.x for s in shaft.supports]), np.full(count, np.inf), np.zeros((2, count)))
+def bed_of(shaft: Shaft) -> Bed:
+    """The supports as the beam feels them; offsets are fixed in space and steady, so they swing with nothing."""
+    supports = shaft.supports
+    stiffness = np.array([np.inf if s.stiffness is None else s.stiffness for s in supports])
+    offset = np.zeros((2, 2, len(supports)))
+    offset[0] = [[s.offset_y for s in supports], [s.offset_z for s in supports]]
+    return Bed(np.array([s.x for s in supports]), stiffness, offset)
 
 
 def _radial_loads(shaft: Shaft) -> PointLoads:
@@ -211,5 +215,9 @@ def _balance(flexure: Flexure, loads: PointLoads, bed: Bed, free: Array, unit: A
     matrix[n, :n], matrix[n + 1, :n] = 1.0, arm
     moment = (loads.size * (loads.x - begin) / length).sum(-1)
     known = [(bed.offset - free[..., at]) * scale, -loads.size.sum(-1)[..., None], -moment[..., None]]
-    solved = np.linalg.solve(matrix, np.concatenate(known, axis=-1)[..., None])[..., 0]
-    return solved[..., :n], solved[..., n:] / scale / np.array([1.0, length])
+    right = np.concatenate(known, axis=-1)
+    solved = np.linalg.solve(matrix, right[..., None])[..., 0]
+    reactions, start = solved[..., :n], solved[..., n:] / scale / np.array([1.0, length])
+    # a shaft that only tilts on its offsets is carried by no force, not by what is left of large ones
+    rounding = ROUNDING * np.abs(right).max(axis=-1, keepdims=True)
+    return np.where(np.abs(reactions) > rounding, reactions, 0.0), start
