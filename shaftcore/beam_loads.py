@@ -134,6 +134,7 @@ def _radial_loads(shaft: Shaft) -> PointLoads:
     size = np.array([[f.force, -f.amplitude if f.force < 0 else f.amplitude] for f in forces]).reshape(-1, 2).T
     angle = np.radians([f.angle for f in forces])
     planes = np.array([np.cos(angle), np.sin(angle)])
+    planes[np.abs(planes) < ROUNDING] = 0.0  # a force straight down has no share across
     return PointLoads(np.array([f.x for f in forces]), size[:, None, :] * planes[None])
 
 
@@ -207,10 +208,11 @@ def _balance(flexure: Flexure, loads: PointLoads, bed: Bed, free: Array, unit: A
     """Reactions (..., n) and rigid-body deflection and slope at x[0] (..., 2)."""
     n, begin, length = len(bed.x), flexure.x[0], flexure.x[-1] - flexure.x[0]
     at = np.searchsorted(flexure.x, bed.x)
-    scale = 1 / max(float(np.abs(unit[:, at]).max()), 1e-300)
+    give = unit[:, at].T + np.diag(1 / bed.stiffness)
+    scale = 1 / max(float(np.abs(give).max()), 1e-300)
     arm = (bed.x - begin) / length
     matrix = np.zeros((n + 2, n + 2))
-    matrix[:n, :n] = (unit[:, at].T + np.diag(1 / bed.stiffness)) * scale
+    matrix[:n, :n] = give * scale
     matrix[:n, n], matrix[:n, n + 1] = 1.0, arm
     matrix[n, :n], matrix[n + 1, :n] = 1.0, arm
     moment = (loads.size * (loads.x - begin) / length).sum(-1)

@@ -4,7 +4,7 @@ from collections.abc import Iterator, Sequence
 
 import numpy as np
 
-from shaftcore.beam_loads import Bed, BeamLoads, Flexure, PointLoads, bed_of, borne
+from shaftcore.beam_loads import BeamLoads, Bed, Flexure, PointLoads, bed_of, borne
 from shaftcore.geometry import profile_of
 from shaftcore.notches._contract import Array
 from shaftcore.phrase import Phrase

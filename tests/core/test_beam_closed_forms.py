@@ -206,7 +206,9 @@ LONG, THIN = 4000.0, 20.0
 def on_three(middle: Support, *forces: RadialForce) -> Shaft:
     """A long thin beam on rigid supports at its ends and on `middle`; listed out of order on purpose."""
     ends = Support("A", 0.0, locating=True), Support("C", LONG)
-    return Shaft(material=STEEL, segments=(Segment("s", LONG, THIN),), supports=(ends[1], middle, ends[0]), loads=forces)
+    return Shaft(
+        material=STEEL, segments=(Segment("s", LONG, THIN),), supports=(ends[1], middle, ends[0]), loads=forces
+    )
 
 
 def reactions(shaft: Shaft) -> np.ndarray:

@@ -19,7 +19,10 @@ from shaftcore.notch_sites import seatings
 from shaftcore.shaft import AxialForce, RadialForce, Segment, Shaft, Support
 from shaftcore.stations import place_stations
 
-FEW = settings(max_examples=40, deadline=None)
+FEW = settings(max_examples=60, deadline=None)
+NOTHING = 1e-12
+"""Utilisation, deflection (mm), slope or force (N) left of large forces that cancel on a support: rounding."""
+
 STRESSES = (
     "bending_amplitude",
     "bending_mean",
@@ -34,7 +37,7 @@ def alike(one, other, rel=1e-7):
     """Equal but for rounding, measured on the largest entry; inf where inf."""
     one, other = np.asarray(one, dtype=float), np.asarray(other, dtype=float)
     bulk = np.abs(one[np.isfinite(one)]).max(initial=0.0)
-    np.testing.assert_allclose(other, one, rtol=rel, atol=rel * 1e-2 * bulk)
+    np.testing.assert_allclose(other, one, rtol=rel, atol=rel * 1e-2 * bulk + NOTHING)
 
 
 @FEW
@@ -74,7 +77,7 @@ def test_superposing_loads_adds_what_they_do(shaft: Shaft, count: int):
     for name in ("moment", "shear", "normal", "torque", "deflection", "slope", "reactions", "axial_reaction"):
         parts = getattr(one, name), getattr(other, name)
         bulk = max(np.abs(part).max(initial=0.0) for part in parts)
-        np.testing.assert_allclose(sum(parts), getattr(both, name), rtol=1e-9, atol=1e-9 * bulk + 1e-15)
+        np.testing.assert_allclose(sum(parts), getattr(both, name), rtol=1e-9, atol=1e-9 * bulk + NOTHING)
 
 
 @FEW
@@ -89,7 +92,7 @@ def test_offsets_add_to_the_steady_loads_alone(shaft: Shaft):
     for name in ("moment", "shear", "deflection", "slope", "reactions"):
         parts = getattr(loaded, name), getattr(bare, name)
         bulk = max(np.abs(part).max(initial=0.0) for part in parts)
-        np.testing.assert_allclose(sum(parts), getattr(both, name), rtol=1e-9, atol=1e-9 * bulk + 1e-15)
+        np.testing.assert_allclose(sum(parts), getattr(both, name), rtol=1e-9, atol=1e-9 * bulk + NOTHING)
         assert not parts[1][1].any(), name
 
 
@@ -160,7 +163,7 @@ def test_statics(shaft: Shaft):
         swing = [np.copysign(f.amplitude, f.force) for f in forces]
         for sort, size in enumerate((np.array([f.force for f in forces]), np.array(swing))):
             reaction, own = loads.reactions[sort, plane], size * share
-            bulk = np.abs(own).sum() + np.abs(reaction).sum() + 1e-12
+            bulk = np.abs(size).sum() + np.abs(reaction).sum() + 1e-12
             assert reaction.sum() + own.sum() == pytest.approx(0, abs=1e-9 * bulk)
             assert (reaction * at).sum() + (own * x).sum() == pytest.approx(0, abs=1e-9 * bulk * shaft.length)
     bulk = np.abs(loads.moment).max() + np.abs(loads.reactions).max() * shaft.length + 1e-12
@@ -179,7 +182,7 @@ def test_the_shaft_lies_on_its_seats_and_springs(shaft: Shaft):
         yielding = loads.reactions[..., i] / (support.stiffness or np.inf)
         seat = np.array([[support.offset_y, support.offset_z], [0.0, 0.0]])
         found = loads.deflection[..., loads.x == support.x]
-        assert np.abs(found - (seat - yielding)[..., None]).max() <= 1e-9 * bulk
+        assert np.abs(found - (seat - yielding)[..., None]).max() <= 1e-9 * bulk + NOTHING
     assert np.all(np.isfinite(loads.deflection))
 
 

@@ -36,7 +36,10 @@ SHAFT = Shaft(
         Segment("body", 90.0, 52.0, end_diameter=48.0, bore=12.5, finish="ground"),
     ),
     raisers=(Groove("ring groove", 100.0, 1.5, 0.8),),
-    supports=(Support("left", 10.0, locating=True), Support("right", 140.0, "right-hand bearing", False, 2.5e5, -0.02, 0.005)),
+    supports=(
+        Support("left", 10.0, locating=True),
+        Support("right", 140.0, "right-hand bearing", False, 2.5e5, -0.02, 0.005),
+    ),
     loads=(
         RadialForce("pull", 75.0, 4200.0, 30.0, amplitude=100.0),
         Torque("in", 5.0, 123_456.789, 0.1 + 0.2),
