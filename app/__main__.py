@@ -9,6 +9,10 @@ NO_DISPLAY = (
     "filletwright sheet SHAFT.json OUT.pdf"
 )
 
+LIKENESS_HELP = """usage: filletwright likeness SHAFT.json OUT.png
+
+Write the window with this shaft as a picture; no display is needed."""
+
 
 def main(argv: list[str] | None = None) -> int:
     """Run one command; returns the exit status."""
@@ -20,7 +24,11 @@ def main(argv: list[str] | None = None) -> int:
     if words and (words[0] in command.COMMANDS or words[0].startswith("-")):
         return command.main(words)
     if len(words) > 1:
-        print(f"filletwright: one shaft file at a time, not {len(words)}", file=sys.stderr)
+        print(
+            f"filletwright: {words[0]!r} is no command, and one shaft file at a time can be opened, not {len(words)}; "
+            "see filletwright --help",
+            file=sys.stderr,
+        )
         return 2
     if not _display_there():
         print(NO_DISPLAY, file=sys.stderr)
@@ -37,8 +45,11 @@ def _display_there() -> bool:
 
 
 def _likeness(words: list[str]) -> int:
+    if words and words[0] in ("-h", "--help"):
+        print(LIKENESS_HELP)
+        return 0
     if len(words) != 2 or words[0].startswith("-"):
-        print("filletwright: usage: filletwright likeness SHAFT.json OUT.png", file=sys.stderr)
+        print("filletwright: likeness needs SHAFT.json and OUT.png; see filletwright likeness --help", file=sys.stderr)
         return 2
     os.environ["QT_QPA_PLATFORM"] = "offscreen"
     from app.start import write_likeness

@@ -14,6 +14,9 @@ F = TypeVar("F", bound=Callable[..., Any])
 LOG = logging.getLogger("filletwright")
 WORDS_WIDTH = 360
 """Pixels for the words of a message box; left to itself it breaks them after two or three."""
+SLIPS: list[Exception] = []
+"""Errors of the program's own since it started: none of them reached the user as a crash."""
+
 _OPEN: dict[tuple[str, str], QMessageBox] = {}
 """Boxes on the screen, by their words; held here so that they live as long as they are shown."""
 
@@ -42,6 +45,7 @@ def report(error: Exception, parent: QWidget | None = None) -> None:
         tell("This could not be done", str(error), parent)
         return
     LOG.error("unexpected", exc_info=error)
+    SLIPS.append(error)
     tell(
         "Something went wrong inside the program",
         f"{type(error).__name__}: {error}\n\nThe design is as it was before. Save it under a new name to be safe.",

@@ -11,8 +11,8 @@ from app.fold import Fold
 
 
 class FoldColumn(QSplitter):
-    """A part that is opened takes half of the room, so that it can be read at once; the others
-    shrink in proportion. What a closed one leaves goes to the open ones in proportion.
+    """A part that is opened takes more than an even share of the room, so that it can be read
+    at once; the others shrink in proportion. What a closed one leaves goes to the open ones in proportion.
     """
 
     def __init__(self, folds: Sequence[tuple[Fold, int]]) -> None:
@@ -34,7 +34,7 @@ class FoldColumn(QSplitter):
         closed = {fold: fold.head.sizeHint().height() for fold in self._folds if not fold.opened}
         room = sum(before) - sum(closed.values())
         kept = [fold for fold in self._folds if fold.opened and fold is not turned]
-        taken = (room // 2 if kept else room) if opened else 0
+        taken = (2 * room // (len(kept) + 3) if kept else room) if opened else 0
         old = {fold: before[self._folds.index(fold)] for fold in kept}
         rest = (room - taken) / max(sum(old.values()), 1)
         return [closed.get(fold, taken if fold is turned else round(old.get(fold, 0) * rest)) for fold in self._folds]

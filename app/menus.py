@@ -70,10 +70,10 @@ class Menus:
             window.preferences.words("units", system),
             lambda name: window.document.set_system("US" if name == "US" else "SI"),
         )
-        colours = menu.addMenu("&Colours")
+        colours = menu.addMenu("C&olours")
         _exclusive(
             colours,
-            [("", "As the &desktop"), ("light", "&Light"), ("dark", "&Dark")],
+            [("", "&As the desktop"), ("light", "&Light"), ("dark", "&Dark")],
             window.preferences.words("theme", ""),
             window.choose_theme,
         )

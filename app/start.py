@@ -7,6 +7,7 @@ from pathlib import Path
 from PySide6.QtCore import QSettings, QTimer
 from PySide6.QtWidgets import QApplication
 
+from app.error_messages import SLIPS
 from app.icon import program_icon
 from app.main_window import MainWindow
 from app.preferences import Preferences
@@ -52,7 +53,7 @@ def open_window(path: Path | None) -> int:
 
 
 def write_likeness(shaft_path: Path, picture_path: Path) -> int:
-    """Write the window with this shaft as a PNG; 0, or 2 with a line on stderr."""
+    """Write the window with this shaft as a PNG; 0, else a line on stderr and 2, or 3 for a slip of our own."""
     try:
         shaft = read_shaft(shaft_path)
         app = _application()
@@ -69,9 +70,11 @@ def write_likeness(shaft_path: Path, picture_path: Path) -> int:
             app.processEvents()
         if not window.grab().save(str(picture_path), "PNG"):
             raise FileAccessError(f"{picture_path}: the picture could not be written; choose a folder you may write to")
-        window.document.undo_stack.setClean()
         window.close()
     except FilletwrightError as error:
         print(f"filletwright: {error}", file=sys.stderr)
         return 2
+    if SLIPS:
+        print(f"filletwright: {picture_path} is not whole: {SLIPS[0]}", file=sys.stderr)
+        return 3
     return 0

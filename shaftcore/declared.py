@@ -96,7 +96,10 @@ class Text:
 
 @dataclass(frozen=True)
 class Part:
-    """A record, or a tuple of records, inside a record; `kinds` lists what may stand there."""
+    """A record, or a tuple of records, inside a record; `kinds` lists what may stand there.
+
+    `too_many` says what to do where there are more than `most` of them.
+    """
 
     label: str
     kinds: tuple[type, ...]
@@ -104,6 +107,7 @@ class Part:
     optional: bool = False
     most: int = 1000
     words: str = ""
+    too_many: str = "remove some or join them"
 
 
 Declaration = Quantity | Choice | Switch | Text | Part

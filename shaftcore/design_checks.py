@@ -1,16 +1,19 @@
 """Notices: what the user must see beside numbers that were computed all the same."""
 
 from collections.abc import Iterator, Sequence
+from operator import itemgetter
 
 import numpy as np
+from numpy.typing import NDArray
 
 from shaftcore.abutment import largest_fillet, least_abutment
 from shaftcore.beam_loads import BeamLoads
 from shaftcore.geometry import faces_of
+from shaftcore.judged_places import Places
 from shaftcore.notch_factors import NotchFactors
 from shaftcore.notch_sensitivity import NEUBER_RANGE
 from shaftcore.notch_sites import Seating
-from shaftcore.notches._contract import LOAD_SORTS
+from shaftcore.notches._contract import LOAD_SORTS, Site
 from shaftcore.notches.arc import largest_arc_radius
 from shaftcore.notches.kinds import KINDS
 from shaftcore.notches.shoulder import LARGEST_RADIUS
@@ -47,28 +50,32 @@ def seat_limits(shaft: Shaft, seated: Sequence[Seating]) -> tuple[SeatLimit, ...
 
 
 def _seat_limit(seating: Seating, faces: Sequence[float], spans: Sequence[tuple[float, float]]) -> SeatLimit:
-    low, high = faces[seating.segment : seating.segment + 2]
-    face, own, step = seating.around.x, seating.site.span, seating.site.sizes["h"]
-    if face == high:
-        room = face - max([low, *(end for begin, end in spans if (begin, end) != own)])
-    else:
-        room = min([high, *(begin for begin, end in spans if (begin, end) != own)]) - face
-    caps = [
-        (LARGEST_RADIUS, Phrase("the largest radius that may be entered")),
-        (largest_arc_radius(room, step), Phrase("{:length} free along the thinner segment", (room,))),
+    room, step, corner = _room(seating, faces, spans), seating.site.sizes["h"], seating.record.bearing_corner
+    caps: list[tuple[float, str, tuple[float, ...]]] = [
+        (largest_arc_radius(room, step), "{:length} free along the thinner segment", (room,)),
+        (LARGEST_RADIUS, "the largest radius that may be entered", ()),
     ]
-    corner = seating.record.bearing_corner
     if corner:
-        caps.append((step, Phrase("step height {:length}, or nothing is left to seat on", (step,))))
-        caps.append((largest_fillet(corner), Phrase("bearing corner r_s,min {:length}", (corner,))))
-    allowed, reason = min(reversed(caps), key=lambda cap: cap[0])
-    return SeatLimit(seating.place, allowed, reason)
+        caps.insert(0, (step, "step height {:length}, or nothing is left to seat on", (step,)))
+        caps.insert(0, (largest_fillet(corner), "bearing corner r_s,min {:length}", (corner,)))
+    allowed, words, quantities = min(caps, key=itemgetter(0))
+    return SeatLimit(seating.place, allowed, Phrase(words, quantities))
+
+
+def _room(seating: Seating, faces: Sequence[float], spans: Sequence[tuple[float, float]]) -> float:
+    """Length (mm) free of other raisers from a shoulder's face along its thinner segment."""
+    low, high = faces[seating.segment : seating.segment + 2]
+    face, own = seating.around.x, seating.site.span
+    if face == high:
+        return face - max([low, *(span[1] for span in spans if span != own)])
+    return min([high, *(span[0] for span in spans if span != own)]) - face
 
 
 def notices_of(
     shaft: Shaft,
     stations: Sequence[Station],
     seated: Sequence[Seating],
+    places: Places,
     loads: BeamLoads,
     factors: NotchFactors,
     judged: Judged,
@@ -78,10 +85,10 @@ def notices_of(
         *_balance(shaft, loads),
         *_shaft_wide(shaft),
         *support_notices(shaft, stations, loads),
-        *_seats(shaft, seated, stations),
+        *_seats(seated, stations),
         *_bore_steps(shaft, stations),
         *_fillets_on_tapers(shaft, seated, stations),
-        *second_looks(shaft, stations, loads, factors, judged),
+        *second_looks(shaft, stations, places, loads, factors, judged),
         *_station_flags(shaft, stations, factors, judged),
     )
 
@@ -134,36 +141,38 @@ def _shaft_wide(shaft: Shaft) -> Iterator[Notice]:
         yield Notice("reason missing", Phrase("The own factor on the endurance limit has no reason beside it."))
 
 
-def _seats(shaft: Shaft, seated: Sequence[Seating], stations: Sequence[Station]) -> Iterator[Notice]:
-    index = {station.place: i for i, station in enumerate(stations) if station.kind == "shoulder"}
-    for seating in seated:
-        if seating.kind.key != "shoulder" or not seating.record.bearing_corner:
-            continue
-        corner, r = seating.record.bearing_corner, seating.record.radius
-        step = abs(seating.around.left_diameter - seating.around.right_diameter) / 2
-        where = index[seating.place]
-        if r > largest_fillet(corner):
-            yield Notice(
-                "fillet too large for its bearing",
-                Phrase(
-                    "Fillet r {:length} is larger than {:length}, the most a bearing corner r_s,min {:length} "
-                    "lets seat (DIN 5418): the ring would ride on the fillet.",
-                    (r, largest_fillet(corner), corner),
-                ),
-                seating.place,
-                where,
-            )
-        if step < least_abutment(corner):
-            yield Notice(
-                "low abutment",
-                Phrase(
-                    "Step height {:length} is below {:length}, the usual least abutment for a bearing corner "
-                    "r_s,min {:length} (catalogue value).",
-                    (step, least_abutment(corner), corner),
-                ),
-                seating.place,
-                where,
-            )
+def _seats(seated: Sequence[Seating], stations: Sequence[Station]) -> Iterator[Notice]:
+    """What keeps a bearing from seating against its shoulder."""
+    seats = [seating for seating in seated if seating.kind.key == "shoulder" and seating.record.bearing_corner]
+    where = _shoulder_stations(stations) if seats else {}
+    for seating in seats:
+        for key, words in _seat_faults(seating.record.bearing_corner, seating.site.sizes["r"], seating.site.sizes["h"]):
+            yield Notice(key, words, seating.place, where[seating.place])
+
+
+def _seat_faults(corner: float, r: float, step: float) -> Iterator[tuple[str, Phrase]]:
+    if r > largest_fillet(corner):
+        words = (
+            "Fillet r {:length} is larger than {:length}, the most a bearing corner r_s,min {:length} lets seat "
+            "(DIN 5418): the ring would ride on the fillet."
+        )
+        yield "fillet too large for its bearing", Phrase(words, (r, largest_fillet(corner), corner))
+    if step < least_abutment(corner):
+        words = (
+            "Step height {:length} is below {:length}, the usual least abutment for a bearing corner "
+            "r_s,min {:length} (catalogue value)."
+        )
+        yield "low abutment", Phrase(words, (step, least_abutment(corner), corner))
+    if r > step:
+        words = (
+            "Fillet r {:length} is larger than the step height {:length}: "
+            "the arc is cut by the step and leaves no seating face."
+        )
+        yield "no seating face", Phrase(words, (r, step))
+
+
+def _shoulder_stations(stations: Sequence[Station]) -> dict[str, int]:
+    return {station.place: i for i, station in enumerate(stations) if station.kind == "shoulder"}
 
 
 def _bore_steps(shaft: Shaft, stations: Sequence[Station]) -> Iterator[Notice]:
@@ -185,7 +194,7 @@ def _bore_steps(shaft: Shaft, stations: Sequence[Station]) -> Iterator[Notice]:
 
 def _fillets_on_tapers(shaft: Shaft, seated: Sequence[Seating], stations: Sequence[Station]) -> Iterator[Notice]:
     tapered = [s for s in seated if s.kind.key == "shoulder" and shaft.segments[s.segment].end_diameter is not None]
-    where = {station.place: i for i, station in enumerate(stations) if station.kind == "shoulder"} if tapered else {}
+    where = _shoulder_stations(stations) if tapered else {}
     for seating in tapered:
         segment, site = shaft.segments[seating.segment], seating.site
         rise = abs(segment.right_diameter - segment.diameter) / 2 * (site.span[1] - site.span[0]) / segment.length
@@ -205,59 +214,47 @@ def _fillets_on_tapers(shaft: Shaft, seated: Sequence[Seating], stations: Sequen
 def _station_flags(
     shaft: Shaft, stations: Sequence[Station], factors: NotchFactors, judged: Judged
 ) -> Iterator[Notice]:
-    source = shaft.judgement.kt_source
+    """Where a factor or a fit is used beyond what it was made for, station by station."""
     size = judged.strength.size_diameter
-    too_small_or_large = (size < SIZE_LOW) | (size > SIZE_HIGH)
-    outsides, held = factors.outside.T.tolist(), np.any(factors.held, axis=0).tolist()
-    for i, station in enumerate(stations):
-        if too_small_or_large[i]:
-            yield Notice(
-                "outside a fit",
-                Phrase(
-                    "The size factor is fitted for {:length} to {:length}; for {:length} "
-                    + ("it is 1." if size[i] < SIZE_LOW else "its power is carried on."),
-                    (SIZE_LOW, SIZE_HIGH, float(size[i])),
-                ),
-                station.place,
-                i,
-            )
-        if station.site is None:
+    off_size: NDArray[np.bool_] = (size < SIZE_LOW) | (size > SIZE_HIGH)
+    outside, held = np.any(factors.outside, axis=0), np.any(factors.held, axis=0)
+    for i in np.flatnonzero(off_size | outside | held | (judged.bore > 0)).tolist():
+        place, site = stations[i].place, stations[i].site
+        if off_size[i]:
+            yield Notice("outside a fit", _off_size_words(float(size[i])), place, i)
+        if site is None:
             continue
-        kind = KINDS[station.kind]
-        for key, words in kind.remarks(station.site):
-            yield Notice(key, words, station.place, i)
-        fits = kind.fits[source]
-        outside = [sort for sort, is_outside in zip(LOAD_SORTS, outsides[i], strict=True) if is_outside]
-        if outside:
-            ranges = "; ".join(f"{sort}: {', '.join(map(str, fits[sort].ranges))}" for sort in outside)
-            measures = kind.parameters({name: np.array(value) for name, value in station.site.sizes.items()})
-            have = ", ".join(
-                f"{symbol} = {float(measures[symbol]):.3g}"
-                for symbol in dict.fromkeys(r.symbol for sort in outside for r in fits[sort].ranges)
-            )
+        if outside[i]:
             yield Notice(
-                "outside a fit",
-                Phrase(
-                    f"Kt after {SOURCES[fits[outside[0]].source].short} is used outside its range ({ranges}); "
-                    f"here {have}. The value is carried on from the nearest end."
-                ),
-                station.place,
-                i,
+                "outside a fit", _outside_words(site, shaft.judgement.kt_source, factors.outside[:, i]), place, i
             )
         if held[i]:
-            yield Notice(
-                "Kf held",
-                Phrase("For a root this sharp the formulas would let Kf fall again; it is held at its peak."),
-                station.place,
-                i,
+            words = "For a root this sharp the formulas would let Kf fall again; it is held at its peak."
+            yield Notice("Kf held", Phrase(words), place, i)
+        if site.bore > 0:
+            words = (
+                f"Kt is that of a solid shaft; the section is bored d_i/d = {site.bore / site.d:.2f}. "
+                "The nominal stress counts the bore."
             )
-        if station.site.bore > 0:
-            yield Notice(
-                "bored section",
-                Phrase(
-                    f"Kt is that of a solid shaft; the section is bored d_i/d = "
-                    f"{station.site.bore / station.site.d:.2f}. The nominal stress counts the bore."
-                ),
-                station.place,
-                i,
-            )
+            yield Notice("bored section", Phrase(words), place, i)
+
+
+def _off_size_words(size: float) -> Phrase:
+    end = "it is 1." if size < SIZE_LOW else "its power is carried on."
+    words = "The size factor is fitted for {:length} to {:length}; for {:length} " + end
+    return Phrase(words, (SIZE_LOW, SIZE_HIGH, size))
+
+
+def _outside_words(site: Site, source: str, outside: NDArray[np.bool_]) -> Phrase:
+    """For which sorts of load (3) the fits are used outside which ranges, and what the raiser has."""
+    kind = KINDS[site.kind]
+    fits = {sort: kind.fits[source][sort] for sort, beyond in zip(LOAD_SORTS, outside, strict=True) if beyond}
+    ranges = "; ".join(f"{sort}: {', '.join(map(str, fit.ranges))}" for sort, fit in fits.items())
+    measures = kind.parameters({name: np.array(value) for name, value in site.sizes.items()})
+    symbols = dict.fromkeys(r.symbol for fit in fits.values() for r in fit.ranges)
+    have = ", ".join(f"{symbol} = {float(measures[symbol]):.3g}" for symbol in symbols)
+    name = SOURCES[next(iter(fits.values())).source].short
+    return Phrase(
+        f"Kt after {name} is used outside its range ({ranges}); here {have}. "
+        "The value is carried on from the nearest end."
+    )

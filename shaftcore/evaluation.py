@@ -11,7 +11,7 @@ import numpy as np
 from shaftcore.beam_loads import beam_loads
 from shaftcore.design_checks import notices_of, seat_limits
 from shaftcore.geometry import profile_of
-from shaftcore.judged_places import judge_places, trace_points
+from shaftcore.judged_places import judge_places, places_within, trace_points
 from shaftcore.notch_factors import notch_factors
 from shaftcore.results import Results
 from shaftcore.shaft import Shaft
@@ -29,7 +29,8 @@ def evaluate(shaft: Shaft) -> Results:
     stations = place_stations(shaft, profile, seated)
     loads = beam_loads(shaft, profile, *trace_points(shaft, profile, stations))
     factors = notch_factors([station.site for station in stations], shaft.judgement, shaft.material.tensile_strength)
-    at, judged, judged_along = judge_places(shaft, profile, stations, loads, factors)
+    places = places_within(stations, loads.x)
+    at, judged, judged_along = judge_places(shaft, profile, stations, places, loads, factors)
     results = Results(
         shaft=shaft,
         stations=stations,
@@ -39,7 +40,7 @@ def evaluate(shaft: Shaft) -> Results:
         along=loads,
         judged_along=judged_along,
         seat_limits=seat_limits(shaft, seated),
-        notices=notices_of(shaft, stations, seated, loads, factors, judged),
+        notices=notices_of(shaft, stations, seated, places, loads, factors, judged),
     )
     _lock(results)
     return results
@@ -49,6 +50,6 @@ def _lock(record: Any) -> None:
     """Make every array of the results read-only."""
     for value in vars(record).values():
         if isinstance(value, np.ndarray):
-            value.flags.writeable = False
+            value.setflags(write=False)
         elif is_dataclass(value) and not isinstance(value, Shaft):
             _lock(value)

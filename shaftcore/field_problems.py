@@ -50,7 +50,7 @@ def _list_problems(declaration: Part, entries: Any, path: str) -> Iterator[Probl
     if not isinstance(entries, tuple):
         yield Problem(path, f"{entries!r:.60}", "a list of entries", "give a list")
     elif len(entries) > declaration.most:
-        yield Problem(path, f"{len(entries)} entries", f"{declaration.most} at most", "remove some or join them")
+        yield Problem(path, f"{len(entries)} entries", f"{declaration.most} at most", declaration.too_many)
     else:
         for index, entry in enumerate(entries):
             if id(entry) not in _FOUND_RIGHT or not isinstance(entry, declaration.kinds):

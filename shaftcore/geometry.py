@@ -68,7 +68,11 @@ def segment_index(faces: Sequence[float], x: float) -> int:
 def around_place(shaft: Shaft, x: float, faces: Sequence[float]) -> Around:
     """The plain shaft either side of any place inside the shaft, which must have a segment."""
     index = segment_index(faces, x)
-    segment = shaft.segments[index]
-    share = min(max((x - faces[index]) / segment.length, 0.0), 1.0)
+    return around_within(shaft.segments[index], faces[index], x)
+
+
+def around_within(segment: Segment, begin: float, x: float) -> Around:
+    """The plain shaft either side of a place x within a segment that begins at `begin`."""
+    share = min(max((x - begin) / segment.length, 0.0), 1.0)
     d = segment.diameter + share * (segment.right_diameter - segment.diameter)
     return Around(x, d, d, segment.bore, segment.bore, segment.finish, segment.finish)

@@ -1,5 +1,6 @@
 """Where the shaft is judged: along its whole length, and each station wherever it is worst off."""
 
+from collections.abc import Sequence
 from dataclasses import is_dataclass
 from typing import Any
 
@@ -10,16 +11,18 @@ from shaftcore.beam_loads import BeamLoads
 from shaftcore.equivalent_stress import Fatigue
 from shaftcore.geometry import FINISH_NUMBER, Profile
 from shaftcore.margins import judge, station_stresses
-from shaftcore.notch_factors import LOAD_ROWS, NotchFactors
+from shaftcore.notch_factors import NotchFactors
 from shaftcore.notches._contract import LOAD_SORTS, Array
 from shaftcore.results import Judged
 from shaftcore.shaft import Shaft
 from shaftcore.stations import Station
 
-TRACE_POINTS = 301
-"""Evenly spread points of the traces, besides both sides of every face, load, support and station."""
+STRETCHES = 300
+"""Even stretches of the traces, whose ends stand beside both sides of every face, load, support and station."""
 
 Index = NDArray[np.intp]
+Places = tuple[Index, Index]
+"""Station and point of everything that may govern a station."""
 
 
 def trace_points(shaft: Shaft, profile: Profile, stations: tuple[Station, ...]) -> tuple[Array, Array]:
@@ -27,10 +30,10 @@ def trace_points(shaft: Shaft, profile: Profile, stations: tuple[Station, ...]) 
 
     Places where something jumps, and stations, stand twice.
     """
-    jumps = [*(s.x for s in shaft.supports), *(load.x for load in shaft.loads), *(s.x for s in stations)]
-    twice = np.concatenate([jumps, profile.faces[1:-1]])
-    even = np.linspace(profile.faces[0], profile.faces[-1], TRACE_POINTS)
-    once = np.unique(np.concatenate([twice, even]))
+    jumps = [*(s.x for s in stations), *(s.x for s in shaft.supports), *(load.x for load in shaft.loads)]
+    twice = _rising([profile.faces[1:-1], jumps])
+    even = np.arange(STRETCHES) * (profile.faces[-1] / STRETCHES)
+    once = _rising([even, profile.faces[-1:], twice])
     copies = np.ones(len(once), dtype=np.intp)
     copies[np.searchsorted(once, twice)] = 2
     x = np.repeat(once, copies)
@@ -39,8 +42,20 @@ def trace_points(shaft: Shaft, profile: Profile, stations: tuple[Station, ...]) 
     return x, side
 
 
+def _rising(parts: list[Any]) -> Array:
+    """All different numbers of the parts in order; a stable sort makes use of the order there is."""
+    every = np.concatenate(parts)
+    every.sort(kind="stable")
+    return every[np.concatenate([[True], every[1:] > every[:-1]])]
+
+
 def judge_places(
-    shaft: Shaft, profile: Profile, stations: tuple[Station, ...], loads: BeamLoads, factors: NotchFactors
+    shaft: Shaft,
+    profile: Profile,
+    stations: tuple[Station, ...],
+    places: Places,
+    loads: BeamLoads,
+    factors: NotchFactors,
 ) -> tuple[BeamLoads, Judged, Judged]:
     """What the beam carries and how it is judged at the stations, and how along all points of `loads`.
 
@@ -48,42 +63,37 @@ def judge_places(
     with one section and one set of notch factors; where it is used most is kept.
     Along the shaft the section is the plain one.
     """
-    owner, point = places_within(stations, loads.x)
+    owner, point = places
     count = len(owner)
-    every = taken(loads, np.concatenate([point, np.arange(len(loads.x))]))
-    d, bore, finish = _sections(profile, every, stations, owner)
+    every = np.concatenate([point, np.arange(len(loads.x))])
+    d, bore, finish = _sections(profile, loads.x[every], loads.side[every], stations, owner)
     kf = np.ones((len(LOAD_SORTS), len(d)))
     kf[:, :count] = factors.kf[:, owner]
-    fatigue = Fatigue(kf[LOAD_ROWS["bending"]], kf[LOAD_ROWS["tension"]], kf[LOAD_ROWS["torsion"]])
-    judged = judge(shaft, station_stresses(every, d, bore, shaft.duty.turning), fatigue, d, bore, finish)
+    nominal = station_stresses(loads, every, d, bore, shaft.duty.turning)
+    judged = judge(shaft, nominal, Fatigue(*kf), d, bore, finish)
     worst = _worst_of_each(owner, judged.utilisation[:count], judged.n[:count], judged.greatest[:count])
-    return taken(every, worst), taken(judged, worst), taken(judged, slice(count, None))
+    return taken(loads, point[worst]), taken(judged, worst), taken(judged, slice(count, None))
 
 
-def places_within(stations: tuple[Station, ...], x: Array) -> tuple[Index, Index]:
+def places_within(stations: Sequence[Station], x: Array) -> Places:
     """Station and point (indices) of everything that may govern a station: both sides of all its places."""
-    owner = np.array([i for i, station in enumerate(stations) for _ in (station.x, *station.also)], dtype=np.intp)
+    owner = np.repeat(np.arange(len(stations)), [1 + len(station.also) for station in stations])
     at = np.array([place for station in stations for place in (station.x, *station.also)])
     left, right = np.searchsorted(x, at, "left"), np.searchsorted(x, at, "right") - 1
     return np.concatenate([owner, owner]), np.concatenate([right, left])
 
 
 def _sections(
-    profile: Profile, loads: BeamLoads, stations: tuple[Station, ...], owner: Index
+    profile: Profile, x: Array, side: Array, stations: tuple[Station, ...], owner: Index
 ) -> tuple[Array, Array, Index]:
     """Net diameter, bore and finish at all points; the first belong to the stations in `owner`."""
-    segment = profile.segment_at(loads.x, loads.side)
-    d, bore, finish = profile.diameter_at(loads.x, segment), profile.bore[segment], profile.finish[segment]
-    sites = [(i, station.site) for i, station in enumerate(stations) if station.site is not None]
-    if sites:
-        row_of = np.full(len(stations), -1)
-        row_of[[i for i, _ in sites]] = np.arange(len(sites))
-        row = row_of[owner]
-        notched = np.flatnonzero(row >= 0)
-        row = row[notched]
-        d[notched] = np.array([site.d for _, site in sites])[row]
-        bore[notched] = np.array([site.bore for _, site in sites])[row]
-        finish[notched] = np.array([FINISH_NUMBER[site.finish] for _, site in sites])[row]
+    segment = profile.segment_at(x, side)
+    d, bore, finish = profile.diameter_at(x, segment), profile.bore[segment], profile.finish[segment]
+    sites = {i: station.site for i, station in enumerate(stations) if station.site is not None}
+    net = np.zeros((3, len(stations)))
+    net[:, list(sites)] = [*zip(*((s.d, s.bore, FINISH_NUMBER[s.finish]) for s in sites.values()), strict=True)]
+    notched = np.flatnonzero(net[0, owner])
+    d[notched], bore[notched], finish[notched] = net[:, owner[notched]]
     return d, bore, finish
 
 

@@ -28,17 +28,17 @@ from shaftcore.strength_factors import (
 )
 
 
-def station_stresses(loads: BeamLoads, d: Array, bore: Array, turning: bool) -> Nominal:
-    """Nominal stresses (MPa) on the net section.
+def station_stresses(loads: BeamLoads, point: NDArray[np.intp], d: Array, bore: Array, turning: bool) -> Nominal:
+    """Nominal stresses (MPa) on net sections `d`, `bore` (n) under what the beam carries at points (n) of `loads`.
 
     On a turning shaft a load fixed in space bends every fibre to and fro, so the whole moment,
     pulsation included, is amplitude. On one that stands still mean and pulsation count apart,
     both taken at the fibre that has the most of each.
     """
     moment = np.hypot(loads.moment[:, 0], loads.moment[:, 1])
-    bending = moment / bending_modulus(d, bore)
-    axial = loads.normal / area(d, bore)
-    torsion = np.abs(loads.torque) / torsion_modulus(d, bore)
+    bending = moment.take(point, axis=-1) / bending_modulus(d, bore)
+    axial = loads.normal.take(point, axis=-1) / area(d, bore)
+    torsion = np.abs(loads.torque.take(point, axis=-1)) / torsion_modulus(d, bore)
     return Nominal(
         bending_amplitude=bending[0] + bending[1] if turning else bending[1],
         bending_mean=np.zeros_like(bending[0]) if turning else bending[0],
@@ -61,7 +61,7 @@ def strength_at(shaft: Shaft, d: Array, finish: NDArray[np.intp], nominal: Nomin
     kb = size_factor(size, axial_alone(nominal))
     kd = temperature_factor(shaft.duty.temperature)
     ke = reliability_factor(judgement.reliability)
-    endurance = ka * kb * kd * ke * judgement.user_factor * plain
+    endurance = ka * kb * (kd * ke * judgement.user_factor * plain)
     return Strength(plain, ka, kb, size, 1.0, kd, ke, judgement.user_factor, endurance)
 
 

@@ -4,7 +4,7 @@ from dataclasses import dataclass
 from itertools import pairwise
 from typing import Any
 
-from shaftcore.geometry import around_face, around_place, faces_of, segment_index
+from shaftcore.geometry import around_face, around_within, faces_of, segment_index
 from shaftcore.notches._contract import Around, RaiserKind, Site
 from shaftcore.notches.kinds import KINDS
 from shaftcore.shaft import Shaft
@@ -51,7 +51,8 @@ def _shoulders(shaft: Shaft, faces: tuple[float, ...]) -> list[Seating]:
 def _on_segments(shaft: Shaft, faces: tuple[float, ...]) -> list[Seating]:
     found = []
     for index, raiser in enumerate(shaft.raisers):
-        around, segment = around_place(shaft, raiser.x, faces), segment_index(faces, raiser.x)
+        segment = segment_index(faces, raiser.x)
+        around = around_within(shaft.segments[segment], faces[segment], raiser.x)
         found.append(_seated(raiser.kind, raiser, raiser.id, around, f"raisers[{index}]", segment))
     return found
 

@@ -36,7 +36,7 @@ def notch_lines(results: Results, i: int, sort: LoadSort, site: Site) -> Iterato
     row, torsion = LOAD_ROWS[sort], sort == "torsion"
     kt_symbol, q_symbol, kf_symbol = SYMBOLS[sort]
     kt, q = float(results.factors.kt[row, i]), float(results.factors.q[row, i])
-    yield from _flagged(fit, site, kt_symbol, _fit_flags(results, i, row, fit))
+    yield from _flagged(fit, site, kt_symbol, _fit_flags(results, i, row, fit, site))
     yield from sensitivity_steps(judgement.sensitivity, site.sizes["r"], tensile, torsion, q_symbol)
     held = bool(results.factors.held[row, i])
     own = float(fatigue_factor(kt, q))
@@ -73,8 +73,9 @@ def _held_lines(results: Results, i: int, sort: LoadSort, fit: Fit, site: Site) 
     yield _factor_line(kf_symbol.rstrip("*"), kt_symbol, q_symbol, kt, q, kf, "held at its peak")
 
 
-def _fit_flags(results: Results, i: int, row: int, fit: Fit) -> str:
-    flags = []
+def _fit_flags(results: Results, i: int, row: int, fit: Fit, site: Site) -> str:
+    remark = KINDS[site.kind].remark(site)
+    flags = [remark] if remark else []
     if results.factors.outside[row, i]:
         flags.append(f"outside the range of the fit, {', '.join(map(str, fit.ranges))}")
     low = float(results.factors.low_by[row, i])

@@ -264,7 +264,14 @@ class Shaft:
     judgement: Judgement = part("Judgement", Judgement, default=Judgement())
     segments: tuple[Segment, ...] = part("Segments, left to right", Segment, default=(), many=True)
     raisers: tuple[Raiser, ...] = part("Raisers on the segments", *RAISER_RECORDS, default=(), many=True)
-    supports: tuple[Support, ...] = part("Supports", Support, default=(), many=True, most=MOST_SUPPORTS)
+    supports: tuple[Support, ...] = part(
+        "Supports",
+        Support,
+        default=(),
+        many=True,
+        most=MOST_SUPPORTS,
+        too_many="remove one, or join neighbours into one of their common stiffness",
+    )
     loads: tuple[Load, ...] = part("Loads", *LOAD_RECORDS, default=(), many=True)
 
     @property

@@ -2,7 +2,7 @@
 
 import math
 from bisect import bisect_right
-from dataclasses import dataclass
+from typing import NamedTuple
 
 from shaftcore.geometry import Profile
 from shaftcore.notch_sites import Seating
@@ -18,8 +18,7 @@ SAME_PLACE = 1e-6
 """Two places nearer than this (mm) are one."""
 
 
-@dataclass(frozen=True)
-class Station:
+class Station(NamedTuple):
     """One judged place; numbered from 1 by x. `site` is None where the section is plain.
 
     `place` is the id of the thing it belongs to (for a shoulder, the segment left of the face).

@@ -75,7 +75,8 @@ def size_factor(size_diameter: ArrayLike, axial_alone: ArrayLike = False) -> Arr
     """
     d = np.asarray(size_diameter, dtype=float)
     (low, low_power), (high, high_power) = SIZE_SMALL, SIZE_LARGE
-    kb = np.where(d <= SIZE_SWITCH, low * d**low_power, high * d**high_power)
+    small = d <= SIZE_SWITCH
+    kb = np.where(small, low, high) * d ** np.where(small, low_power, high_power)
     return np.where(axial_alone, 1.0, np.minimum(kb, 1.0))
 
 

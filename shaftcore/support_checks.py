@@ -1,5 +1,7 @@
 """Notices of the supports: one that carries hardly anything, and more than two that must stand in line."""
 
+import math
+import operator
 from collections.abc import Iterator, Sequence
 
 import numpy as np
@@ -29,10 +31,10 @@ def support_notices(shaft: Shaft, stations: Sequence[Station], loads: BeamLoads)
         yield from _sensitive_to_alignment(shaft, loads)
 
 
-def carried(loads: BeamLoads) -> Array:
+def carried(loads: BeamLoads) -> list[float]:
     """The most each support carries across the shaft (N): mean and pulsation together."""
-    result: Array = np.hypot(loads.reactions[:, 0], loads.reactions[:, 1]).sum(axis=0)
-    return result
+    (mean_y, mean_z), (swing_y, swing_z) = loads.reactions.tolist()
+    return list(map(operator.add, map(math.hypot, mean_y, mean_z), map(math.hypot, swing_y, swing_z)))
 
 
 def moment_out_of_line(shaft: Shaft, loads: BeamLoads, offset: float) -> Array:
@@ -53,8 +55,8 @@ def moment_out_of_line(shaft: Shaft, loads: BeamLoads, offset: float) -> Array:
 
 def _hardly_loaded(shaft: Shaft, stations: Sequence[Station], loads: BeamLoads) -> Iterator[Notice]:
     force = carried(loads)
-    most = int(np.argmax(force))
-    little = np.flatnonzero(force < HARDLY_LOADED * force[most]).tolist()
+    most = force.index(max(force))
+    little = [row for row, size in enumerate(force) if size < HARDLY_LOADED * force[most]]
     where = {x: i for i, station in enumerate(stations) for x in (station.x, *station.also)} if little else {}
     for row in little:
         support, other = shaft.supports[row], shaft.supports[most]
@@ -63,7 +65,7 @@ def _hardly_loaded(shaft: Shaft, stations: Sequence[Station], loads: BeamLoads) 
             f"{HARDLY_LOADED:.0%} of the {{:force}} at {other.name or other.id}. A rolling bearing may skid there, and "
             "small changes of load or alignment change which way it is loaded."
         )
-        quantities = (float(force[row]), float(force[most]))
+        quantities = (force[row], force[most])
         yield Notice("unloaded support", Phrase(words, quantities), support.id, where[support.x])
 
 

@@ -39,7 +39,7 @@ def _at_end(value: float, declaration: Quantity) -> float:
 def _number_and_unit(text: str, declaration: Quantity, system: System) -> tuple[float, str]:
     plain = _SPACES.sub(" ", text.strip()).replace("−", "-").replace("’", "'")
     found = _NUMBER.match(plain)
-    number = None if found is None else _number(found, declaration, system)
+    number = None if found is None else _number(found, declaration)
     strange = found is not None and not re.match(r"\s*([^\W\d_]|[\"”″°%]|$)", plain[found.end() :])
     if found is None or number is None or strange:
         what = f"“{plain[:40]}” is no number" if plain else "a number is needed"
@@ -47,8 +47,11 @@ def _number_and_unit(text: str, declaration: Quantity, system: System) -> tuple[
     return number, plain[found.end() :]
 
 
-def _number(found: re.Match[str], declaration: Quantity, system: System) -> float | None:
-    """The value of a run of digits; None where its groups or decimal signs make no sense."""
+def _number(found: re.Match[str], declaration: Quantity) -> float | None:
+    """The value of a run of digits; None where its groups or decimal signs make no sense.
+
+    A lone comma before three digits may be a decimal sign or part a group: the user must say which.
+    """
     sign, digits, power = found[1], found[2].strip(), found[3]
     decimal = max(digits.rfind("."), digits.rfind(","))
     whole, fraction = (digits, "") if decimal < 0 else (digits[:decimal], digits[decimal + 1 :])
@@ -59,7 +62,7 @@ def _number(found: re.Match[str], declaration: Quantity, system: System) -> floa
         return None
     if fraction and not fraction.isdigit():
         return None
-    if system == "US" and "," in digits and len(groups) == 1 and len(fraction) == 3 and groups[0].strip("0"):
+    if "," in digits and len(groups) == 1 and len(groups[0]) <= 3 and len(fraction) == 3 and groups[0].strip("0"):
         raise QuantityError(
             f"{declaration.label}: {digits} can be read in two ways. "
             f"Write {groups[0]}{fraction}, or {groups[0]}.{fraction}."

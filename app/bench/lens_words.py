@@ -1,7 +1,7 @@
 """What stands beside an enlarged raiser: its scale, its sizes with their symbols, and an empty window in words."""
 
 from app.bench.close_up import CloseUp
-from app.bench.readout import needed_shown
+from app.bench.readout import allowed_shown, needed_shown
 from app.bench.sizes import Size, size_of
 from shaftcore.radius_window import SMALLEST, RadiusWindow
 from shaftcore.units import System
@@ -41,7 +41,7 @@ def lens_rows(shown: CloseUp, value: float, system: System) -> list[Row]:
 
 
 def _window_rows(size: Size, window: RadiusWindow, symbol: str, system: System) -> list[Row]:
-    allowed = (ALLOWED, f"{symbol}{size.shown(window.allowed, system)} allowed")
+    allowed = (ALLOWED, f"{symbol}{allowed_shown(size, window.allowed, system)} allowed")
     if window.needed is None:
         return [(NOTE, "no radius is enough"), allowed]
     if window.needed <= SMALLEST:

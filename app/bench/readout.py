@@ -23,6 +23,9 @@ AT_STATION = (("kt_bending", "kt_torsion"), ("n", "margin"))
 """Station quantities by row of the readout."""
 PADDING, BESIDE, WIDEST, CLEAR = 8.0, 16.0, 380.0, 15.0
 
+STEP_NOISE = 1e-6
+"""Share of the last shown digit that a conversion may lose without the number being rounded down by one."""
+
 
 def drag_lines(scene: Scene, size: Size, value: float | None, typed: str, window: RadiusWindow | None) -> Lines:
     """Size, Kt, n and margin there, the worst station, and the radius window."""
@@ -142,7 +145,7 @@ def _station_rows(scene: Scene, results: Results, index: int) -> list[str]:
 
 
 def _window_words(scene: Scene, size: Size, window: RadiusWindow) -> str:
-    allowed = f"{size.shown(window.allowed, scene.system)} allowed ({window.limited_by.written(scene.system)})"
+    allowed = f"{allowed_shown(size, window.allowed, scene.system)} allowed ({window.limited_by.written(scene.system)})"
     if window.needed is None:
         return f"no radius reaches the asked factors; {allowed}"
     if window.needed <= SMALLEST:
@@ -156,6 +159,13 @@ def needed_shown(size: Size, needed: float, system: System) -> str:
     """The needed size rounded up: the number shown must be one that lasts."""
     unit = size.declaration.dimension.unit(system)
     return f"{math.ceil(unit.shown(needed) * 10**unit.decimals) / 10**unit.decimals:g} {unit.symbol}"
+
+
+def allowed_shown(size: Size, allowed: float, system: System) -> str:
+    """The allowed size rounded down: the number shown must be one that fits."""
+    unit = size.declaration.dimension.unit(system)
+    steps = unit.shown(allowed) * 10**unit.decimals
+    return f"{math.floor(steps + STEP_NOISE) / 10**unit.decimals:g} {unit.symbol}"
 
 
 def _width(role: str, text: str, font: QFont) -> float:

@@ -44,6 +44,7 @@ class ManualWindow(QMainWindow):
         across = QSplitter()
         across.addWidget(side)
         across.addWidget(self.browser)
+        across.setChildrenCollapsible(False)
         across.setStretchFactor(1, 1)
         self.setCentralWidget(across)
         self.resize(960, 640)

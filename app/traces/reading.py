@@ -1,5 +1,7 @@
 """The numbers under the hairline and at a station, in figures and in words."""
 
+import math
+
 import numpy as np
 
 from app.traces.tracks import TRACKS, Line, Track
@@ -55,7 +57,9 @@ def _text(track: Track, line: Line, value: float, system: System) -> str:
 
 
 def least_text(results: Results, system: System) -> str:
-    """The smallest margin of the shaft and where it is."""
+    """The smallest margin of the shaft and where it is; of a shaft without stress there is none."""
+    if not math.isfinite(results.least_margin):
+        return "no station is stressed"
     least = shown(results.least_margin, "share", system, 1, True)
     return f"least {least} at station {results.stations[results.governing].number}"
 

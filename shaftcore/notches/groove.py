@@ -7,9 +7,9 @@ from typing import ClassVar
 import numpy as np
 
 from shaftcore.declared import choice, quantity, text
-from shaftcore.notches._contract import Around, Array, Fit, Handle, LoadSort, RaiserKind, Site
+from shaftcore.notches._contract import Around, Array, Fits, Handle, RaiserKind, Site
 from shaftcore.notches.arc import DIN_RANGES, SIZE_LABELS, SIZE_SYMBOLS, arc_along, parameters
-from shaftcore.notches.chart_polynomial import Piece, chart_fit
+from shaftcore.notches.chart_polynomial import Chart, ChartFits, Piece
 from shaftcore.notches.din_form import FormConstants, din_fit
 from shaftcore.surface import FINISHES
 
@@ -26,23 +26,23 @@ TORSION: tuple[Piece, ...] = (
     (2.0, 50.0, ((1.089, 0.924, 0.018), (-1.504, -2.141, -0.047), (2.486, 2.289, 0.091), (-1.056, -1.104, -0.059))),
 )
 
-FITS: dict[str, dict[LoadSort, Fit]] = {
-    "chart polynomial": {
-        "bending": chart_fit(BENDING, low_by=((0.02, 0.107), (0.05, 0.081), (0.1, 0.069), (0.2, 0.001))),
-        "tension": chart_fit(TENSION, low_by=((0.02, 0.124), (0.05, 0.103), (0.1, 0.089), (0.2, 0.075))),
-        "torsion": chart_fit(TORSION, low_by=((0.02, 0.108), (0.05, 0.054), (0.1, 0.023), (0.2, 0.002))),
-    },
-    "din 743-2": {
-        "bending": din_fit(
+FITS: dict[str, Fits] = {
+    "chart polynomial": ChartFits(
+        bending=Chart(BENDING, low_by=((0.02, 0.107), (0.05, 0.081), (0.1, 0.069), (0.2, 0.001))),
+        tension=Chart(TENSION, low_by=((0.02, 0.124), (0.05, 0.103), (0.1, 0.089), (0.2, 0.075))),
+        torsion=Chart(TORSION, low_by=((0.02, 0.108), (0.05, 0.054), (0.1, 0.023), (0.2, 0.002))),
+    ),
+    "din 743-2": Fits(
+        bending=din_fit(
             FormConstants(0.2, 2.75), DIN_RANGES, low_by=((0.02, 0.094), (0.05, 0.026), (0.1, 0.0), (0.2, 0.0))
         ),
-        "tension": din_fit(
+        tension=din_fit(
             FormConstants(0.22, 1.37), DIN_RANGES, low_by=((0.02, 0.117), (0.05, 0.065), (0.1, 0.033), (0.2, 0.014))
         ),
-        "torsion": din_fit(
+        torsion=din_fit(
             FormConstants(0.7, 10.3), DIN_RANGES, low_by=((0.02, 0.126), (0.05, 0.04), (0.1, 0.0), (0.2, 0.0))
         ),
-    },
+    ),
 }
 
 

@@ -11,11 +11,10 @@ from typing import ClassVar
 import numpy as np
 
 from shaftcore.declared import choice, quantity
-from shaftcore.notches._contract import Around, Array, Fit, Handle, LoadSort, RaiserKind, Site
+from shaftcore.notches._contract import Around, Array, Fits, Handle, RaiserKind, Site
 from shaftcore.notches.arc import DIN_RANGES, SIZE_LABELS, SIZE_SYMBOLS, arc_along, arc_turn, parameters
-from shaftcore.notches.chart_polynomial import CORNER_IN_SHEAR, Piece, chart_fit
+from shaftcore.notches.chart_polynomial import CORNER_IN_SHEAR, Chart, ChartFits, Piece
 from shaftcore.notches.din_form import FormConstants, din_fit
-from shaftcore.phrase import Phrase
 from shaftcore.surface import FINISHES
 
 BENDING: tuple[Piece, ...] = (
@@ -30,32 +29,32 @@ TORSION: tuple[Piece, ...] = (
     (0.25, 4.0, ((0.905, 0.783, -0.075), (-0.437, -1.969, 0.553), (1.557, 1.073, -0.578), (-1.061, 0.171, 0.086))),
 )
 
-FITS: dict[str, dict[LoadSort, Fit]] = {
-    "chart polynomial": {
-        "bending": chart_fit(BENDING, low_by=((0.01, 0.139), (0.03, 0.085), (0.05, 0.068), (0.1, 0.033), (0.2, 0.007))),
-        "tension": chart_fit(TENSION, low_by=((0.01, 0.289), (0.03, 0.242), (0.05, 0.196), (0.1, 0.137), (0.2, 0.096))),
-        "torsion": chart_fit(
+FITS: dict[str, Fits] = {
+    "chart polynomial": ChartFits(
+        bending=Chart(BENDING, low_by=((0.01, 0.139), (0.03, 0.085), (0.05, 0.068), (0.1, 0.033), (0.2, 0.007))),
+        tension=Chart(TENSION, low_by=((0.01, 0.289), (0.03, 0.242), (0.05, 0.196), (0.1, 0.137), (0.2, 0.096))),
+        torsion=Chart(
             TORSION, low_by=((0.01, 0.0), (0.03, 0.0), (0.05, 0.0), (0.1, 0.0), (0.2, 0.0)), growth=CORNER_IN_SHEAR
         ),
-    },
-    "din 743-2": {
-        "bending": din_fit(
+    ),
+    "din 743-2": Fits(
+        bending=din_fit(
             FormConstants(0.62, 5.8, 0.2, 3),
             DIN_RANGES,
             low_by=((0.01, 0.185), (0.03, 0.12), (0.05, 0.086), (0.1, 0.047), (0.2, 0.024)),
             low_when_cut=((1.0, 0.0), (1.5, 0.09), (2.0, 0.14), (3.0, 0.2), (4.0, 0.24), (5.0, 0.255)),
         ),
-        "tension": din_fit(
+        tension=din_fit(
             FormConstants(0.62, 3.5),
             DIN_RANGES,
             low_by=((0.01, 0.261), (0.03, 0.216), (0.05, 0.189), (0.1, 0.149), (0.2, 0.112)),
         ),
-        "torsion": din_fit(
+        torsion=din_fit(
             FormConstants(3.4, 19.0, 1.0, 2),
             DIN_RANGES,
             low_by=((0.01, 0.093), (0.03, 0.049), (0.05, 0.028), (0.1, 0.01), (0.2, 0.0)),
         ),
-    },
+    ),
 }
 
 
@@ -130,15 +129,8 @@ def _handles(shoulder: Shoulder, around: Around) -> tuple[Handle, ...]:
     return (Handle("radius", x, d / 2 + r * (1 - math.cos(turn)), (sense * slant, slant)),)
 
 
-def _remarks(site: Site) -> tuple[tuple[str, Phrase], ...]:
-    if site.sizes["r"] > site.sizes["h"]:
-        words = Phrase(
-            "Fillet r {:length} is larger than the step height {:length}: "
-            "the arc is cut by the step and leaves no seating face.",
-            (site.sizes["r"], site.sizes["h"]),
-        )
-        return (("no seating face", words),)
-    return ()
+def _remark(site: Site) -> str:
+    return "arc cut by the step, no seating face" if site.sizes["r"] > site.sizes["h"] else ""
 
 
 KIND = RaiserKind(
@@ -155,5 +147,5 @@ KIND = RaiserKind(
     fits=FITS,
     outline=_outline,
     handles=_handles,
-    remarks=_remarks,
+    remark=_remark,
 )

@@ -118,7 +118,7 @@ class _Reader:
             self.note(path, shown(content), "a list [ … ]", "put the entries into square brackets")
             return ()
         if len(content) > part.most:
-            self.note(path, f"{len(content)} entries", f"{part.most} at most", "remove some or join them")
+            self.note(path, f"{len(content)} entries", f"{part.most} at most", part.too_many)
             return ()
         return tuple(self._one_of(part, entry, f"{path}[{index}]") for index, entry in enumerate(content))
 

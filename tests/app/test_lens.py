@@ -14,6 +14,7 @@ from app.bench.lens import Lens
 from app.bench.lens_room import NEAR, Taken, lens_room
 from app.bench.lens_words import lens_rows
 from app.bench.overlay import window_of
+from app.bench.readout import allowed_shown
 from app.bench.sizes import Size, size_of
 from app.bench.stage import Plan, Stage, Type
 from app.theme import DARK, LIGHT
@@ -22,6 +23,7 @@ from shaftcore.notches.kinds import KINDS
 from shaftcore.phrase import Phrase
 from shaftcore.radius_window import RadiusWindow
 from shaftcore.shaft import Shaft
+from shaftcore.units import System
 
 CAPPED = edits.replace_shoulder(loaded_shaft(), "s1", radius=0.6, bearing_corner=1.5)
 
@@ -212,3 +214,17 @@ def test_the_lens_draws_itself_in_both_themes_and_nothing_beside_its_room() -> N
         assert {theme.metal, theme.raised} <= {
             canvas.pixelColor(x, y).name() for x in range(20, 280) for y in range(20, 110)
         }
+
+
+@pytest.mark.parametrize(
+    ("allowed", "system", "shown"),
+    [
+        (58.892857, "SI", "58.89 mm"),
+        (1.15, "SI", "1.15 mm"),  # 114.99999999999999 hundredths in binary
+        (2.0, "SI", "2 mm"),
+        (0.099 * 25.4, "US", "0.099 in"),
+        (1.0, "US", "0.0393 in"),  # 1/25.4 = 0.03937
+    ],
+)
+def test_what_is_allowed_is_never_shown_as_more(allowed: float, system: System, shown: str) -> None:
+    assert allowed_shown(size_named(CAPPED, "shoulder", "s1", "radius"), allowed, system) == shown

@@ -4,6 +4,7 @@ from pathlib import Path
 
 import pytest
 from PySide6.QtCore import Qt
+from PySide6.QtWidgets import QMenu
 from pytestqt.qtbot import QtBot
 
 import app.file_dialogs as dialogs
@@ -28,8 +29,9 @@ def window(qtbot: QtBot, preferences: Preferences) -> MainWindow:
     made = MainWindow(preferences, LIGHT)
     qtbot.addWidget(made, before_close_func=lambda w: w.document.undo_stack.setClean())
     made.resize(1366, 768)
-    with qtbot.waitExposed(made):
+    with qtbot.waitActive(made):  # without a window manager a window must ask for the keyboard
         made.show()
+        made.activateWindow()
     return made
 
 
@@ -196,7 +198,7 @@ def test_a_part_that_is_opened_can_be_read_at_once(window: MainWindow, qtbot: Qt
         fold = window.folds[key]
         fold.set_opened(True)
         open_ones = [other for other in window.folds.values() if other.opened]
-        qtbot.waitUntil(lambda f=fold, o=open_ones: f.height() > 0.45 * sum(x.height() for x in o))
+        qtbot.waitUntil(lambda f=fold, o=open_ones: f.height() > 1.1 * sum(x.height() for x in o) / len(o))
         window.folds["workings"].set_opened(True)
         fold.set_opened(False)
         qtbot.waitUntil(lambda f=fold: f.height() == f.head.sizeHint().height())
@@ -209,6 +211,14 @@ def test_every_command_has_an_action_and_no_shortcut_is_taken_twice(window: Main
     assert set(window.actions_by_key) == {command.key for command in COMMANDS}
     keys = [s.toString() for action in window.actions_by_key.values() for s in action.shortcuts() if s.toString()]
     assert len(keys) == len(set(keys))
+
+
+def test_no_letter_stands_for_two_entries_of_a_menu(window: MainWindow) -> None:
+    menus = [window.menuBar(), *window.menuBar().findChildren(QMenu)]
+    assert len(menus) > 5
+    for menu in menus:
+        letters = [text[text.index("&") + 1].lower() for text in (a.text() for a in menu.actions()) if "&" in text]
+        assert len(letters) == len(set(letters)), [action.text() for action in menu.actions()]
 
 
 def test_f6_goes_round_the_parts(window: MainWindow, qtbot: QtBot) -> None:
@@ -283,6 +293,8 @@ def test_the_manual_has_every_page_and_finds_words(window: MainWindow) -> None:
     manual.search.clear()
     assert manual.contents.count() == len(PAGES)
     manual.contents.setCurrentRow(1)
+    assert manual.contents.width() >= manual.contents.sizeHintForColumn(0)
+    assert not manual.contents.visibleRegion().isEmpty()
     assert not manual.contents.horizontalScrollBar().isVisible()
 
 

@@ -54,8 +54,9 @@ def document(qtbot: QtBot) -> Document:
 def _shown(qtbot: QtBot, panel: QWidget, width: int = 480, height: int = 420) -> None:
     qtbot.addWidget(panel)
     panel.resize(width, height)
-    with qtbot.waitExposed(panel):
+    with qtbot.waitActive(panel):  # without a window manager a window must ask for the keyboard
         panel.show()
+        panel.activateWindow()
 
 
 # ledger ---------------------------------------------------------------------------------------------

@@ -17,7 +17,7 @@ from shaftcore.declared import Quantity
 from shaftcore.errors import QuantityError
 from shaftcore.number_text import GROUP, brief, editable, in_full, shown, unit_symbol, with_unit
 from shaftcore.typed_numbers import parse
-from shaftcore.units import DIMENSIONS, SYSTEMS, readable_units
+from shaftcore.units import DIMENSIONS, SYSTEMS, System, readable_units
 
 LENGTH = Quantity("Length", "length", 0.0, 1e5, above=True)
 STRENGTH = Quantity("Tensile strength", "stress", 200.0, 3000.0)
@@ -35,7 +35,9 @@ CORNER = Quantity("Corner", "length", 0.15, 9.5, optional=True)
         ("1\u202f200,5", 1200.5),
         ("1,200.5", 1200.5),
         ("1.200,5", 1200.5),
-        ("1,200", 1.2),  # in SI a comma alone is the decimal sign
+        ("1,2", 1.2),
+        ("0,125", 0.125),
+        ("1200,125", 1200.125),
         (".5", 0.5),
         ("5.", 5.0),
         ("1e3", 1000.0),
@@ -119,9 +121,10 @@ def test_the_range_is_told_in_the_unit_that_is_read() -> None:
         parse("10", STRENGTH, "US")
 
 
-def test_a_comma_before_three_digits_is_ambiguous_in_us_customary() -> None:
-    with pytest.raises(QuantityError, match="two ways"):
-        parse("1,200", LENGTH, "US")
+@pytest.mark.parametrize("system", SYSTEMS)
+def test_a_lone_comma_before_three_digits_is_not_guessed_at(system: System) -> None:
+    with pytest.raises(QuantityError, match=r"two ways\. Write 1200, or 1\.200"):
+        parse("1,200", LENGTH, system)
 
 
 @given(st.floats(1e-3, 1e5), st.sampled_from(SYSTEMS))

@@ -11,8 +11,8 @@ from pathlib import Path
 
 import numpy as np
 import pytest
-from PySide6.QtCore import QPoint, QPointF, Qt
-from PySide6.QtGui import QImage, QWheelEvent
+from PySide6.QtCore import QEvent, QPoint, QPointF, Qt
+from PySide6.QtGui import QImage, QMouseEvent, QWheelEvent
 from PySide6.QtWidgets import QApplication
 
 import app.traces.frame as frame_module
@@ -23,7 +23,7 @@ from app.traces.bands import GAP, bands_of, with_border_moved
 from app.traces.limits import Scale, scales_of
 from app.traces.live import FAR_OUT, Polyline, changed_tracks, strands, to_pixels
 from app.traces.pace import Pace
-from app.traces.reading import station_text, value_at
+from app.traces.reading import least_text, station_text, value_at
 from app.traces.ticks import labels, value_ticks
 from app.traces.tracks import BY_KEY, TRACKS, Curve, curves_of
 from app.traces.view import TraceView
@@ -409,7 +409,9 @@ def test_pointer_reads_and_chooses(view: TraceView, document: Document, qtbot) -
     heard: list[float | None] = []
     document.hovered.connect(heard.append)
     px = round(view.ruler.to_px(120.0))
-    qtbot.mouseMove(view, QPoint(px, 60))
+    at = QPointF(px, 60)
+    none, free = Qt.MouseButton.NoButton, Qt.KeyboardModifier.NoModifier
+    QApplication.sendEvent(view, QMouseEvent(QEvent.Type.MouseMove, at, view.mapToGlobal(at), none, none, free))
     assert heard[-1] == pytest.approx(view.ruler.to_mm(px))
     still = picture(view)
     document.point_at(200.0)
@@ -504,3 +506,11 @@ def test_unloaded_shaft_is_drawn(view: TraceView, document: Document) -> None:
     document.point_at(33.0)
     assert not picture(view).isNull()
     assert "unloaded" in view.accessibleDescription()
+
+
+def test_a_shaft_without_stress_has_no_least_margin(document: Document) -> None:
+    document.load(a_shaft(), None)
+    for loads, words in ((document.shaft.loads, "at station"), ((), "no station is stressed")):
+        document.change(replace(document.shaft, loads=loads), "Loads")
+        assert document.scene.results is not None
+        assert words in least_text(document.scene.results, "SI")

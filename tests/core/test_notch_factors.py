@@ -6,7 +6,8 @@ from hypothesis import given, settings
 from hypothesis import strategies as st
 from notch_sizes import all_fits
 
-from shaftcore.notch_factors import LOAD_ROWS, NotchFactors, kf_of, notch_factors
+from shaftcore.notch_factors import LOAD_ROWS, NotchFactors, notch_factors
+from shaftcore.notch_sensitivity import fatigue_factor, sensitivity
 from shaftcore.notches._contract import Site
 from shaftcore.notches.kinds import KINDS
 from shaftcore.shaft import Judgement
@@ -61,7 +62,8 @@ def test_the_peak_of_peterson_is_found_within_a_thousandth(kind: str, source: st
     r = np.geomspace(1e-3, 10.0, 20000)
     sizes = {"d": np.full_like(r, 60.0), "D": np.full_like(r, 78.0), "h": np.full_like(r, 9.0), "r": r}
     for sort, row in LOAD_ROWS.items():
-        searched = kf_of(KINDS[kind].fits[source][sort], sizes, "peterson", tensile, sort == "torsion")[2]
+        q = sensitivity("peterson", r, tensile, sort == "torsion")
+        searched = fatigue_factor(np.maximum(KINDS[kind].fits[source][sort].value(sizes), 1), q)
         assert sharp.kf[row, 0] == pytest.approx(searched.max(), rel=1e-3)
         assert sharp.held[row, 0]
         assert sharp.radius[row, 0] == pytest.approx(r[searched.argmax()], rel=0.1)

@@ -152,6 +152,13 @@ def test_what_cannot_be_is_named(case: str):
         evaluate(shaft)
 
 
+def test_a_support_too_many_is_refused_with_what_to_do() -> None:
+    many = tuple(Support(f"B{i}", 5.0 * i, locating=i == 0) for i in range(21))
+    (problem,) = problems_of(replace(SOUND, supports=many))
+    assert (problem.path, problem.value, problem.allowed) == ("supports", "21 entries", "20 at most")
+    assert problem.remedy == "remove one, or join neighbours into one of their common stiffness"
+
+
 @pytest.mark.parametrize("case", MISSING)
 def test_what_is_missing_is_named(case: str):
     shaft, path = MISSING[case]

@@ -4,6 +4,7 @@ import ast
 import math
 import operator
 import re
+from dataclasses import replace
 
 import numpy as np
 import pytest
@@ -12,6 +13,7 @@ from varied_shafts import VARIED
 from shaftcore.calculation_lines import Line, line, written
 from shaftcore.evaluation import evaluate
 from shaftcore.nomenclature import BY_KEY
+from shaftcore.notches.shoulder import Shoulder
 from shaftcore.results import Results
 from shaftcore.sources import SOURCES
 from shaftcore.units import DIMENSIONS
@@ -117,6 +119,19 @@ def test_loads_go_by_the_symbols_of_the_nomenclature(name: str, i: int) -> None:
         assert column.symbol not in symbols or symbols[column.symbol].value == pytest.approx(value), column.symbol
         assert not value or column.symbol in symbols
     assert not [entry for entry in entries if re.search(r"(?<![_\w])[A-Z],", entry.symbol + entry.formula)]
+
+
+def test_an_arc_cut_by_its_step_is_remarked_and_noticed_where_something_seats() -> None:
+    """On 40/41 mm an arc of r = 8 ends on no face; only a bearing that seats there minds."""
+    seated = VARIED["partial fillet"]
+    thin = replace(seated.segments[0], shoulder=Shoulder(8.0))
+    for shaft, noticed in ((seated, True), (replace(seated, segments=(thin, *seated.segments[1:])), False)):
+        results = evaluate(shaft)
+        i = results.station_of("thin")
+        assert any(notice.key == "no seating face" and notice.station == i for notice in results.notices) is noticed
+        assert any("no seating face" in line.flag for chapter in workings_of(results, i) for line in chapter.lines)
+    full = evaluate(replace(seated, segments=(replace(thin, shoulder=Shoulder(0.4)), *seated.segments[1:])))
+    assert not any("no seating face" in line.flag for chapter in workings_of(full, i) for line in chapter.lines)
 
 
 def test_a_plain_section_has_no_notch_lines() -> None:

@@ -95,7 +95,7 @@ PARTIAL = replace(
     material=Material(tensile_strength=1900.0, yield_strength=1600.0),
     judgement=Judgement(),
     segments=(
-        Segment("thin", 250.0, 40.0, shoulder=Shoulder(8.0)),
+        Segment("thin", 250.0, 40.0, shoulder=Shoulder(8.0, bearing_corner=0.6)),
         Segment("thick", 250.0, 41.0),
     ),
     raisers=(Groove("shallow", 100.0, 0.1, 6.0), Groove("hollow", 400.0, 6.0, 2.9)),
