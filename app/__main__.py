@@ -1,13 +1,9 @@
 """`filletwright` and `python -m app`: the commands without a window, or the window itself."""
 
 import os
+import shlex
 import sys
 from pathlib import Path
-
-NO_DISPLAY = (
-    "filletwright: there is no display here; to write the margin sheet without one: "
-    "filletwright sheet SHAFT.json OUT.pdf"
-)
 
 LIKENESS_HELP = """usage: filletwright likeness SHAFT.json OUT.png
 
@@ -31,7 +27,7 @@ def main(argv: list[str] | None = None) -> int:
         )
         return 2
     if not _display_there():
-        print(NO_DISPLAY, file=sys.stderr)
+        print(_no_display(words[0] if words else "SHAFT.json"), file=sys.stderr)
         return 2
     from app.start import open_window
 
@@ -42,6 +38,16 @@ def _display_there() -> bool:
     if not sys.platform.startswith("linux") or os.environ.get("QT_QPA_PLATFORM"):
         return True
     return bool(os.environ.get("DISPLAY") or os.environ.get("WAYLAND_DISPLAY"))
+
+
+def _no_display(shaft: str) -> str:
+    """One line that can be typed off, with the program as it was called."""
+    called = Path(sys.argv[0])
+    program = "python -m app" if called.suffix == ".py" else shlex.quote(str(called))
+    return (
+        "filletwright: there is no display here; to write the margin sheet without one: "
+        f"{program} sheet {shlex.quote(shaft)} OUT.pdf"
+    )
 
 
 def _likeness(words: list[str]) -> int:

@@ -16,6 +16,7 @@ from shaftcore.errors import FileAccessError, FilletwrightError
 from shaftcore.shaft_file import read_shaft
 
 LIKENESS_SIZE = (1400, 900)
+SHARE_OF_SCREEN = 0.88
 ROOMY = 1600
 """Screens narrower than this (pixels) are filled by the window when it opens for the first time."""
 
@@ -38,7 +39,11 @@ def open_window(path: Path | None) -> int:
     preferences = Preferences()
     desktop = system_theme(app)
     window = MainWindow(preferences, desktop)
-    if preferences.state("geometry") is None and app.primaryScreen().availableGeometry().width() < ROOMY:
+    screen = app.primaryScreen().availableGeometry()
+    first_time = preferences.state("geometry") is None
+    if first_time:
+        window.resize(screen.size() * SHARE_OF_SCREEN)
+    if first_time and screen.width() < ROOMY:
         window.showMaximized()
     else:
         window.show()

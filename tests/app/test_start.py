@@ -1,5 +1,8 @@
 """What is answered before any window is there."""
 
+import os
+import subprocess
+import sys
 from pathlib import Path
 
 import pytest
@@ -31,5 +34,16 @@ def test_without_a_display_the_command_that_needs_none_is_named(
     for name in ("DISPLAY", "WAYLAND_DISPLAY", "QT_QPA_PLATFORM"):
         monkeypatch.delenv(name, raising=False)
     monkeypatch.setattr("sys.platform", "linux")
+    monkeypatch.setattr("sys.argv", ["/usr/bin/filletwright"])
     assert main([str(tmp_path / "a.json")]) == 2
-    assert "filletwright sheet" in capsys.readouterr().err
+    assert "/usr/bin/filletwright sheet" in capsys.readouterr().err
+
+
+def test_without_a_display_one_line_names_the_command_that_needs_none() -> None:
+    screens = ("DISPLAY", "WAYLAND_DISPLAY", "QT_QPA_PLATFORM")
+    bare = {key: value for key, value in os.environ.items() if key not in screens}
+    command = [sys.executable, "-m", "app", "my shaft.shaft.json"]
+    done = subprocess.run(command, capture_output=True, text=True, timeout=60, check=False, env=bare)
+    assert done.returncode == 2
+    assert done.stderr.count("\n") == 1
+    assert "python -m app sheet 'my shaft.shaft.json' OUT.pdf" in done.stderr
