@@ -51,7 +51,7 @@ class QuantityField(QLineEdit):
         self.setAlignment(Qt.AlignmentFlag.AlignRight)
         self.setAccessibleName(declaration.label)
         if declaration.optional:
-            self.setPlaceholderText("none")
+            self.setPlaceholderText(declaration.none_words or "none")
         self.textEdited.connect(self._typed)
         self.editingFinished.connect(self._leave)
         self._write()

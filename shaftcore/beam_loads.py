@@ -80,7 +80,7 @@ def together(*sorts: PointLoads) -> PointLoads:
 
 @dataclass(frozen=True, eq=False)
 class Bed:
-    """What the supports do to the beam: x, stiffness (N/mm, inf for rigid), offset (2 planes, mm)."""
+    """What the supports do to the beam: x, stiffness (N/mm, inf for rigid), offset (set, plane, support; mm)."""
 
     x: Array
     stiffness: Array
@@ -117,7 +117,7 @@ def beam_loads(shaft: Shaft, profile: Profile, x: Array, side: Array) -> BeamLoa
     supports leave the shaft free to move (checked before by `soundness`).
     """
     right = side > 0
-    radial, bed = _radial_loads(shaft), _bed(shaft)
+    radial, bed = _radial_loads(shaft), bed_of(shaft)
     fresh = np.concatenate([[True], x[1:] > x[:-1]])
     flexure, at = Flexure(shaft, profile, x[fresh]), np.cumsum(fresh) - 1
     reactions, deflection, slope = borne(flexure, radial, bed)
@@ -139,9 +139,13 @@ def beam_loads(shaft: Shaft, profile: Profile, x: Array, side: Array) -> BeamLoa
     )
 
 
-def _bed(shaft: Shaft) -> Bed:
-    count = len(shaft.supports)
-    return Bed(np.array([s.x for s in shaft.supports]), np.full(count, np.inf), np.zeros((2, count)))
+def bed_of(shaft: Shaft) -> Bed:
+    """The supports as the beam feels them; offsets are fixed in space and steady, so they swing with nothing."""
+    supports = shaft.supports
+    stiffness = np.array([np.inf if s.stiffness is None else s.stiffness for s in supports])
+    none = [0.0] * len(supports)
+    steady = [[s.offset_y for s in supports], [s.offset_z for s in supports]]
+    return Bed(np.array([s.x for s in supports]), stiffness, np.array([steady, [none, none]]))
 
 
 def _radial_loads(shaft: Shaft) -> PointLoads:
@@ -150,6 +154,7 @@ def _radial_loads(shaft: Shaft) -> PointLoads:
     size = np.array([[f.force, -f.amplitude if f.force < 0 else f.amplitude] for f in forces]).reshape(-1, 2).T
     angle = np.radians([f.angle for f in forces])
     planes = np.array([np.cos(angle), np.sin(angle)])
+    planes[np.abs(planes) < ROUNDING] = 0.0  # a force straight down has no share across
     return PointLoads(np.array([f.x for f in forces]), size[:, None, :] * planes[None])
 
 
@@ -223,16 +228,21 @@ def _balance(flexure: Flexure, loads: PointLoads, bed: Bed, free: Array, unit: A
     """Reactions (..., n) and rigid-body deflection and slope at x[0] (..., 2)."""
     n, begin, length = len(bed.x), flexure.x[0], flexure.x[-1] - flexure.x[0]
     at = np.searchsorted(flexure.x, bed.x)
-    scale = 1 / max(float(np.abs(unit[:, at]).max()), 1e-300)
+    give = unit[:, at].T + np.diag(1 / bed.stiffness)
+    scale = 1 / max(float(np.abs(give).max()), 1e-300)
     arm = (bed.x - begin) / length
     matrix = np.zeros((n + 2, n + 2))
-    matrix[:n, :n] = (unit[:, at].T + np.diag(1 / bed.stiffness)) * scale
+    matrix[:n, :n] = give * scale
     matrix[:n, n], matrix[:n, n + 1] = 1.0, arm
     matrix[n, :n], matrix[n + 1, :n] = BALANCE_FIRST, BALANCE_FIRST * arm
     sums = [
         -BALANCE_FIRST * values.sum(-1)[..., None] for values in (loads.size, loads.size * (loads.x - begin) / length)
     ]
-    known = [(bed.offset - free[..., at]) * scale, *sums]
-    right_sides = np.concatenate(known, axis=-1)
-    solved = np.linalg.solve(matrix, right_sides.reshape(-1, n + 2).T).T.reshape(right_sides.shape)
-    return solved[..., :n], solved[..., n:] / scale / np.array([1.0, length])
+    known = np.concatenate([(bed.offset - free[..., at]) * scale, *sums], axis=-1)
+    solved = np.linalg.solve(matrix, known.reshape(-1, n + 2).T).T.reshape(known.shape)
+    reactions, start = solved[..., :n], solved[..., n:] / scale / np.array([1.0, length])
+    if not bed.offset.any():
+        return reactions, start
+    # a shaft that only tilts on its offsets is carried by no force, not by what is left of large ones
+    rounding = ROUNDING * np.abs(known[..., :n]).max(axis=-1, keepdims=True)
+    return np.where(np.abs(reactions) > rounding, reactions, 0.0), start

@@ -23,6 +23,7 @@ class Quantity:
     symbol: str = ""
     above: bool = False
     optional: bool = False
+    none_words: str = ""
     words: str = ""
 
     @property

@@ -25,6 +25,7 @@ from shaftcore.shaft import Shaft, Torque
 from shaftcore.sources import SOURCES
 from shaftcore.stations import Station
 from shaftcore.strength_factors import SIZE_HIGH, SIZE_LOW
+from shaftcore.support_checks import support_notices
 
 BALANCE = 1e-6
 """Torque left over below this share of the largest torque is rounding of the entries."""
@@ -83,6 +84,7 @@ def notices_of(
     return (
         *_balance(shaft, loads),
         *_shaft_wide(shaft),
+        *support_notices(shaft, stations, loads),
         *_seats(seated, stations),
         *_bore_steps(shaft, stations),
         *_fillets_on_tapers(shaft, seated, stations),

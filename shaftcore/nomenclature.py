@@ -12,6 +12,7 @@ from shaftcore.declared import Quantity
 from shaftcore.notch_factors import LOAD_ROWS
 from shaftcore.notches._contract import LoadSort
 from shaftcore.number_text import Entry, writer
+from shaftcore.reactions import reactions_at
 from shaftcore.results import Results
 from shaftcore.units import System
 
@@ -66,6 +67,16 @@ def _strength(field: str) -> Callable[[Results], Sequence[float]]:
     return lambda r: np.broadcast_to(getattr(r.judged.strength, field), len(r.stations)).tolist()
 
 
+def _reactions(part: int) -> Callable[[Results], Sequence[float | None]]:
+    """The largest reaction across the shaft at each station, None where no support stands."""
+
+    def values(results: Results) -> Sequence[float | None]:
+        at = [[reaction.across[part] for _, reaction in reactions_at(results, i)] for i in range(len(results.stations))]
+        return [max(found, default=None) for found in at]
+
+    return values
+
+
 def _flags(results: Results) -> Sequence[str]:
     return ["; ".join(dict.fromkeys(notice.key for notice in said)) for said in results.notices_by_station()]
 
@@ -90,6 +101,8 @@ COLUMNS: tuple[Column, ...] = (
     Column("torque", "T", "Torque, mean", "torque", lambda r: r.at.torque[0].tolist()),
     Column("torque_amplitude", "T_a", "Torque, amplitude", "torque", lambda r: r.at.torque[1].tolist()),
     Column("normal", "N", "Axial force, mean", "force", lambda r: r.at.normal[0].tolist(), "positive in tension"),
+    Column("reaction", "R", "Reaction, mean", "force", _reactions(0), "of the support there, across the shaft"),
+    Column("reaction_amplitude", "R_a", "Reaction, pulsation", "force", _reactions(1)),
     Column("bending_amplitude", "σ_b,a", "Bending stress, amplitude", "stress", _nominal("bending_amplitude")),
     Column("bending_mean", "σ_b,m", "Bending stress, mean", "stress", _nominal("bending_mean")),
     Column("axial_amplitude", "σ_ax,a", "Axial stress, amplitude", "stress", _nominal("axial_amplitude")),

@@ -99,8 +99,9 @@ def editable(value: float | None, declaration: Quantity, system: System) -> str:
 def entry_words(value: Entry, declaration: Declaration, system: System) -> str:
     """Any declared entry in words: the number in full without its unit, the option's words, yes or no, the text."""
     if isinstance(declaration, Quantity):
-        bare = value is None or isinstance(value, str)
-        return NOTHING if bare else in_full(float(value or 0.0), declaration.dimension_name, system)
+        if value is None:
+            return declaration.none_words or NOTHING
+        return NOTHING if isinstance(value, str) else in_full(float(value or 0.0), declaration.dimension_name, system)
     if isinstance(declaration, Choice):
         words = dict(declaration.options).get(str(value), str(value))
         return words if value is not None else declaration.none_words or NOTHING

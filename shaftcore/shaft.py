@@ -20,6 +20,13 @@ THINNEST, THICKEST = 0.1, 10_000.0
 
 LARGEST_FORCE = 1e8
 LARGEST_TORQUE = 1e11
+SOFTEST, STIFFEST = 1.0, 1e9
+"""Radial stiffness (N/mm) of a support, from a rubber ring to beyond any bearing in its housing."""
+
+FARTHEST_OFFSET = 10.0
+"""mm by which a seat may lie beside the line of the others: far beyond what small deflections allow."""
+
+MOST_SUPPORTS = 20
 ID_WORDS = "Name of this thing inside the file, unique on the shaft."
 
 
@@ -51,13 +58,42 @@ class Segment:
 
 @dataclass(frozen=True)
 class Support:
-    """A bearing: rigid across the shaft, and along it where it is the locating one."""
+    """A bearing: rigid or springy across the shaft, alike in every direction; rigid along it where it is locating."""
 
     label: ClassVar[str] = "Support"
     id: str = text("Id", longest=40, shortest=1, words=ID_WORDS)
     x: float = quantity("Position", "length", 0.0, LONGEST, symbol="x", default=0.0)
     name: str = text("Name", longest=60)
     locating: bool = switch("Holds the shaft along its axis", default=False)
+    stiffness: float | None = quantity(
+        "Radial stiffness",
+        "stiffness",
+        SOFTEST,
+        STIFFEST,
+        symbol="c",
+        optional=True,
+        default=None,
+        none_words="rigid",
+        words="Of bearing and housing together. None for rigid.",
+    )
+    offset_y: float = quantity(
+        "Offset upwards",
+        "length",
+        -FARTHEST_OFFSET,
+        FARTHEST_OFFSET,
+        symbol="δ_y",
+        default=0.0,
+        words="The seat lies this far above the straight line through the others.",
+    )
+    offset_z: float = quantity(
+        "Offset towards the viewer",
+        "length",
+        -FARTHEST_OFFSET,
+        FARTHEST_OFFSET,
+        symbol="δ_z",
+        default=0.0,
+        words="The seat lies this far towards the viewer from the straight line through the others.",
+    )
 
 
 @dataclass(frozen=True)
@@ -233,8 +269,8 @@ class Shaft:
         Support,
         default=(),
         many=True,
-        most=2,
-        too_many="remove one: this version carries a shaft on two supports",
+        most=MOST_SUPPORTS,
+        too_many="remove one, or join neighbours into one of their common stiffness",
     )
     loads: tuple[Load, ...] = part("Loads", *LOAD_RECORDS, default=(), many=True)
 

@@ -15,7 +15,7 @@ SLACK = 1e-9
 """Share of the shaft's length by which places may miss one another by rounding."""
 
 LEAST_BEARING_SPREAD = 1e-4
-"""Share of the shaft's length below which two supports cannot hold it in line."""
+"""Share of the shaft's length below which two neighbouring supports count as one place."""
 
 GROOVE_ON_TAPER = 0.1
 """Share of a groove's depth by which the radius of a taper may change across its mouth: the fits
@@ -209,14 +209,12 @@ def _on_too_steep_a_taper(segment: Segment, seating: Seating) -> Problem | None:
 def _missing(shaft: Shaft) -> Iterator[Problem]:
     if not shaft.segments:
         yield Problem("segments", "none", "at least one", "draw the first segment", "missing")
-    places = {support.x for support in shaft.supports}
-    apart, least = max(places, default=0.0) - min(places, default=0.0), LEAST_BEARING_SPREAD * shaft.length
+    places = sorted({support.x for support in shaft.supports})
     if len(places) < 2:
-        yield Problem(
-            "supports", f"{len(places)} place(s)", "two supports at different places", "set two supports", "missing"
-        )
-    elif apart < least:
-        yield Problem("supports", f"{apart:.3g} mm apart", f"at least {least:.3g} mm", "move them apart", "missing")
+        words = f"{len(places)} place(s)"
+        yield Problem("supports", words, "two supports or more, at different places", "set two supports", "missing")
+    else:
+        yield from _too_near(shaft)
     locating = sum(support.locating for support in shaft.supports)
     if len(places) >= 2 and locating != 1:
         yield Problem(
@@ -226,3 +224,13 @@ def _missing(shaft: Shaft) -> Iterator[Problem]:
             "choose the locating support",
             "missing",
         )
+
+
+def _too_near(shaft: Shaft) -> Iterator[Problem]:
+    """Supports that all but share a place: what each of them carries could not be told."""
+    least = LEAST_BEARING_SPREAD * shaft.length
+    placed = sorted((support.x, support.id) for support in shaft.supports)
+    for (left, one), (right, other) in itertools.pairwise(placed):
+        if right - left < least:
+            words = f"{one} and {other} {right - left:.3g} mm apart"
+            yield Problem("supports", words, f"at least {least:.3g} mm", "move them apart", "missing")

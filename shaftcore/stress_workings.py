@@ -7,6 +7,7 @@ import numpy as np
 from shaftcore.calculation_lines import Line, given, line
 from shaftcore.equivalent_stress import ROUNDING
 from shaftcore.notches.kinds import KINDS
+from shaftcore.reactions import reactions_at
 from shaftcore.results import Results
 
 MEAN, AMPLITUDE = 0, 1
@@ -27,6 +28,20 @@ def section_lines(results: Results, i: int) -> Iterator[Line]:
         yield given("d", "Diameter", float(results.judged.d[i]), "length")
     if results.judged.bore[i]:
         yield given("d_i", "Bore", float(results.judged.bore[i]), "length")
+
+
+def reaction_lines(results: Results, i: int) -> Iterator[Line]:
+    """What the supports at the station do to the shaft; what is zero is left out."""
+    # on more supports than two equilibrium alone does not tell what each carries
+    formula = "by equilibrium and the bent line" if len(results.shaft.supports) > 2 else ""
+    for name, reaction in reactions_at(results, i):
+        for part, words in ((MEAN, "mean"), (AMPLITUDE, "pulsation")):
+            for axis, sizes in (("x", reaction.along), ("y", reaction.y), ("z", reaction.z)):
+                if sizes[part]:
+                    symbol = f"R_{axis}{',a' * part}"
+                    label = f"Reaction of support {name} along {axis}, {words}"
+                    how = "" if axis == "x" else formula
+                    yield given(symbol, label, sizes[part], "force", "statics", formula=how)
 
 
 def load_lines(results: Results, i: int) -> Iterator[Line]:

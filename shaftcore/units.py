@@ -59,6 +59,7 @@ DIMENSIONS: dict[str, Dimension] = {
         Unit("GPa", 1e3, decimals=1),
         Unit("Msi", 1e6 * POUND_FORCE / INCH**2, decimals=2),
     ),
+    "stiffness": _same("_N_per_mm", Unit("N/mm", decimals=0), Unit("lbf/in", POUND_FORCE / INCH, decimals=0)),
     "temperature": _same("_C", Unit("°C", decimals=0), Unit("°F", 5 / 9, 32, decimals=0)),
     "angle": _same("_deg", Unit("°", decimals=1)),
     "ratio": _same("", Unit("", decimals=3)),
@@ -78,6 +79,7 @@ ALSO_READ: dict[str, tuple[Unit, ...]] = {
     "force": (Unit("kN", 1e3), Unit("lb", POUND_FORCE)),
     "torque": (Unit("kN·m", 1e6), Unit("N·mm"), Unit("lbf·ft", 12 * POUND_FORCE * INCH)),
     "stress": (Unit("GPa", 1e3), Unit("N/mm²"), Unit("psi", POUND_FORCE / INCH**2)),
+    "stiffness": (Unit("N/µm", 1e3), Unit("kN/mm", 1e3)),
     "angle": (Unit("deg"),),
     "temperature": (Unit("C"), Unit("F", 5 / 9, 32)),
 }

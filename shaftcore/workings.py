@@ -13,7 +13,14 @@ from shaftcore.mean_stress_rules import RULES
 from shaftcore.notch_workings import acting, notch_lines
 from shaftcore.results import Results
 from shaftcore.strength_workings import strength_lines
-from shaftcore.stress_workings import greatest_line, joined_lines, load_lines, nominal_lines, section_lines
+from shaftcore.stress_workings import (
+    greatest_line,
+    joined_lines,
+    load_lines,
+    nominal_lines,
+    reaction_lines,
+    section_lines,
+)
 
 __all__ = ["Chapter", "Line", "workings_of"]
 
@@ -36,7 +43,7 @@ def workings_of(results: Results, station: int) -> tuple[Chapter, ...]:
 
 
 def _chapters(results: Results, i: int) -> Iterator[tuple[str, tuple[Line, ...]]]:
-    yield "Section and loads", (*section_lines(results, i), *load_lines(results, i))
+    yield "Section and loads", (*section_lines(results, i), *reaction_lines(results, i), *load_lines(results, i))
     yield "Nominal stresses on the net section", tuple(nominal_lines(results, i))
     site = results.stations[i].site
     if site is not None:

@@ -16,8 +16,8 @@ from shaftcore.preferred import SizeSort, finely, rounded, snapped, sort_of, ste
 from shaftcore.shaft import Shaft, things
 from shaftcore.units import System
 
-LAST = ("length", "x")
-"""Sizes that stand behind all others of a thing."""
+LAST = ("length", "x", "stiffness", "offset_y", "offset_z")
+"""Sizes that stand behind all others of a thing, in this order."""
 
 
 @dataclass(frozen=True)
@@ -43,7 +43,7 @@ class Size:
     def shown(self, value: float | None, system: System) -> str:
         """A number with its unit, with every digit that matters and no more."""
         if value is None:
-            return "none"
+            return self.declaration.none_words or "none"
         return f"{editable(float(f'{value:.6g}'), self.declaration, system)} {self.unit(system)}".rstrip()
 
     def typed(self, shaft: Shaft, value: float | None) -> Shaft:
@@ -130,7 +130,7 @@ def sizes_of(shaft: Shaft, chosen: Selection | None) -> tuple[Size, ...]:
     if record is None or chosen is None:
         return ()
     names = [name for name, declaration in declared(record).items() if isinstance(declaration, Quantity)]
-    names.sort(key=lambda name: name in LAST)
+    names.sort(key=lambda name: LAST.index(name) if name in LAST else -1)
     found = [size_of(shaft, chosen, name) for name in names]
     if at_step(chosen):
         ids = [segment.id for segment in shaft.segments]

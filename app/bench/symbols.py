@@ -21,6 +21,7 @@ HEAD_LENGTH, HEAD_HALF = 9.0, 3.6
 SHORTEST, LONGEST = 17.0, 29.0
 AXIAL_LENGTH = 36.0
 RING_WIDTH, RING_HEIGHT, LEAST_RING, HEAD_ROOM = 22.0, 17.0, 13.0, 8.0
+LIP, SPRING_HEIGHT, SPRING_FOLDS = 9.0, 12.0, 5
 ARC_BULGE, ARC_BEYOND, ARC_SHIFT = 7.0, 9.0, 4.0
 SPOT = 5.0
 IN_PLANE = 0.05
@@ -178,21 +179,24 @@ def _bearing(stage: Stage, support: Support) -> Glyph:
 
     A locating bearing stands in a housing with a lip at either side; a floating one has none and
     may move to both sides, as its little heads say. Rings are not to scale: as wide as is usual
-    here, narrower on a short seat.
+    here, narrower on a short seat. A springy support has folds of a spring between ring and housing.
     """
     frame, x = stage.frame, stage.frame.x(support.x)
     reach = stage.plan.radius_at(support.x) * frame.scale
     free = seat_room(stage, support.x) * frame.scale
     half = min(RING_WIDTH / 2, max(free - 4.0, LEAST_RING / 2))
+    gives = 0.0 if support.stiffness is None else SPRING_HEIGHT
     lines: list[QPolygonF] = []
     for side in (-1.0, 1.0):
         lines += _ring(x, frame.axis + side * reach, side, half)
-        lines += _housing(x, frame.axis + side * (reach + RING_HEIGHT), side, half, support.locating)
+        top = frame.axis + side * (reach + RING_HEIGHT)
+        lines += _housing(x, top + side * gives, side, half, LIP + gives if support.locating else 0.0)
+        lines += [_spring(x, top, side)] if gives else []
     heads = []
     if not support.locating and free > half + HEAD_ROOM:
         y = frame.axis + reach + RING_HEIGHT / 2
         heads = [_small_head(QPointF(x + way * (half + HEAD_ROOM - 1), y), way) for way in (-1.0, 1.0)]
-    height, wide = RING_HEIGHT + 7, half + (HEAD_ROOM if heads else 5.0)
+    height, wide = RING_HEIGHT + gives + 7, half + (HEAD_ROOM if heads else 5.0)
     rooms = [
         QRectF(x - wide, frame.axis - reach - height, 2 * wide, height),
         QRectF(x - wide, frame.axis + reach, 2 * wide, height),
@@ -221,13 +225,21 @@ def _ring(x: float, y: float, side: float, half: float) -> list[QPolygonF]:
     ]
 
 
-def _housing(x: float, y: float, side: float, half: float, holds: bool) -> list[QPolygonF]:
-    """A line with ground strokes beyond the ring, with lips over its sides where it holds."""
-    w = half + (3.0 if holds else 5.0)
+def _spring(x: float, y: float, side: float) -> QPolygonF:
+    """Folds that widen from the ring to the housing: what yields there."""
+    folds = np.arange(SPRING_FOLDS + 1)
+    wide = np.where(folds % 2, 1.0, -1.0) * (2.5 + 0.9 * folds)
+    wide[[0, -1]] = 0.0
+    return polygon(np.column_stack([x + wide, y + side * (SPRING_HEIGHT + 2.0) * folds / SPRING_FOLDS]))
+
+
+def _housing(x: float, y: float, side: float, half: float, lips: float) -> list[QPolygonF]:
+    """A line with ground strokes beyond the ring, with lips of that length over its sides where it holds."""
+    w = half + (3.0 if lips else 5.0)
     y += side * 2.0
     line = [QPointF(x - w, y), QPointF(x + w, y)]
-    if holds:
-        lip = QPointF(0.0, -side * 9.0)
+    if lips:
+        lip = QPointF(0.0, -side * lips)
         line = [line[0] + lip, *line, line[1] + lip]
     strokes = [
         QPolygonF([QPointF(x + at, y), QPointF(x + at - 3.5, y + side * 4.5)]) for at in np.arange(-w + 4, w + 0.5, 5.0)

@@ -74,7 +74,7 @@ def _lines(stage: Stage, members: list[Load | Support]) -> list[str]:
     lines = list(names) if shared else []
     for thing in members:
         if isinstance(thing, Support):
-            lines.append(f"{thing.name or thing.id}, {support_words(thing)}")
+            lines.append(f"{thing.name or thing.id}, {support_words(thing, stage.scene.system)}")
         else:
             words = load_words(thing, stage.scene.system)
             lines.append(words if shared or not thing.name else f"{thing.name} {words}")

@@ -7,7 +7,7 @@ from typing import Any
 from app.bench.tools import BY_KEY as TOOLS
 from app.bench.tools import DRAW
 from app.document import Scene
-from shaftcore.number_text import beside_unit, brief, with_unit
+from shaftcore.number_text import beside_unit, brief, in_full, with_unit
 from shaftcore.results import Results
 from shaftcore.shaft import AxialForce, RadialForce, Shaft, Support, Torque
 from shaftcore.units import System
@@ -24,6 +24,12 @@ NEXT_STEP = {
     ),
 }
 """By the field that is missing: heading ("" for the problem's own remedy) and how it is done here."""
+
+OTHER_STEPS = {
+    "locating": "Choose a support and switch it to locating.",
+    "apart": "Pull one of the two supports along the shaft, or take it off.",
+}
+"""By a word of the remedy: how to go on where supports are there but cannot do their work."""
 
 
 def quantity(value: float, dimension_name: str, system: System) -> str:
@@ -63,8 +69,20 @@ def _pulsation(amplitude: float, dimension_name: str, system: System) -> str:
     return PLUS_MINUS + brief(abs(amplitude), dimension_name, system) if amplitude else ""
 
 
-def support_words(support: Support) -> str:
-    return "locating" if support.locating else "floating"
+def support_words(support: Support, system: System) -> str:
+    """What sort of support it is, with its stiffness and offsets where it has any."""
+    words = ["locating" if support.locating else "floating"]
+    if support.stiffness is not None:
+        words.append(f"spring {_entered(support.stiffness, 'stiffness', system)}")
+    for offset, ways in ((support.offset_y, ("up", "down")), (support.offset_z, ("towards you", "away from you"))):
+        if offset:
+            words.append(f"{_entered(abs(offset), 'length', system)} {ways[offset < 0]}")
+    return ", ".join(words)
+
+
+def _entered(value: float, dimension_name: str, system: System) -> str:
+    """A number with its unit and all its digits: what is entered as 0.005 mm must not read as 0."""
+    return beside_unit(in_full(value, dimension_name, system), dimension_name, system)
 
 
 def next_step(scene: Scene) -> tuple[str, str] | None:
@@ -73,13 +91,9 @@ def next_step(scene: Scene) -> tuple[str, str] | None:
         return None
     problem = scene.missing[0]
     head, how = NEXT_STEP.get(problem.path, ("", ""))
-    head = head or problem.remedy[:1].upper() + problem.remedy[1:]
-    return (
-        head,
-        how
-        if "two" in problem.allowed or problem.path != "supports"
-        else "Choose a support and switch it to locating.",
-    )
+    for remedy, words in OTHER_STEPS.items():
+        how = words if remedy in problem.remedy else how
+    return head or problem.remedy[:1].upper() + problem.remedy[1:], how
 
 
 # for a screen reader --------------------------------------------------------------------------

@@ -3,16 +3,17 @@
 from collections.abc import Callable
 from typing import Any
 
-from PySide6.QtWidgets import QStackedWidget, QWidget
+from PySide6.QtWidgets import QLabel, QStackedWidget, QWidget
 
 from app.document import Document, Scene, Selection
 from app.error_messages import guarded
-from app.panels.dress import heading, panel_style, quiet, scrolled_column
+from app.panels.dress import SMALL_POINTS, heading, panel_style, quiet, scrolled_column
 from app.panels.record_form import Home, RecordForm
-from app.theme import Theme
+from app.theme import Theme, text_font
 from shaftcore.declared import Part, declared
 from shaftcore.edits import make_locating, replace_thing, set_length
 from shaftcore.notches.kinds import KINDS
+from shaftcore.reactions import reaction_of, reaction_words
 from shaftcore.shaft import Shaft, things
 
 NOTHING_CHOSEN = "Choose something on the bench, or a station in the ledger, and its sizes stand here to be typed."
@@ -45,6 +46,14 @@ def _write(shaft: Shaft, id: str, name: str, value: Any) -> Shaft:
     return own(shaft, id, value) if own is not None else replace_thing(shaft, id, **{name: value})
 
 
+def reaction_said(scene: Scene) -> str:
+    """What the chosen support does to the shaft, a line each; "" where no support is chosen or nothing known."""
+    if scene.results is None or scene.chosen is None:
+        return ""
+    reaction = reaction_of(scene.results, scene.chosen[1])
+    return "" if reaction is None else "\n".join(p.written(scene.system) for p in reaction_words(reaction))
+
+
 class ThingPanel(QWidget):
     """One form a sort of thing, kept once made; empty while nothing is chosen."""
 
@@ -56,9 +65,13 @@ class ThingPanel(QWidget):
         self.setAccessibleName("Chosen thing")
         self.title = heading("")
         self.nothing = quiet(NOTHING_CHOSEN)
+        self.said = QLabel()
+        self.said.setWordWrap(True)
+        self.said.setFont(text_font(SMALL_POINTS))
+        self.said.setAccessibleName("Reaction of the support")
         self._stack = QStackedWidget()
         column = scrolled_column(self)
-        for part in (self.title, self.nothing, self._stack):
+        for part in (self.title, self.nothing, self.said, self._stack):
             column.addWidget(part)
         column.addStretch(1)
         self.set_theme(theme)
@@ -79,12 +92,17 @@ class ThingPanel(QWidget):
         self.title.setVisible(record is not None)
         self.nothing.setVisible(record is None)
         self._stack.setVisible(record is not None)
+        self._say(reaction_said(scene))
         if record is None or scene.chosen is None:
             return
         self.title.setText(f"{record.label} {scene.chosen[1]}")
         form = self._form_of(type(record))
         form.show_record(record, scene.system)
         self._stack.setCurrentWidget(form)
+
+    def _say(self, words: str) -> None:
+        self.said.setText(words)
+        self.said.setVisible(bool(words))
 
     def _form_of(self, record: type) -> RecordForm:
         if record not in self.forms:

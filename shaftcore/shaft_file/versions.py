@@ -9,13 +9,29 @@ from shaftcore.shaft_file.file_numbers import Number
 from shaftcore.shaft_file.json_text import shown
 
 FORMAT = "filletwright shaft"
-VERSION = 1
+VERSION = 2
 
 Migration = Callable[[dict[str, Any]], dict[str, Any]]
-MIGRATIONS: Mapping[int, Migration] = {}
+
+
+NEW_IN_2 = ("stiffness_N_per_mm", "offset_y_mm", "offset_z_mm")
+
+
+def _in_line(content: dict[str, Any]) -> dict[str, Any]:
+    """Supports of version 1 are rigid and in line: their offsets are 0."""
+    supports = content.get("supports", [])
+    for support in supports if isinstance(supports, list) else ():
+        if isinstance(support, dict):
+            if any(key in support for key in NEW_IN_2):
+                raise ValueError("no field of version 1")
+            support.update(offset_y_mm=0.0, offset_z_mm=0.0)
+    return content
+
+
+MIGRATIONS: Mapping[int, Migration] = {1: _in_line}
 """By version n: what turns the content of a file of version n into one of version n + 1.
 
-A migration is given the whole object of the file, numbers as floats, and returns the new one.
+A migration is given the whole object of the file, numbers as floats, and returns the new one (it may be the same).
 """
 
 

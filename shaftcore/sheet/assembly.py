@@ -24,8 +24,9 @@ Pause = Callable[[], None]
 
 ABOUT_DRAWING = (
     "To scale; the size of a symbol says nothing. Numbers: stations, the framed one governs. B: supports, the locating "
-    "one with cheeks at its sides; L: loads, as in chapter 2. A circle with a dot is a force towards the viewer, with "
-    "a cross one away from the viewer; a bow is a torque, its head above where it goes in, below where it comes out."
+    "one with cheeks at its sides, one that yields on the folds of a spring; L: loads, as in chapter 2. A circle with "
+    "a dot is a force towards the viewer, with a cross one away from the viewer; a bow is a torque, its head above "
+    "where it goes in, below where it comes out."
 )
 
 ABOUT_HEIGHT = 29.0

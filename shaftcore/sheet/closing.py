@@ -38,6 +38,8 @@ CAUTIONS = (
     "that can be made is the one to enter, for seating the largest.",
     "The margins do not make up for the published fits; a notice names a station that passes by the fit alone.",
     "Transverse shear and the shaft's own weight are not in the margins.",
+    "Supports have no play, hinder no tilting and pull as well as push; on more than two of them the moments hang on "
+    "stiffness and alignment as entered.",
     "Published fits hold in their ranges; values used outside are flagged in chapter 7. Near sharp roots finite "
     "elements can give higher factors than the published charts.",
     "Strengths are those entered; test pieces and large forgings can differ.",

@@ -60,8 +60,8 @@ def givens(edition: Edition) -> list[Flowable]:
 
 AXES = (
     "x runs along the shaft from its left end, y points up, z towards the viewer. Angles of forces: 0° points up, "
-    "90° towards the viewer, 180° down. Reactions are the forces of the supports on the shaft. Torques are positive "
-    "where they go in, axial forces where they point to the right."
+    "90° towards the viewer, 180° down. Reactions are the forces of the supports on the shaft; a rigid support gives "
+    "way to none. Torques are positive where they go in, axial forces where they point to the right."
 )
 
 

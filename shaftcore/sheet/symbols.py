@@ -25,12 +25,14 @@ if TYPE_CHECKING:
 ARROW = 11.0
 BOX = (6.4, 5.4)
 """Width and height (mm) of a bearing where there is room."""
+SPRING, FOLDS = 3.4, 5
+"""Height (mm) of the sign of a springy support, and of how many folds it is."""
 SEEN = 0.05
 """Share of a force below which its part in one plane is not drawn."""
 
 
 def draw_supports(axes: Any, at: "Sheetwise", results: Results) -> None:
-    """Each bearing above and below the shaft; the locating one with cheeks at its sides."""
+    """Each bearing above and below the shaft; the locating one with cheeks at its sides, a springy one on folds."""
     faces = np.array(faces_of(results.shaft))
     for support in results.shaft.supports:
         x, r = float(at.x(support.x)), at.edge(support.x)
@@ -40,6 +42,8 @@ def draw_supports(axes: Any, at: "Sheetwise", results: Results) -> None:
         for sign in (-1, 1):
             low = at.middle + (r if sign > 0 else -r - BOX[1])
             _bearing(axes, x, low, half, support.locating)
+            if support.stiffness is not None:
+                _spring(axes, x, low + (BOX[1] if sign > 0 else 0.0), sign)
 
 
 def _bearing(axes: Any, x: float, low: float, half: float, locating: bool) -> None:
@@ -50,6 +54,15 @@ def _bearing(axes: Any, x: float, low: float, half: float, locating: bool) -> No
     if locating:
         cheeks = [[(x + s * (half + 0.8), low), (x + s * (half + 0.8), low + BOX[1])] for s in (-1, 1)]
         axes.add_collection(LineCollection(cheeks, colors=INK, linewidths=1.3, zorder=6))
+
+
+def _spring(axes: Any, x: float, y: float, sign: int) -> None:
+    """Folds that widen from the bearing to a line of ground beyond it."""
+    folds = np.arange(FOLDS + 1)
+    wide = np.where(folds % 2, 1.0, -1.0) * (0.6 + 0.22 * folds)
+    wide[[0, -1]] = 0.0
+    axes.plot(x + wide, y + sign * SPRING * folds / FOLDS, color=INK, lw=0.7, zorder=5)
+    axes.plot([x - 2.2, x + 2.2], [y + sign * SPRING] * 2, color=INK, lw=0.9, zorder=5)
 
 
 def draw_loads(axes: Any, at: "Sheetwise", results: Results) -> None:

@@ -126,7 +126,8 @@ def record_fields(records: Sequence[Any], system: System) -> list[Field]:
     found = []
     for name, declaration in declared(records[0]).items():
         values = [getattr(record, name) for record in records]
-        if isinstance(declaration, Part) or all(value in (None, "") for value in values):
+        unsaid = not getattr(declaration, "none_words", "") and all(value in (None, "") for value in values)
+        if isinstance(declaration, Part) or unsaid:
             continue
         cells = [entry_words(value, declaration, system) for value in values]
         found.append(Field(head_of(declaration, system), cells, isinstance(declaration, Quantity)))

@@ -20,7 +20,7 @@ from app.bench.stage import FOOT, Plan, Stage, Type
 from app.bench.symbols import glyphs_of
 from app.bench.utilisation_band import LEAST_STRETCH, failing_places, utilisation_columns
 from app.bench.view import BenchView
-from app.bench.words import description, load_words
+from app.bench.words import description, load_words, support_words
 from app.document import Document
 from app.ruler import Ruler
 from app.theme import DARK, LIGHT
@@ -326,6 +326,40 @@ def test_a_support_without_a_name_goes_by_its_id(bench: BenchView) -> None:
     lines = [line for callout in Drawing(stage_of(bench), Type()).callouts for line in callout.lines]
     assert "A, locating" in lines
     assert "Far, floating" in lines
+
+
+def test_a_support_says_its_stiffness_and_offsets(bench: BenchView) -> None:
+    support = Support("A", 25, locating=True, stiffness=1.25e5, offset_y=-0.005, offset_z=0.02)
+    assert support_words(support, "SI").replace("\u202f", "").replace("\u00a0", " ") == (
+        "locating, spring 125000 N/mm, 0.005 mm down, 0.02 mm towards you"
+    )
+    assert "lbf/in" in support_words(support, "US")
+    assert support_words(Support("A", 25), "SI") == "floating"
+
+
+def test_a_springy_support_stands_on_folds_and_takes_more_room(bench: BenchView) -> None:
+    shaft = stepped()
+    first, *rest = shaft.supports
+    on_spring = replace(shaft, supports=(replace(first, stiffness=1e5), *rest))
+    rigid, springy = (glyphs_of(_stage_with(bench, made))[0] for made in (shaft, on_spring))
+    assert len(springy.lines) == len(rigid.lines) + 2
+    assert springy.rooms[0].height() > rigid.rooms[0].height()
+    drawn = [line.boundingRect() for line in springy.lines]
+    above, below = springy.rooms
+    assert above.top() <= min(box.top() for box in drawn)
+    assert below.bottom() >= max(box.bottom() for box in drawn)
+
+
+def _stage_with(bench: BenchView, shaft: Shaft) -> Stage:
+    bench.document.load(shaft, None)
+    return stage_of(bench)
+
+
+def test_supports_that_are_too_near_are_told_to_be_pulled_apart(bench: BenchView) -> None:
+    near = (Support("A", 25, locating=True), Support("B", 315), Support("C", 25.001))
+    bench.document.load(replace(stepped(), supports=near), None)
+    assert "Move them apart" in description(bench.document.scene)
+    assert "Pull one of the two" in description(bench.document.scene)
 
 
 # pixels ---------------------------------------------------------------------------------------

@@ -1,6 +1,7 @@
 """The whole job on the bench, by pointer and by keyboard alone, with the events Qt itself sends."""
 
 from collections.abc import Callable
+from dataclasses import replace
 
 import pytest
 from PySide6.QtCore import QByteArray, QEvent, QMimeData, QPointF, QRectF, Qt
@@ -28,7 +29,7 @@ from shaftcore.errors import UnsoundShaftError
 from shaftcore.evaluation import evaluate
 from shaftcore.preferred import R40
 from shaftcore.radius_window import SMALLEST, RadiusWindow, radius_window
-from shaftcore.shaft import Shaft, things
+from shaftcore.shaft import MOST_SUPPORTS, Shaft, Support, things
 
 Key, NONE, LEFT = Qt.Key, Qt.MouseButton.NoButton, Qt.MouseButton.LeftButton
 CTRL, SHIFT, PLAIN = (
@@ -741,13 +742,43 @@ def test_esc_puts_an_entry_back(desk: Desk) -> None:
     assert desk.shaft == loaded_shaft()
 
 
-def test_a_third_support_is_refused_in_words(desk: Desk) -> None:
+def test_a_third_support_is_put_on_and_shares_the_load(desk: Desk) -> None:
+    before = desk.document.scene.results
     desk.keys("S")
     desk.click(desk.bench.to_screen(100.0, 0.0))
-    assert len(desk.shaft.supports) == 2
-    assert desk.refusals
+    assert [support.x for support in desk.shaft.supports][2:] == [100.0]
+    assert [support.locating for support in desk.shaft.supports] == [True, False, False]
+    assert not desk.refusals
+    after = desk.document.scene.results
+    assert before is not None
+    assert after is not None
+    assert after.along.reactions.shape[-1] == before.along.reactions.shape[-1] + 1
+    assert desk.document.scene.chosen == ("support", desk.shaft.supports[2].id)
+    assert desk.hand.keys.size is not None
+    assert desk.hand.keys.size.name == "x"
+
+
+def test_one_support_more_than_can_be_is_refused_in_words(desk: Desk) -> None:
+    shaft = desk.shaft
+    many = tuple(Support(f"B{i}", shaft.length * i / MOST_SUPPORTS, locating=i == 0) for i in range(MOST_SUPPORTS))
+    desk.document.load(replace(shaft, supports=many), None)
+    desk.keys("S")
+    desk.click(desk.bench.to_screen(101.0, 0.0))
+    assert len(desk.shaft.supports) == MOST_SUPPORTS
+    assert any(str(MOST_SUPPORTS) in words for words in desk.refusals)
     desk.bench.grab()
     desk.keys(Key.Key_Escape)
+
+
+def test_all_sizes_of_a_support_are_reached_and_typed_by_key(desk: Desk) -> None:
+    desk.click(desk.at("support", "B", "x"))
+    names = [desk.hand.keys.size.name]  # type: ignore[union-attr]
+    for _ in range(3):
+        desk.keys(Key.Key_Tab)
+        names.append(desk.hand.keys.size.name)  # type: ignore[union-attr]
+    assert names == ["x", "stiffness", "offset_y", "offset_z"]
+    desk.keys("0", ".", "0", "2", Key.Key_Return)
+    assert desk.shaft.supports[1].offset_z == 0.02
 
 
 def test_every_entry_has_name_letter_and_words(desk: Desk) -> None:

@@ -512,6 +512,26 @@ def test_a_renamed_thing_stays_chosen(thing: ThingPanel, document: Document) -> 
     assert "Rename" in thing.forms[Segment].editors["id"].words_label.text()
 
 
+def test_a_chosen_support_says_what_it_carries(thing: ThingPanel, document: Document) -> None:
+    document.choose(("support", "A"))
+    assert thing.said.isVisible()
+    assert thing.said.text().startswith("Presses on the shaft with")
+    assert "R_y" in thing.said.text()
+    before = thing.said.text()
+    document.change(replace_thing(document.shaft, "F1", force=9000.0), "More")
+    assert thing.said.text() != before
+    form = thing.forms[Support]
+    assert form.editors["stiffness"].placeholderText() == "rigid"  # type: ignore[union-attr]
+    form.editors["stiffness"].committed.emit(2e5)
+    form.editors["offset_y"].committed.emit(-0.01)
+    assert (document.shaft.supports[0].stiffness, document.shaft.supports[0].offset_y) == (2e5, -0.01)
+    document.choose(("segment", "s1"))
+    assert not thing.said.isVisible()
+    document.change(replace(document.shaft, supports=document.shaft.supports[:1]), "Take one off")
+    document.choose(("support", "A"))
+    assert not thing.said.isVisible()
+
+
 def test_nothing_chosen_says_what_to_do(thing: ThingPanel, document: Document) -> None:
     document.choose(None)
     assert thing.nothing.isVisible()

@@ -21,12 +21,15 @@ def numbers(low: float, high: float) -> st.SearchStrategy[float]:
 
 
 @st.composite
-def sound_shafts(draw: st.DrawFn, tapers: bool = True, grooves: bool = True, axial: bool = True) -> Shaft:
-    """One to six segments with shoulders, grooves, bores, tapers, and balanced loads of all sorts."""
+def sound_shafts(
+    draw: st.DrawFn, tapers: bool = True, grooves: bool = True, axial: bool = True, offsets: bool = True
+) -> Shaft:
+    """One to six segments with shoulders, grooves, bores, tapers, on two to four supports, and balanced loads."""
     segments = _with_shoulders(draw, [_segment(draw, i, tapers) for i in range(draw(st.integers(1, 6)))])
     shaft = Shaft(material=draw(materials()), duty=draw(duties()), judgement=draw(judgements()), segments=segments)
     raisers = _grooves(draw, shaft) if grooves else ()
-    return replace(shaft, raisers=raisers, supports=_supports(draw, shaft.length), loads=_loads(draw, shaft, axial))
+    supports = _supports(draw, shaft.length, offsets)
+    return replace(shaft, raisers=raisers, supports=supports, loads=_loads(draw, shaft, axial))
 
 
 def materials() -> st.SearchStrategy[Material]:
@@ -89,13 +92,24 @@ def _grooves(draw: st.DrawFn, shaft: Shaft) -> tuple[Groove, ...]:
     return tuple(found)
 
 
-def _supports(draw: st.DrawFn, length: float) -> tuple[Support, ...]:
-    left = draw(SHARES) * 0.6
-    right = left + 0.2 + draw(SHARES) * (0.8 - left)
-    locating = draw(st.booleans())
-    return (
-        Support("A", left * length, locating=locating),
-        Support("B", min(right, 1.0) * length, locating=not locating),
+def _supports(draw: st.DrawFn, length: float, offsets: bool) -> tuple[Support, ...]:
+    """Two to four supports at least an eighth of the length apart, in any order, one of them locating."""
+    count = draw(st.sampled_from([2, 2, 3, 4]))
+    places = draw(st.lists(st.integers(0, 8), min_size=count, max_size=count, unique=True))
+    aside = draw(st.sampled_from([0.0, 0.0, 0.0625])) * length
+    locating = draw(st.integers(0, count - 1))
+    off = st.sampled_from([0.0, 0.0, 0.02, -0.05]) if offsets else st.just(0.0)
+    springs = st.sampled_from([None, None, None, 5e3, 2e5, 1e7])
+    return tuple(
+        Support(
+            "ABCD"[i],
+            min(place / 8 * length + aside, length),
+            locating=i == locating,
+            stiffness=draw(springs),
+            offset_y=draw(off),
+            offset_z=draw(off),
+        )
+        for i, place in enumerate(places)
     )
 
 
@@ -150,7 +164,7 @@ def mirrored(shaft: Shaft) -> Shaft:
 
 
 def scaled(shaft: Shaft, k: float) -> Shaft:
-    """All lengths times k, forces times k², torques times k³: every nominal stress stays."""
+    """All lengths times k, forces times k², torques times k³, stiffnesses times k: every nominal stress stays."""
 
     def longer(record, *names):
         return replace(record, **{n: getattr(record, n) * k for n in names if getattr(record, n) is not None})
@@ -161,7 +175,7 @@ def scaled(shaft: Shaft, k: float) -> Shaft:
         shaft,
         segments=tuple(segments),
         raisers=tuple(longer(groove, "x", "depth", "radius") for groove in shaft.raisers),
-        supports=tuple(longer(support, "x") for support in shaft.supports),
+        supports=tuple(longer(support, "x", "stiffness", "offset_y", "offset_z") for support in shaft.supports),
         loads=tuple(longer(load, "x") for load in with_loads_times(shaft, k**2, k**3).loads),
     )
 
@@ -180,9 +194,14 @@ def with_loads_times(shaft: Shaft, on_forces: float, on_torques: float) -> Shaft
 
 
 def turned(shaft: Shaft, degrees: float) -> Shaft:
-    """The shaft with all its loads turned about the axis."""
+    """The shaft with all its loads, and the offsets of its supports, turned about the axis."""
+    cos, sin = math.cos(math.radians(degrees)), math.sin(math.radians(degrees))
     return replace(
         shaft,
+        supports=tuple(
+            replace(s, offset_y=cos * s.offset_y - sin * s.offset_z, offset_z=sin * s.offset_y + cos * s.offset_z)
+            for s in shaft.supports
+        ),
         loads=tuple(
             replace(load, angle=math.remainder(load.angle + degrees, 360)) if isinstance(load, RadialForce) else load
             for load in shaft.loads

@@ -5,6 +5,9 @@ manual. Where a source knows no shear deformation, its share is taken out by the
 same case (shear line -V/(k G A) a length) or made negligible by a beam long for its depth, as said.
 """
 
+import itertools
+from dataclasses import replace
+
 import numpy as np
 import pytest
 from scipy.integrate import quad
@@ -186,25 +189,139 @@ def test_offset_and_yielding_supports():
     flexure = Flexure(shaft, profile_of(shaft), x)
     size = np.zeros((2, 2, 1))
     size[0, 0, 0] = -1000.0
-    bed = Bed(np.array([0.0, 400.0]), np.array([5e4, 2e4]), np.array([[0.1, -0.2], [0.0, 0.0]]))
+    bed = Bed(np.array([0.0, 400.0]), np.array([5e4, 2e4]), np.array([[[0.1, -0.2], [0.0, 0.0]], np.zeros((2, 2))]))
     reactions, deflection, _ = borne(flexure, PointLoads(np.array([100.0]), size), bed)
     np.testing.assert_allclose(reactions[0, 0], [750.0, 250.0], rtol=1e-12)
     np.testing.assert_allclose(deflection[0, 0, [0, -1]], [0.1 - 750 / 5e4, -0.2 - 250 / 2e4], rtol=1e-10)
-    np.testing.assert_allclose(deflection[1, 0], 0.1 - 0.3 * x / 400, atol=1e-12)
+    np.testing.assert_allclose(deflection[1], 0.0, atol=1e-15)
+    bare = borne(flexure, PointLoads(np.array([100.0]), np.zeros((2, 2, 1))), bed)
+    np.testing.assert_allclose(bare[1][0, 0], 0.1 - 0.3 * x / 400, atol=1e-12)
+    assert not bare[0].any()
 
 
-def test_three_supports():
-    """Two equal spans under a force mid-span of the first: reactions 13/32, 22/32, -3/32 F without shear.
+LONG, THIN = 4000.0, 20.0
+"""A beam 200 times as long as it is thick: shear adds less than 1e-3 to what bending alone gives."""
 
-    Continuous-beam tables; the beam is 100 times as long as it is thick, which keeps shear below 1e-3.
+
+def on_three(middle: Support, *forces: RadialForce) -> Shaft:
+    """A long thin beam on rigid supports at its ends and on `middle`; listed out of order on purpose."""
+    ends = Support("A", 0.0, locating=True), Support("C", LONG)
+    return Shaft(
+        material=STEEL, segments=(Segment("s", LONG, THIN),), supports=(ends[1], middle, ends[0]), loads=forces
+    )
+
+
+def reactions(shaft: Shaft) -> np.ndarray:
+    """Mean reactions in the upright plane, by the supports' places."""
+    order = np.argsort([support.x for support in shaft.supports])
+    return evaluate(shaft).along.reactions[0, 0][order]
+
+
+def test_two_equal_spans_under_a_force_amid_the_first():
+    """13/32, 22/32 and -3/32 of the force, moment over the middle -3/32 F l: tables of continuous beams.
+
+    By the three-moment equation 4 M l = -6 (F l²/16) by hand.
     """
-    shaft = simple(4000.0, 20.0)
-    flexure = Flexure(shaft, profile_of(shaft), np.linspace(0.0, 4000.0, 9))
-    size = np.zeros((2, 2, 1))
-    size[0, 0, 0] = -3200.0
-    bed = Bed(np.array([0.0, 2000.0, 4000.0]), np.full(3, np.inf), np.zeros((2, 3)))
-    reactions, _, _ = borne(flexure, PointLoads(np.array([1000.0]), size), bed)
-    np.testing.assert_allclose(reactions[0, 0], [1300.0, 2200.0, -300.0], rtol=1e-3)
+    force, span = 3200.0, LONG / 2
+    shaft = on_three(Support("B", span), RadialForce("f", span / 2, force, DOWN))
+    np.testing.assert_allclose(reactions(shaft), [1300.0, 2200.0, -300.0], rtol=1e-3)
+    assert at(shaft, span, "moment") == pytest.approx(-3 / 32 * force * span, rel=1e-3)
+
+
+def test_two_unequal_spans():
+    """Spans l and 2 l, force amid the longer: 2 M (l + 2 l) = -3 F (2 l)²/8, so M = -F l/4; by hand."""
+    force, span = 900.0, LONG / 3
+    shaft = on_three(Support("B", span), RadialForce("f", 2 * span, force, DOWN))
+    first, last = -force / 4, force / 2 - force / 8
+    np.testing.assert_allclose(reactions(shaft), [first, force - first - last, last], rtol=1e-3)
+    assert at(shaft, span, "moment") == pytest.approx(-force * span / 4, rel=1e-3)
+
+
+def test_two_equal_spans_under_an_even_row_of_forces():
+    """Near enough an even load q: 3/8, 10/8, 3/8 of q l and -q l²/8 over the middle (tables of continuous beams)."""
+    span, count = LONG / 2, 400
+    row = [RadialForce(f"f{i}", (i + 0.5) * LONG / count, 10.0, DOWN) for i in range(count)]
+    shaft = on_three(Support("B", span), *row)
+    load = 10.0 * count / 2
+    np.testing.assert_allclose(reactions(shaft), [0.375 * load, 1.25 * load, 0.375 * load], rtol=1e-3)
+    assert at(shaft, span, "moment") == pytest.approx(-load * span / 8, rel=1e-3)
+
+
+@pytest.mark.parametrize("rigidity", [1e-3, 1.0, 40.0])
+def test_middle_spring(rigidity: float):
+    """Force over a middle spring c: it takes F/(1 + f/(1/c)) with the flexibility f = L³/48EI + L/4kGA of the beam.
+
+    By the flexibilities of beam and spring side by side; shear is counted, so to rounding.
+    """
+    force, (bending, shear) = 5000.0, stiffness(THIN, STEEL)
+    flexibility = LONG**3 / (48 * bending) + LONG / (4 * shear)
+    spring = max(rigidity / flexibility, 1.0)
+    shaft = on_three(Support("B", LONG / 2, stiffness=spring), RadialForce("f", LONG / 2, force, DOWN))
+    share = flexibility * spring / (1 + flexibility * spring)
+    np.testing.assert_allclose(reactions(shaft), [(1 - share) * force / 2, share * force, (1 - share) * force / 2])
+    assert at(shaft, LONG / 2) == pytest.approx(-share * force / spring, rel=1e-9)
+
+
+@pytest.mark.parametrize("plane", [0, 1])
+def test_sunk_middle_support(plane: int):
+    """Two spans l, the middle seat lower by s, no load: M = 3 E I s/l² over it and R = -6 E I s/l³ (superposition).
+
+    The same beam pulled down amid 2 l by P = 48 E I s/(2 l)³; with shear the flexibility is as above.
+    """
+    sunk, span, (bending, shear) = 0.25, LONG / 2, stiffness(THIN, STEEL)
+    name = ("offset_y", "offset_z")[plane]
+    shaft = on_three(Support("B", span, **{name: -sunk}))
+    loads = evaluate(shaft).along
+    pull = sunk / (LONG**3 / (48 * bending) + LONG / (4 * shear))
+    over = loads.moment[0, plane, loads.x == span]
+    np.testing.assert_allclose(over, pull * LONG / 4, rtol=1e-9)
+    np.testing.assert_allclose(over, 3 * bending * sunk / span**2, rtol=1e-3)
+    np.testing.assert_allclose(loads.reactions[0, plane], [pull / 2, -pull, pull / 2], rtol=1e-9)
+    assert not loads.reactions[0, 1 - plane].any()
+    assert not loads.reactions[1].any()
+
+
+def test_bending_by_offsets_turns_with_no_shaft():
+    """It is fixed in space: amplitude on a turning shaft, mean on one that stands still."""
+    shaft = on_three(Support("B", LONG / 2, offset_y=-0.5))
+    turning = evaluate(shaft).judged.nominal
+    standing = evaluate(replace(shaft, duty=Duty(turning=False))).judged.nominal
+    bent = turning.bending_amplitude
+    assert bent.max() > 0
+    np.testing.assert_array_equal(standing.bending_mean, bent)
+    assert not standing.bending_amplitude.any()
+    assert not turning.bending_mean.any()
+
+
+def test_reactions_go_with_their_supports_in_any_order():
+    places = (("A", 0.0, None), ("B", 900.0, 3e3), ("C", 2500.0, None), ("D", LONG, 8e4))
+    supports = [Support(id, x, locating=id == "A", stiffness=c, offset_y=0.01 * x / LONG) for id, x, c in places]
+    loads = (RadialForce("f", 1500.0, 700.0, 200.0), RadialForce("g", 3000.0, 300.0, 80.0, 50.0))
+    found = []
+    for order in itertools.permutations(supports):
+        shaft = Shaft(material=STEEL, segments=(Segment("s", LONG, 60.0),), supports=order, loads=loads)
+        along = evaluate(shaft).along
+        found.append({s.id: along.reactions[:, :, i] for i, s in enumerate(order)})
+    for id in "ABCD":
+        for other in found[1:]:
+            np.testing.assert_allclose(other[id], found[0][id], rtol=1e-9, atol=1e-9)
+
+
+def test_four_springs_alike_under_a_stiff_shaft_share_by_statics():
+    """A shaft that hardly bends on equal springs at 0, l, 2 l, 3 l: by equilibrium.
+
+    Rivet-group formula R = F/n + F e (x - m)/Σ(x - m)²; by hand Σ = 5 l².
+    """
+    span, force, e = 100.0, 8000.0, 40.0
+    supports = [Support("ABCD"[i], i * span, locating=i == 0, stiffness=100.0) for i in range(4)]
+    shaft = Shaft(
+        material=STEEL,
+        segments=(Segment("s", 3 * span, 200.0),),
+        supports=tuple(supports),
+        loads=(RadialForce("f", 1.5 * span + e, force, DOWN),),
+    )
+    expected = [force / 4 + force * e * (i - 1.5) * span / (5 * span**2) for i in range(4)]
+    np.testing.assert_allclose(reactions(shaft), expected, rtol=1e-4)
 
 
 def test_points_beside_a_load_see_their_side():

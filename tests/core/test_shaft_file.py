@@ -36,7 +36,10 @@ SHAFT = Shaft(
         Segment("body", 90.0, 52.0, end_diameter=48.0, bore=12.5, finish="ground"),
     ),
     raisers=(Groove("ring groove", 100.0, 1.5, 0.8),),
-    supports=(Support("left", 10.0, locating=True), Support("right", 140.0, name="right-hand bearing")),
+    supports=(
+        Support("left", 10.0, locating=True),
+        Support("right", 140.0, "right-hand bearing", False, 2.5e5, -0.02, 0.005),
+    ),
     loads=(
         RadialForce("pull", 75.0, 4200.0, 30.0, amplitude=100.0),
         Torque("in", 5.0, 123_456.789, 0.1 + 0.2),
@@ -185,10 +188,12 @@ def test_texts_lists_and_what_may_be_none_may_be_left_out() -> None:
         (("loads", 0, "x_mm"), 151, "loads[0].x_mm", "0 to 150 mm"),
         (("material", "yield_strength_MPa"), 651, "material.yield_strength_MPa", "650 MPa"),
         (("format",), "drawing", "format", "filletwright shaft"),
-        (("version",), 2, "version", "newer version"),
-        (("version",), 0, "version", "1 to 1"),
-        (("version",), True, "version", "1 to 1"),
-        (("version",), "1", "version", "1 to 1"),
+        (("supports", 1, "stiffness_N_per_mm"), 0.5, "supports[1].stiffness_N_per_mm", "1 to 1000000000 N/mm"),
+        (("supports", 1, "offset_y_mm"), None, "supports[1].offset_y_mm", "-10 to 10 mm"),
+        (("version",), 3, "version", "newer version"),
+        (("version",), 0, "version", "1 to 2"),
+        (("version",), True, "version", "1 to 2"),
+        (("version",), "1", "version", "1 to 2"),
     ],
 )
 def test_what_is_amiss_is_named(path: tuple[Any, ...], value: Any, place: str, says: str) -> None:
@@ -367,7 +372,8 @@ def test_the_schema_is_valid_and_takes_the_sound_file() -> None:
         (("loads", 0, "kind"), "wind"),
         (("loads", 0, "angle_deg"), 361),
         (("title", "part"), "\x00"),
-        (("version",), 2),
+        (("version",), 1),
+        (("supports", 0, "offset_z_mm"), 11),
         (("raisers",), [None]),
     ],
 )
@@ -411,6 +417,40 @@ def test_older_versions_are_carried_over_step_by_step() -> None:
 def test_an_old_file_that_cannot_be_carried_over_is_refused() -> None:
     with pytest.raises(ShaftFileError, match="a sound file of version 1"):
         migrated({"format": "filletwright shaft", "version": Number("1")}, {1: _renamed}, newest=2)
+
+
+def of_version_1() -> dict[str, Any]:
+    """The file as the first version wrote it: supports without stiffness and offsets."""
+    content = json.loads(TEXT) | {"version": 1}
+    for support in content["supports"]:
+        for key in ("stiffness_N_per_mm", "offset_y_mm", "offset_z_mm"):
+            del support[key]
+    return content
+
+
+def test_a_file_of_version_1_opens_with_rigid_supports_in_line() -> None:
+    rigid = tuple(dataclasses.replace(s, stiffness=None, offset_y=0.0, offset_z=0.0) for s in SHAFT.supports)
+    shaft = shaft_from_text(json.dumps(of_version_1()))
+    assert shaft == dataclasses.replace(SHAFT, supports=rigid)
+    written = json.loads(shaft_to_text(shaft))
+    assert written["version"] == 2
+    assert [support["offset_z_mm"] for support in written["supports"]] == [0.0, 0.0]
+
+
+def test_a_field_that_version_1_did_not_know_is_refused_there() -> None:
+    content = of_version_1()
+    content["supports"][1]["offset_y_mm"] = 0.1
+    assert "a sound file of version 1" in problems(json.dumps(content))[""][1]
+
+
+@pytest.mark.parametrize("supports", [None, 7, [None, 7, "A", []], {}])
+def test_wrong_supports_of_version_1_are_named_as_ever(supports: Any) -> None:
+    assert any(path.startswith("supports") for path in problems(json.dumps(of_version_1() | {"supports": supports})))
+
+
+def test_a_field_given_twice_in_version_1_is_named() -> None:
+    text = json.dumps(of_version_1()).replace('"locating": true', '"locating": true, "locating": false')
+    assert problems(text)["supports[0].locating"][0] == "given more than once"
 
 
 # saving -----------------------------------------------------------------------------------------------------

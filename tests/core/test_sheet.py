@@ -379,6 +379,20 @@ def test_reactions_hold_the_shaft(small: Results, small_pdf: bytes) -> None:
             assert f"{value:.0f}".replace("-", "−") in text
 
 
+def test_stiffness_and_offsets_stand_beside_the_reactions(tmp_path: Path) -> None:
+    shaft = small_shaft()
+    left, right = shaft.supports
+    middle = Support("middle", 150.0, stiffness=123_456.0, offset_y=-0.0375)
+    results = evaluate(dataclasses.replace(shaft, supports=(left, right, middle)))
+    text = " ".join("\n".join(chapter(written(results, tmp_path / "three.pdf"), "2 Givens")).split())
+    table = text[text.index("Supports and their reactions") :]
+    for words in ("Radial stiffness", "Offset upwards", "123 456", "−0.0375"):
+        assert words in table.replace("\u202f", " ").replace("\u00a0", " "), words
+    assert table.count("rigid") >= 2
+    for value in results.along.reactions[0].ravel():
+        assert f"{abs(value):.0f}" in table.replace("\u202f", "").replace("\u00a0", "").replace(" ", "")
+
+
 def test_last_chapter_states_limits_call_outs_and_signatures(small_pdf: bytes) -> None:
     text = " ".join(" ".join(pages_of(small_pdf)[-2:]).split())
     for words in (

@@ -121,6 +121,17 @@ TINY = replace(
     loads=(RadialForce("tip", 300.0, 0.0, 180.0, 20.0),),
 )
 
+THREE_BEARINGS = replace(
+    TURNING,
+    supports=(
+        Support("B", 480.0, "drive end", stiffness=4e5),
+        Support("A", 20.0, locating=True),
+        Support("C", 260.0, offset_y=-0.03, offset_z=0.01),
+    ),
+)
+
+THREE_BEARINGS_STANDING = replace(THREE_BEARINGS, duty=Duty(turning=False))
+
 VARIED: dict[str, Shaft] = {
     "turning": TURNING,
     "closed form": CLOSED_FORM,
@@ -133,4 +144,6 @@ VARIED: dict[str, Shaft] = {
     "big, axial alone": BIG_AXIAL_ALONE,
     "big, bent": BIG_BENT,
     "tiny": TINY,
+    "three bearings": THREE_BEARINGS,
+    "three bearings, standing": THREE_BEARINGS_STANDING,
 }

@@ -10,8 +10,9 @@ LAYERS = (
     "the shaft described: shaft steels field_problems",
     "formulas: section_properties notch_sensitivity strength_factors equivalent_stress mean_stress_rules",
     "places and arrays: geometry notch_sites stations beam_loads notch_factors soundness",
-    "the whole: results margins judged_places second_looks design_checks evaluation",
-    "built on it: radius_window nomenclature outline workings notch_workings strength_workings stress_workings",
+    "the whole: results margins judged_places second_looks support_checks design_checks evaluation",
+    "built on it: radius_window reactions nomenclature outline workings notch_workings strength_workings "
+    "stress_workings",
     "edges: edits preferred shaft_file ledger_table sheet command",
 )
 """The core from top to bottom; a new module is entered in the one layer where it belongs."""
