@@ -11,64 +11,24 @@ from matplotlib.ticker import MaxNLocator
 from shaftcore.notch_sites import seatings
 from shaftcore.notches._contract import Array
 from shaftcore.number_text import shown, unit_symbol
-from shaftcore.outline import bore_outline, upper_outline
+from shaftcore.outline import bore_outline
 from shaftcore.results import Results
 from shaftcore.sheet.chart_page import bare, figure, letters
 from shaftcore.sheet.edition import Edition
 from shaftcore.sheet.palette import FAINT, INK, LEAD, METAL, TEAL
-from shaftcore.sheet.spread import TAG, rows_needed, spread
+from shaftcore.sheet.sheetwise import CLEAR, ROW, Sheetwise
+from shaftcore.sheet.spread import spread
 from shaftcore.sheet.symbols import draw_loads, draw_supports
 from shaftcore.sheet.utilisation_band import FULL, band_stretches, colours
 
-EDGE = 14.0
-"""Room (mm) left and right of the shaft."""
 SHORTEST, TALLEST = 42.0, 64.0
 """Between which heights (mm) a thick shaft is drawn, as the page has room."""
 AROUND = 70.0
 """Height (mm) of all that stands above and below the shaft in the drawing, about."""
-CLEAR = 15.0
-"""Room (mm) above and below the shaft for arrows and bearings."""
-ROW = 4.6
 BAND = 1.5
 """Width (mm) of the utilisation band."""
 LEAST_STRETCH = 1.6
 """Length (mm) on paper below which a raiser's stretch would not be seen."""
-
-
-class Sheetwise:
-    """From the shaft's mm to mm on paper; the axis lies at height `middle`."""
-
-    def __init__(self, results: Results, width: float, tallest: float) -> None:
-        outline = upper_outline(results.shaft)
-        self.length, self.radius = results.shaft.length, float(outline[:, 1].max())
-        self.scale = min((width - 2 * EDGE) / self.length, tallest / (2 * self.radius))
-        self.left = (width - self.length * self.scale) / 2
-        self.width, self.half = width, self.radius * self.scale
-        count = len(results.stations)
-        self.gap = 2.0 + 1.4 * len(str(count))
-        self.rows = rows_needed(count, self.gap, width, 2)
-        self.every = -(-int(count * self.gap) // int(self.rows * width))
-        self.tags = len(results.shaft.loads) + len(results.shaft.supports)
-        self.tag_rows = rows_needed(self.tags, TAG, width, 4)
-        self.foot = 19.0 + ROW * self.tag_rows
-        self.middle = self.foot + CLEAR + self.half
-        self.height = self.middle + self.half + CLEAR + 5.0 + ROW * (self.rows + 0.5)
-        self.outline = self.points(outline)
-
-    def x(self, along: Any) -> Any:
-        return self.left + np.asarray(along) * self.scale
-
-    def points(self, at: Array) -> Array:
-        """Shaft points (x, radius) as paper points above the axis, radius still from the axis."""
-        return np.column_stack([self.x(at[:, 0]), at[:, 1] * self.scale])
-
-    def edge(self, along: float) -> float:
-        """Largest radius on paper at a place of the shaft (mm of the shaft)."""
-        x = float(self.x(along))
-        near = np.abs(self.outline[:, 0] - x) < 1e-9
-        if near.any():
-            return float(self.outline[near, 1].max())
-        return float(np.interp(x, self.outline[:, 0], self.outline[:, 1]))
 
 
 def shaft_drawing(edition: Edition, width: float, height: float) -> tuple[Figure, float]:

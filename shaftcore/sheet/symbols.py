@@ -5,7 +5,7 @@ those along the line of sight a circle with a dot (towards the viewer) or a cros
 """
 
 from collections.abc import Callable, Iterator
-from typing import TYPE_CHECKING, Any
+from typing import Any
 
 import numpy as np
 from matplotlib.collections import LineCollection
@@ -17,12 +17,12 @@ from shaftcore.shaft import AxialForce, RadialForce, Torque
 from shaftcore.sheet.chart_page import letters
 from shaftcore.sheet.givens import load_marks, support_marks
 from shaftcore.sheet.palette import INK, LEAD, RUST, TEAL, VIOLET
+from shaftcore.sheet.sheetwise import Sheetwise
 from shaftcore.sheet.spread import TAG, spread
 
-if TYPE_CHECKING:
-    from shaftcore.sheet.drawing import Sheetwise
-
 ARROW = 11.0
+CLEARANCE = 12.5
+"""Room (mm) below the shaft for arrows before the leads spread."""
 BOX = (6.4, 5.4)
 """Width and height (mm) of a bearing where there is room."""
 SPRING, FOLDS = 3.4, 5
@@ -31,7 +31,7 @@ SEEN = 0.05
 """Share of a force below which its part in one plane is not drawn."""
 
 
-def draw_supports(axes: Any, at: "Sheetwise", results: Results) -> None:
+def draw_supports(axes: Any, at: Sheetwise, results: Results) -> None:
     """Each bearing above and below the shaft; the locating one with cheeks at its sides, a springy one on folds."""
     faces = np.array(faces_of(results.shaft))
     for support in results.shaft.supports:
@@ -65,14 +65,14 @@ def _spring(axes: Any, x: float, y: float, sign: int) -> None:
     axes.plot([x - 2.2, x + 2.2], [y + sign * SPRING] * 2, color=INK, lw=0.9, zorder=5)
 
 
-def draw_loads(axes: Any, at: "Sheetwise", results: Results) -> None:
+def draw_loads(axes: Any, at: Sheetwise, results: Results) -> None:
     """Symbols of all loads, and the marks of supports and loads below."""
     for load in results.shaft.loads:
         _SYMBOLS[type(load)](axes, at, load)
     _marks(axes, at, results)
 
 
-def _radial(axes: Any, at: "Sheetwise", load: RadialForce) -> None:
+def _radial(axes: Any, at: Sheetwise, load: RadialForce) -> None:
     x, r = float(at.x(load.x)), at.edge(load.x)
     angle, sense = np.radians(load.angle), np.sign(load.force) or 1.0
     up, near = float(np.cos(angle) * sense), float(np.sin(angle) * sense)
@@ -90,7 +90,7 @@ def _radial(axes: Any, at: "Sheetwise", load: RadialForce) -> None:
             axes.add_collection(LineCollection(cross, colors=RUST, linewidths=0.9, zorder=8))
 
 
-def _torque(axes: Any, at: "Sheetwise", load: Torque) -> None:
+def _torque(axes: Any, at: Sheetwise, load: Torque) -> None:
     """A bow round the shaft; its head is above where the torque goes in, below where it comes out."""
     x, wide, high = float(at.x(load.x)), 3.4, at.edge(load.x) + 4.4
     end = np.arcsin((high - 1.2) / high)
@@ -101,14 +101,14 @@ def _torque(axes: Any, at: "Sheetwise", load: Torque) -> None:
     _arrow(axes, tuple(order[-2]), tuple(order[-1]), VIOLET)
 
 
-def _axial(axes: Any, at: "Sheetwise", load: AxialForce) -> None:
+def _axial(axes: Any, at: Sheetwise, load: AxialForce) -> None:
     """An arrow along the shaft, a little below the axis so that it hides nothing there."""
     x, y = float(at.x(load.x)), at.middle - 0.45 * at.edge(load.x)
     sense = np.sign(load.force) or 1.0
     _arrow(axes, (x - sense * ARROW, y), (x, y), TEAL)
 
 
-_SYMBOLS: dict[type, Callable[[Any, "Sheetwise", Any], None]] = {
+_SYMBOLS: dict[type, Callable[[Any, Sheetwise, Any], None]] = {
     RadialForce: _radial,
     Torque: _torque,
     AxialForce: _axial,
@@ -128,7 +128,7 @@ def _tagged(results: Results) -> Iterator[tuple[float, str, str]]:
         yield load.x, mark, colour[type(load)]
 
 
-def _marks(axes: Any, at: "Sheetwise", results: Results) -> None:
+def _marks(axes: Any, at: Sheetwise, results: Results) -> None:
     """L and B marks in rows under the shaft, each led to its place."""
     tags = sorted(_tagged(results), key=lambda tag: tag[0])
     tags = tags[:: -(-int(len(tags) * TAG) // int(at.tag_rows * at.width))]
@@ -143,7 +143,3 @@ def _marks(axes: Any, at: "Sheetwise", results: Results) -> None:
             place, down - 0.4, mark, ha="center", va="top", color=colour, fontproperties=letters(6.2, True), zorder=8
         )
     axes.add_collection(LineCollection(leads, colors=LEAD, linewidths=0.35, zorder=1))
-
-
-CLEARANCE = 12.5
-"""Room (mm) below the shaft for arrows before the leads spread."""
