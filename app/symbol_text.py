@@ -1,5 +1,7 @@
 """Symbols set by Qt: real subscripts, powers raised, for labels and for a painter."""
 
+from functools import lru_cache
+
 from PySide6.QtCore import QPointF
 from PySide6.QtGui import QFont, QFontMetricsF, QPainter
 
@@ -25,6 +27,26 @@ def small(font: QFont) -> QFont:
 
 def width(text: str, font: QFont) -> float:
     """How many pixels the set text takes."""
+    return _width(text, font.toString())
+
+
+def plain_width(text: str, font: QFont) -> float:
+    """How many pixels the text takes as it stands, without subscripts."""
+    return _plain_width(text, font.toString())
+
+
+@lru_cache(maxsize=4096)
+def _plain_width(text: str, described: str) -> float:
+    font = QFont()
+    font.fromString(described)
+    return QFontMetricsF(font).horizontalAdvance(text)
+
+
+@lru_cache(maxsize=4096)
+def _width(text: str, described: str) -> float:
+    """Remembered, since the same words are measured at every move of a drag."""
+    font = QFont()
+    font.fromString(described)
     on, off = QFontMetricsF(font), QFontMetricsF(small(font))
     return sum((on if level == "on" else off).horizontalAdvance(run) for run, level in pieces(text))
 

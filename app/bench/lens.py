@@ -99,7 +99,7 @@ class Lens:
     def _paint_picture(self, painter: QPainter, frame: Frame, value: float, theme: Theme) -> None:
         shown = self.shown
         painter.fillRect(self.picture, QColor(theme.paper))
-        painter.setRenderHint(QPainter.RenderHint.Antialiasing, True)
+        painter.setRenderHint(QPainter.RenderHint.Antialiasing, False)  # each area has a line along its edge
         painter.setPen(Qt.PenStyle.NoPen)
         edge = self._cut(frame.points(shown.metal(value)))
         below = self.picture.bottom() + BEYOND
@@ -112,6 +112,7 @@ class Lens:
             set_band_brush(painter, shown.window.empty, theme)
             painter.drawPolygon(self._areas[NEEDED])
             painter.setBrush(Qt.BrushStyle.NoBrush)
+        painter.setRenderHint(QPainter.RenderHint.Antialiasing, True)
         for style, outline in self._outlines.items():
             if style != BEFORE or value != shown.size.value:
                 painter.setPen(_pen(style, theme))

@@ -169,7 +169,7 @@ def allowed_shown(size: Size, allowed: float, system: System) -> str:
 
 
 def _width(role: str, text: str, font: QFont) -> float:
-    return symbol_text.width(text, font) if role == "symbols" else QFontMetricsF(font).horizontalAdvance(text)
+    return symbol_text.width(text, font) if role == "symbols" else symbol_text.plain_width(text, font)
 
 
 def wrapped(role: str, text: str, font: QFont, widest: float = WIDEST) -> list[str]:
