@@ -15,6 +15,8 @@ MOST = 16
 """Columns of numbers that fit beside number and place."""
 
 ROW = 4.1 * mm
+ROWS_AROUND = 9
+"""Rows' worth of height that a part's heading, head and legend take."""
 MOST_KEPT = 0.7
 """Share of a page below which a part is not begun anew on the next."""
 
@@ -35,8 +37,11 @@ PARTS: tuple[tuple[str, tuple[str, ...]], ...] = (
         ),
     ),
     (
-        "Strength, equivalent stresses, deflection and notices",
-        ("ka", "kb", "kd", "ke", "endurance", "amplitude", "mean", "greatest", "deflection", "slope", "flags"),
+        "Strength, equivalent stresses, deflection, reactions and notices",
+        (
+            *("ka", "kb", "kd", "ke", "endurance", "amplitude", "mean", "greatest", "deflection", "slope"),
+            *("reaction", "reaction_amplitude", "flags"),
+        ),
     ),
 )
 
@@ -54,7 +59,7 @@ def station_tables(edition: Edition) -> list[Flowable]:
     width = papers(edition.system)[ACROSS].width
     story: list[Flowable] = []
     story += [*turn_to(ACROSS), Heading("5 Station by station")]
-    high = min((len(edition.results.stations) + 6) * ROW, MOST_KEPT * papers(edition.system)[ACROSS].height)
+    high = min((len(edition.results.stations) + ROWS_AROUND) * ROW, MOST_KEPT * papers(edition.system)[ACROSS].height)
     for head, columns in parts():
         story += [CondPageBreak(high), Heading(head, 1)]
         fields = [_field(BY_KEY[key], edition, number=key == "station") for key in NAMED]
