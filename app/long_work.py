@@ -57,6 +57,10 @@ class LongWork(QObject):
     def start(self) -> None:
         self._worker.start()
 
+    @property
+    def going_on(self) -> bool:
+        return self._worker.isRunning()
+
     def halt(self) -> None:
         """Ask the work to stop, as Cancel does."""
         self._worker.halt.set()

@@ -16,6 +16,7 @@ from app.file_dialogs import SHAFT_FILTER, SHAFT_SUFFIX, Unsaved, ask_open, ask_
 from app.fold import Fold
 from app.fold_column import FoldColumn
 from app.kit import Kit
+from app.long_work import LongWork
 from app.manual.view import ManualWindow
 from app.menus import Menus
 from app.outputs import write_ledger, write_picture, write_sheet
@@ -271,6 +272,8 @@ class MainWindow(QMainWindow):
     @guarded
     def closeEvent(self, event: QCloseEvent) -> None:  # noqa: N802 (Qt's name)
         if self._may_leave():
+            for work in self.findChildren(LongWork):
+                work.stop_and_wait()  # a thread that outlives its window ends the process the hard way
             remember(self)
             event.accept()
         else:

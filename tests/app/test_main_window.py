@@ -128,6 +128,20 @@ def test_cancelled_sheet_leaves_no_file(window: MainWindow, qtbot: QtBot, tmp_pa
     assert list(tmp_path.glob("out*")) == []
 
 
+def test_closing_the_window_ends_the_work_that_is_going_on(window: MainWindow, qtbot: QtBot, tmp_path: Path) -> None:
+    from datetime import date
+
+    window.open_copy(MENDED)
+    results = window.document.scene.results
+    assert results is not None
+    job = outputs.export_sheet(window, results, tmp_path / "out.pdf", date(2026, 1, 2), "SI")
+    with qtbot.waitSignal(job.finished, timeout=30_000) as ended:
+        window.close()
+        assert not job.going_on
+    assert ended.args == [False]
+    assert list(tmp_path.glob("out*")) == []
+
+
 def test_ledger_and_picture(window: MainWindow, tmp_path: Path, monkeypatch: pytest.MonkeyPatch) -> None:
     window.open_copy(MENDED)
     for write, name in ((outputs.write_ledger, "a.csv"), (outputs.write_picture, "a.png")):
