@@ -170,8 +170,10 @@ class Document(QObject):
             self.cancel()
         if shaft == self._settled:
             return True
-        if self._scene_of(shaft, live=False) is None:
+        scene = self._scene_of(shaft, live=False)
+        if scene is None:
             return False
+        self.scene = scene  # analysed once: the step that is pushed settles on it
         self.undo_stack.push(ChangeShaft(self, self._settled, shaft, words, merge))
         return True
 
